@@ -1,0 +1,301 @@
+"""Opening the file: what is checked before SQLite touches it, the settings of a connection, transactions.
+
+The file is never opened by other means while a connection to it is open: closing that other handle would
+drop SQLite's lock on some systems, and a second process could then write in the middle of a transaction.
+"""
+
+from __future__ import annotations
+
+import contextlib
+import errno
+import os
+import secrets
+import sqlite3
+import stat
+import weakref
+from collections.abc import Callable, Iterator, Sequence
+from pathlib import Path
+
+from desktop.errors import StorageError
+from desktop.storage.migrations import (
+    MIGRATIONS,
+    Migration,
+    expected_schema,
+    migrate,
+    schema_of,
+    version_of,
+)
+from desktop.storage.schema import APPLICATION_ID
+
+_BUSY_SECONDS = 3.0
+_HEADER_BYTES = 100
+_MAGIC = b"SQLite format 3\x00"
+
+SETTINGS: tuple[tuple[str, str, object], ...] = (
+    # A file from elsewhere must not run functions through its schema.
+    ("trusted_schema", "OFF", 0),
+    ("cell_size_check", "ON", 1),
+    # A stray pointer cannot write into a file that is not mapped.
+    ("mmap_size", "0", 0),
+    # What was removed leaves no trace in free pages, and nothing goes into temporary files.
+    ("secure_delete", "ON", 1),
+    ("temp_store", "MEMORY", 2),
+    # One file at rest, and a file moved or replaced underneath is noticed.
+    ("journal_mode", "DELETE", "delete"),
+    # Below EXTRA a power cut can take back the last step that was already told as saved.
+    ("synchronous", "EXTRA", 3),
+    ("fullfsync", "ON", 1),
+    ("foreign_keys", "ON", 1),
+    ("busy_timeout", str(int(_BUSY_SECONDS * 1000)), int(_BUSY_SECONDS * 1000)),
+)
+"""Name, value to set, value read back; in the order they are set on every connection."""
+
+# The first that fits the start of SQLite's name of the error decides.
+_REASONS: tuple[tuple[str, str], ...] = (
+    ("SQLITE_FULL", "disk full"),
+    ("SQLITE_READONLY_DBMOVED", "moved"),
+    # The last step was cut short and this place does not let us take it back.
+    ("SQLITE_READONLY_ROLLBACK", "cannot open"),
+    ("SQLITE_READONLY", "read only"),
+    ("SQLITE_BUSY", "busy"),
+    ("SQLITE_LOCKED", "busy"),
+    ("SQLITE_CONSTRAINT", "refused value"),
+    ("SQLITE_TOOBIG", "refused value"),
+    ("SQLITE_CANTOPEN", "cannot open"),
+    ("SQLITE_PERM", "cannot open"),
+    ("SQLITE_AUTH", "cannot open"),
+    ("SQLITE_CORRUPT", "damaged"),
+    ("SQLITE_NOTADB", "damaged"),
+    # Every statement is one the schema answers, so one that fails met other tables.
+    ("SQLITE_ERROR", "damaged"),
+)
+
+_OS_REASONS: dict[int | None, str] = {
+    errno.ENOENT: "missing",
+    errno.ENOTDIR: "missing",
+    errno.EACCES: "read only",
+    errno.EPERM: "read only",
+    errno.EROFS: "read only",
+    errno.ENOSPC: "disk full",
+    errno.EDQUOT: "disk full",
+}
+
+
+class Database:
+    """One open connection to one journal file.
+
+    Attributes:
+        path: where the file was when it was opened.
+        read_only: the file or its folder cannot be written.
+    """
+
+    def __init__(self, connection: sqlite3.Connection, path: Path, read_only: bool) -> None:
+        self._connection = connection
+        self.path = path
+        self.read_only = read_only
+
+    @contextlib.contextmanager
+    def reading(self) -> Iterator[sqlite3.Connection]:
+        """Everything read inside is of one moment.
+
+        Raises:
+            StorageError: the file cannot be read.
+        """
+        with self._transaction("BEGIN") as connection:
+            yield connection
+
+    @contextlib.contextmanager
+    def writing(self) -> Iterator[sqlite3.Connection]:
+        """Everything written inside is kept, and is on the disk afterwards; after an error nothing of it is.
+
+        Raises:
+            StorageError: the file cannot be written, or refuses a value.
+        """
+        if self.read_only:
+            raise StorageError("read only", path=str(self.path))
+        with self._transaction("BEGIN IMMEDIATE") as connection:
+            yield connection
+
+    @contextlib.contextmanager
+    def _transaction(self, begin: str) -> Iterator[sqlite3.Connection]:
+        with storage_errors(self.path):
+            # SQLite trusts the pages it remembers when a counter in the file is the one it knows. A copy
+            # with one other edit has that counter too, so nothing is remembered from one act to the next.
+            self._connection.execute("PRAGMA shrink_memory")
+            self._connection.execute(begin)
+            try:
+                yield self._connection
+                self._connection.execute("COMMIT")
+            finally:
+                if self._connection.in_transaction:
+                    self._connection.execute("ROLLBACK")
+
+    def close(self) -> None:
+        """Let go of the file; closing twice does nothing."""
+        self._connection.close()
+        for key, database in list(_open_files.items()):
+            if database is self:
+                del _open_files[key]
+
+
+_open_files: weakref.WeakValueDictionary[tuple[int, int], Database] = weakref.WeakValueDictionary()
+
+
+@contextlib.contextmanager
+def storage_errors(path: Path) -> Iterator[None]:
+    """Turn what SQLite raises into a ``StorageError`` with the reason a person can act on."""
+    try:
+        yield
+    except sqlite3.Error as error:
+        name = getattr(error, "sqlite_errorname", None)
+        if name is None and not isinstance(error, sqlite3.OperationalError):
+            raise
+        # An error without a name is a text in the file that Python cannot read.
+        reasons = (reason for start, reason in _REASONS if (name or "SQLITE_CORRUPT").startswith(start))
+        reason = next(reasons, "disk error")
+        raise StorageError(reason, path=str(path), code=name, detail=str(error)) from error
+    except UnicodeDecodeError as error:
+        # The words of an error quote the file, which may hold anything.
+        raise StorageError("damaged", path=str(path), detail="a text cannot be read") from error
+
+
+def open_database(path: Path, steps: Sequence[Migration] = MIGRATIONS) -> Database:
+    """Open a journal file, checked and brought to the newest version.
+
+    Args:
+        path: the file.
+        steps: the migrations known, version 1 first.
+
+    Raises:
+        StorageError: there is no file, it cannot be opened, is not a journal, is damaged, was made by a newer
+            version, or is open already.
+    """
+    path = path.absolute()
+    key = _identity(path)
+    if key in _open_files:
+        raise StorageError("busy", path=str(path))
+    _check_header(path, newest=len(steps))
+    read_only = not (os.access(path, os.W_OK) and os.access(path.parent, os.W_OK))
+    with storage_errors(path):
+        connection = _connect(path, "ro" if read_only else "rw")
+        try:
+            _check_contents(connection, path, steps)
+            if version_of(connection) < len(steps):
+                if read_only:
+                    raise StorageError("read only", path=str(path))
+                migrate(connection, steps)
+                _check_contents(connection, path, steps)
+        except BaseException:
+            connection.close()
+            raise
+    database = Database(connection, path, read_only)
+    _open_files[key] = database
+    return database
+
+
+def create_file(path: Path, fill: Callable[[sqlite3.Connection], None]) -> None:
+    """Make a journal file, complete or not at all.
+
+    It is made under another name beside its place, so a file half made is never found there.
+
+    Args:
+        path: where; nothing may be there yet.
+        fill: writes the first rows, inside a transaction.
+
+    Raises:
+        StorageError: something is there already, or the file cannot be made.
+    """
+    path = path.absolute()
+    part = path.with_name(f".{path.name}.{secrets.token_hex(4)}.part")
+    try:
+        # SQLite alone would make a file that others on this computer can read.
+        os.close(os.open(part, os.O_CREAT | os.O_EXCL | os.O_WRONLY, 0o600))
+        try:
+            with storage_errors(path), contextlib.closing(_connect(part, "rw")) as connection:
+                migrate(connection)
+                connection.execute("BEGIN IMMEDIATE")
+                fill(connection)
+                connection.execute("COMMIT")
+            _take_place(part, path)
+        finally:
+            part.unlink(missing_ok=True)
+    except FileExistsError as error:
+        raise StorageError("cannot open", path=str(path), exists=True) from error
+    except OSError as error:
+        reason = _OS_REASONS.get(error.errno, "cannot open")
+        raise StorageError(reason, path=str(path), detail=error.strerror) from error
+
+
+def _take_place(part: Path, path: Path) -> None:
+    try:
+        # Unlike a renamed file a linked one never takes the place of another.
+        os.link(part, path)
+    except FileExistsError:
+        raise
+    except OSError:
+        # Not every file system has links.
+        if path.exists():
+            raise FileExistsError from None
+        part.rename(path)
+    # The name is on the disk only when the folder is; systems where a folder cannot be opened do it themselves.
+    with contextlib.suppress(OSError):
+        folder = os.open(path.parent, os.O_RDONLY)
+        try:
+            os.fsync(folder)
+        finally:
+            os.close(folder)
+
+
+def _connect(path: Path, mode: str) -> sqlite3.Connection:
+    connection = sqlite3.connect(
+        f"{path.as_uri()}?mode={mode}",
+        uri=True,
+        timeout=_BUSY_SECONDS,
+        isolation_level=None,
+        check_same_thread=False,
+    )
+    try:
+        for name, value, expected in SETTINGS:
+            connection.execute(f"PRAGMA {name} = {value}").fetchall()
+            found = connection.execute(f"PRAGMA {name}").fetchone()
+            if found != (expected,):
+                raise StorageError("cannot open", path=str(path), setting=name)
+    except BaseException:
+        connection.close()
+        raise
+    return connection
+
+
+def _identity(path: Path) -> tuple[int, int]:
+    try:
+        found = path.stat()
+    except (FileNotFoundError, NotADirectoryError) as error:
+        raise StorageError("missing", path=str(path)) from error
+    except OSError as error:
+        raise StorageError("cannot open", path=str(path), detail=error.strerror) from error
+    if not stat.S_ISREG(found.st_mode):
+        raise StorageError("not a journal", path=str(path))
+    return found.st_dev, found.st_ino
+
+
+def _check_header(path: Path, newest: int) -> None:
+    try:
+        with path.open("rb") as file:
+            header = file.read(_HEADER_BYTES)
+    except OSError as error:
+        raise StorageError("cannot open", path=str(path), detail=error.strerror) from error
+    version = int.from_bytes(header[60:64], "big")
+    ours = header.startswith(_MAGIC) and int.from_bytes(header[68:72], "big") == APPLICATION_ID
+    if not ours or version < 1:
+        raise StorageError("not a journal", path=str(path))
+    if version > newest:
+        raise StorageError("newer version", path=str(path), version=version, newest=newest)
+
+
+def _check_contents(connection: sqlite3.Connection, path: Path, steps: Sequence[Migration]) -> None:
+    version = version_of(connection)
+    if schema_of(connection) != expected_schema(tuple(steps[:version])):
+        raise StorageError("damaged", path=str(path), detail="the tables are not those of a journal")
+    found = connection.execute("PRAGMA quick_check(1)").fetchone()
+    if found != ("ok",):
+        raise StorageError("damaged", path=str(path), detail=found[0])

@@ -1,0 +1,372 @@
+"""The journal on disk: what a person has written down, and every step that led there."""
+
+from __future__ import annotations
+
+import hashlib
+import json
+import sqlite3
+from collections.abc import Callable, Iterable, Sequence
+from dataclasses import dataclass
+from datetime import datetime
+from itertools import groupby
+from pathlib import Path
+from typing import NamedTuple
+
+from desktop.errors import StorageError
+from desktop.journal.journal import Journal
+from desktop.journal.records import Person, Record
+from desktop.journal.row_change import Act, RowChange, Step, StepKind, key_of
+from desktop.storage.database import Database, create_file, open_database
+from desktop.storage.rows import TABLES, Cell, Table, key_cells, key_text, table_of
+
+Clock = Callable[[], datetime]
+
+_HISTORY = '"seq", "step", "at", "kind", "act", "of", "tbl", "key", "before", "after", "chain"'
+_APPEND = f'INSERT INTO "history" ({_HISTORY}) VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)'
+
+
+class _HistoryRow(NamedTuple):
+    seq: int
+    step: int
+    at: str
+    kind: StepKind
+    act: Act
+    of: int | None
+    tbl: str
+    key: str
+    before: str | None
+    after: str | None
+
+    def chained(self, previous: bytes) -> bytes:
+        """The mark that ties this row to all rows before it."""
+        row = json.dumps(list(self), ensure_ascii=False, separators=(",", ":")).encode()
+        return hashlib.blake2b(previous + row, digest_size=16).digest()
+
+    def change(self) -> RowChange:
+        table = TABLES[self.tbl]
+        before, after = (None if text is None else table.from_json(text) for text in (self.before, self.after))
+        return RowChange(before, after)
+
+
+class _Position(NamedTuple):
+    """How far a history reaches."""
+
+    seq: int = 0
+    step: int = 0
+    chain: bytes = bytes(16)
+
+
+@dataclass(frozen=True)
+class Held:
+    """What a key held from one step on.
+
+    Attributes:
+        step: number of the step.
+        at: local clock time of the step, ISO 8601.
+        act: what was done then.
+        record: the record from then on; None = taken away.
+    """
+
+    step: int
+    at: str
+    act: Act
+    record: Record | None
+
+
+class Store:
+    """One open journal file.
+
+    Exactly one thread uses a store at a time; it may be handed from the thread that opened it to another.
+
+    After a write that failed the file is as it was, and the store can go on. Only when the disk fails at the
+    very end of a write may the step be there all the same; the next write then says "stale" and
+    :meth:`read` gives what is there.
+    """
+
+    def __init__(self, database: Database, clock: Clock) -> None:
+        """Of an open database; use :meth:`create` or :meth:`open`."""
+        self._database = database
+        self._clock = clock
+        with database.reading() as connection:
+            self._last = _position(connection)
+
+    @classmethod
+    def create(cls, path: Path, records: Person | Iterable[Record], *, clock: Clock = datetime.now) -> Store:
+        """Make a new journal; its first step is "start journal".
+
+        Args:
+            path: where; nothing may be there yet.
+            records: the person, or the person and other records to begin with.
+            clock: gives local time.
+
+        Raises:
+            ValueError: not exactly one person among the records.
+            StorageError: something is there already, the file cannot be made, or a record is refused.
+        """
+        listed = [records] if isinstance(records, Person) else list(records)
+        if sum(isinstance(record, Person) for record in listed) != 1:
+            raise ValueError("a journal is started with exactly one person record")
+        changes = tuple(RowChange(None, record) for record in listed)
+        step = Step(1, _text_of(clock()), "do", "start journal", None, changes)
+
+        def fill(connection: sqlite3.Connection) -> None:
+            _append(connection, step, _Position(), path)
+
+        create_file(path, fill)
+        return cls.open(path, clock=clock)
+
+    @classmethod
+    def open(cls, path: Path, *, clock: Clock = datetime.now) -> Store:
+        """Open a journal; in a place that cannot be written it opens for reading.
+
+        Args:
+            path: the file.
+            clock: gives local time.
+
+        Raises:
+            StorageError: there is no file, it cannot be opened, is not a journal, is damaged, was made by a
+                newer version, or is open already in this process.
+        """
+        database = open_database(path)
+        try:
+            return cls(database, clock)
+        except BaseException:
+            database.close()
+            raise
+
+    @property
+    def path(self) -> Path:
+        """Where the file was when it was opened."""
+        return self._database.path
+
+    @property
+    def read_only(self) -> bool:
+        """Whether nothing can be written in this place."""
+        return self._database.read_only
+
+    @property
+    def last_step_number(self) -> int:
+        """Number of the last step seen or written."""
+        return self._last.step
+
+    def read(self) -> Journal:
+        """The journal as it stands in the file; from here on this is the state writing goes on from.
+
+        Raises:
+            StorageError: the file cannot be read.
+        """
+        with self._database.reading() as connection:
+            last = _position(connection)
+            rows = [(table, row) for table in TABLES.values() for row in connection.execute(table.select)]
+        try:
+            journal = Journal.of(table.record(row) for table, row in rows)
+        except (ValueError, TypeError) as error:
+            raise self._damaged("a row is not a record") from error
+        self._last = last
+        return journal
+
+    def write(self, act: Act, changes: Sequence[RowChange], kind: StepKind = "do", of: int | None = None) -> Step:
+        """Make the changes and note them in the history: all of it, on the disk, or nothing.
+
+        Args:
+            act: what the person did.
+            changes: at least one, in the order they are made.
+            kind: done, taken back or done again.
+            of: for the last two, number of the step taken back or done again.
+
+        Returns:
+            The step as the history holds it.
+
+        Raises:
+            ValueError: no changes.
+            StorageError: nothing was written: the file is not as this store last saw it ("stale"), a record is
+                refused, or the disk or the place does not allow it.
+        """
+        if not changes:
+            raise ValueError("a step needs a change")
+        step = Step(self._last.step + 1, _text_of(self._clock()), kind, act, of, tuple(changes))
+        with self._database.writing() as connection:
+            if _position(connection) != self._last:
+                raise StorageError("stale", path=str(self.path))
+            last = _append(connection, step, self._last, self.path)
+        self._last = last
+        return step
+
+    def steps(self, last: int | None = None) -> list[Step]:
+        """The steps of the history, oldest first.
+
+        Args:
+            last: how many of the last steps; None = all.
+
+        Raises:
+            StorageError: the file cannot be read.
+        """
+        rows: list[_HistoryRow] = []
+        with self._database.reading() as connection:
+            newest_first = connection.execute(f'SELECT {_HISTORY} FROM "history" ORDER BY "seq" DESC')
+            floor: int | None = None
+            for row in map(_row, newest_first):
+                if floor is None:
+                    floor = 0 if last is None else row.step - last
+                if row.step <= floor:
+                    break
+                rows.append(row)
+            newest_first.close()
+        try:
+            return [_step(list(group)) for _, group in groupby(reversed(rows), key=lambda row: row.step)]
+        except (ValueError, TypeError) as error:
+            raise self._damaged("a row of the history is not a record") from error
+
+    def history_of(self, key: tuple[str | int, ...]) -> list[Held]:
+        """Everything a key has ever held, newest first.
+
+        Args:
+            key: as ``key_of`` gives it.
+
+        Raises:
+            StorageError: the file cannot be read.
+        """
+        with self._database.reading() as connection:
+            rows = connection.execute(
+                f'SELECT {_HISTORY} FROM "history" WHERE "tbl" = ? AND "key" = ? ORDER BY "seq" DESC',
+                (key[0], key_text(key)),
+            ).fetchall()
+        try:
+            return [Held(row.step, row.at, row.act, row.change().after) for row in map(_row, rows)]
+        except (ValueError, TypeError) as error:
+            raise self._damaged("a row of the history is not a record") from error
+
+    def highest_ids(self) -> dict[str, int]:
+        """The highest number each table has ever used as an id, tables that never held a record left out.
+
+        Raises:
+            StorageError: the file cannot be read.
+        """
+        with self._database.reading() as connection:
+            rows = connection.execute(
+                'SELECT "tbl", max(CAST("key" AS INTEGER)) FROM "history"'
+                " WHERE \"tbl\" IN ('measure', 'change', 'span', 'plan') GROUP BY \"tbl\""
+            ).fetchall()
+        return dict(rows)
+
+    def verify(self) -> None:
+        """Check the whole file: its pages, the chain of the history, and that the history gives the tables.
+
+        Reads everything; a long journal takes a while.
+
+        Raises:
+            StorageError: the file is damaged or cannot be read.
+        """
+        with self._database.reading() as connection:
+            for check in ("integrity_check(1)", "foreign_key_check"):
+                found = connection.execute(f"PRAGMA {check}").fetchall()
+                if found not in ([], [("ok",)]):
+                    raise self._damaged(f"{check}: {found[0][0]}")
+            replayed = self._replay(connection)
+            rows = [(table, row) for table in TABLES.values() for row in connection.execute(table.select)]
+        try:
+            held = {(table.name, key_text(key_of(table.record(row)))): table.json(row) for table, row in rows}
+        except (ValueError, TypeError) as error:
+            raise self._damaged("a row is not a record") from error
+        if replayed != held:
+            raise self._damaged("the history does not give what the tables hold")
+
+    def close(self) -> None:
+        """Let go of the file; closing twice does nothing."""
+        self._database.close()
+
+    def __enter__(self) -> Store:
+        return self
+
+    def __exit__(self, *_: object) -> None:
+        self.close()
+
+    def _replay(self, connection: sqlite3.Connection) -> dict[tuple[str, str], str]:
+        """What the history makes of nothing, each record as its JSON, by table and key."""
+        held: dict[tuple[str, str], str] = {}
+        chain = _Position().chain
+        for number, cells in enumerate(
+            connection.execute(f'SELECT {_HISTORY} FROM "history" ORDER BY "seq"'), start=1
+        ):
+            row = _row(cells)
+            chain = row.chained(chain)
+            if row.seq != number or cells[-1] != chain:
+                raise self._damaged("the chain of the history is broken", seq=number)
+            key = (row.tbl, row.key)
+            if held.pop(key, None) != row.before:
+                raise self._damaged("a step starts from what was not there", seq=number)
+            if row.after is not None:
+                held[key] = row.after
+        return held
+
+    def _damaged(self, detail: str, **fields: object) -> StorageError:
+        return StorageError("damaged", path=str(self.path), detail=detail, **fields)
+
+
+def _position(connection: sqlite3.Connection) -> _Position:
+    found = connection.execute('SELECT "seq", "step", "chain" FROM "history" ORDER BY "seq" DESC LIMIT 1')
+    return _Position(*(found.fetchone() or ()))
+
+
+def _append(connection: sqlite3.Connection, step: Step, last: _Position, path: Path) -> _Position:
+    """Make the changes of a step and note them, inside the caller's transaction."""
+    for change in step.changes:
+        table = table_of(change.record)
+        key = key_of(change.record)
+        try:
+            before, after = (
+                None if record is None else table.cells(record) for record in (change.before, change.after)
+            )
+        except (ValueError, TypeError) as error:
+            # The key says where; the value stays out of what may end up in a report.
+            raise StorageError("refused value", path=str(path), key=key) from error
+        _make(connection, table, key_cells(change.record), before, after, path)
+        row = _HistoryRow(
+            last.seq + 1,
+            step.number,
+            step.at,
+            step.kind,
+            step.act,
+            step.of,
+            table.name,
+            key_text(key),
+            None if before is None else table.json(before),
+            None if after is None else table.json(after),
+        )
+        chain = row.chained(last.chain)
+        connection.execute(_APPEND, (*row, chain))
+        last = _Position(row.seq, row.step, chain)
+    return last
+
+
+def _make(
+    connection: sqlite3.Connection,
+    table: Table,
+    key: tuple[Cell, ...],
+    before: tuple[Cell, ...] | None,
+    after: tuple[Cell, ...] | None,
+    path: Path,
+) -> None:
+    found = connection.execute(table.select_one, key).fetchone()
+    if found != before:
+        raise StorageError("stale", path=str(path))
+    if after is None:
+        connection.execute(table.delete, key)
+    elif before is None:
+        connection.execute(table.insert, after)
+    else:
+        connection.execute(table.update, (*after, *key))
+
+
+def _row(cells: Sequence[object]) -> _HistoryRow:
+    return _HistoryRow(*cells[:-1])  # type: ignore[arg-type]
+
+
+def _step(rows: list[_HistoryRow]) -> Step:
+    first = rows[0]
+    changes = tuple(row.change() for row in rows)
+    return Step(first.step, first.at, first.kind, first.act, first.of, changes)
+
+
+def _text_of(moment: datetime) -> str:
+    return moment.isoformat(timespec="seconds")

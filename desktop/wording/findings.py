@@ -1,0 +1,329 @@
+"""A review in plain words: the answer first, the four questions, what would settle it."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass, replace
+from datetime import date
+
+import numpy as np
+
+from analysis.answer import Answer, Carried, Review, Since, Stretch
+from analysis.questions.did_it_move import CLAIMS, FEWEST_AFTER, FEWEST_BEFORE
+from desktop.wording.cautions import CAUTION
+from desktop.wording.days import DayWords
+from desktop.wording.doubts import doubt_sentence
+from desktop.wording.numbers import Speech, chance_in_100, decimals_of
+
+NO_CAUSE = (
+    "This compares days before and after. It cannot tell what caused a difference: "
+    "other things may have changed at the same time."
+)
+_LISTED = 3
+"""Days outside are named up to this many; beyond, the chart shows them."""
+
+
+@dataclass(frozen=True)
+class Section:
+    """One question and what the log says to it."""
+
+    title: str
+    sentences: tuple[str, ...]
+
+
+@dataclass(frozen=True)
+class Findings:
+    """An answer as it is read: the headline in the largest type, then the sections."""
+
+    headline: str
+    sections: tuple[Section, ...]
+
+    def lines(self) -> tuple[str, ...]:
+        """Headline and every sentence, in reading order."""
+        return (self.headline, *(one for section in self.sections for one in section.sentences))
+
+
+def findings_of(review: Review) -> Findings:
+    """What a review says, in plain words."""
+    return _Teller(review).tell()
+
+
+def worded(review: Review) -> Review:
+    """The review with its findings, its doubts' sentences and the caution filled in."""
+    speech = speech_of(review)
+    return replace(
+        review,
+        findings=findings_of(review).lines(),
+        doubts=tuple(replace(doubt, sentence=doubt_sentence(doubt, speech)) for doubt in review.doubts),
+        caution=CAUTION,
+    )
+
+
+def speech_of(review: Review) -> Speech:
+    """How the review's numbers are said: with the digits its own values have."""
+    values = review.points.values
+    return Speech(review.measure, decimals_of(values[~np.isnan(values)].tolist()))
+
+
+def day_words_of(review: Review) -> DayWords:
+    """How the review's periods are named: with their year where it spans more than one."""
+    years = {date.fromordinal(day).year for stretch in review.stretches for day in (stretch.first, stretch.last)}
+    return DayWords(review.measure.period, with_year=len(years) > 1)
+
+
+def outside_sentence(carried: Carried, days: int, speech: Speech) -> str:
+    """How many periods are outside the carried fences, and how many would be by luck alone."""
+    low, high = len(carried.below), len(carried.above)
+    outside = low + high
+    if not outside:
+        seen = f"None of the {speech.periods(days)} since is outside the old fences."
+    else:
+        sides = "all high" if not low else "all low" if not high else f"{high} high and {low} low"
+        if outside == 1:
+            sides = "high" if high else "low"
+        verb = "is" if outside == 1 else "are"
+        seen = f"{outside} of the {speech.periods(days)} since {verb} outside the old fences, {sides}."
+    return f"{seen} {_luck_alone(carried.expected_by_luck)}"
+
+
+def _luck_alone(expected: float) -> str:
+    if expected < 0.5:
+        return "By luck alone there would most often be none."
+    return f"About {round(expected)} would be by luck alone."
+
+
+class _Teller:
+    """Tells one review; holds what every sentence needs."""
+
+    def __init__(self, review: Review) -> None:
+        self.review = review
+        self.speech = speech_of(review)
+        self.days = day_words_of(review)
+
+    def tell(self) -> Findings:
+        if not self.review.stretches:
+            return Findings("No answer yet.", (Section("", ("There is no value in this log yet.",)),))
+        if len(self.review.stretches) == 1:
+            return self._one_stretch(self.review.stretches[0])
+        return self._moved(self.review.stretches[0], self.review.stretches[-1], self.review.answer)
+
+    def _one_stretch(self, only: Stretch) -> Findings:
+        """Without a change: is any period out of line with the rest?"""
+        speech = self.speech
+        sections = [Section("The log so far", tuple(self._level(only)))]
+        outside = sorted([*only.below, *only.above])
+        if only.lower_fence is None or only.upper_fence is None:
+            headline = f"Too early to say if a {speech.one} is out of line."
+            if only.observations >= FEWEST_BEFORE:
+                headline = f"No {speech.one} can be told apart from the rest."
+        elif outside:
+            verb = "is" if len(outside) == 1 else "are"
+            headline = f"{speech.periods(len(outside))} {verb} out of line with the rest."
+            sections.append(Section("Which ones?", tuple(self._out_of_line(only, outside))))
+        else:
+            headline = f"No {speech.one} is out of line with the rest."
+        sections += self._doubts()
+        if only.observations < FEWEST_BEFORE:
+            left = FEWEST_BEFORE - only.observations
+            more = (
+                f"{speech.periods(left)} more with a value would be enough to draw fences. "
+                f"{14} {speech.many} are better."
+            )
+            sections.append(Section("What would settle it?", (more,)))
+        elif speech.one == "day":
+            mark = "To ask if something moved it, mark the day of a change (Log, Mark a change)."
+            sections.append(Section("What next?", (mark,)))
+        return Findings(headline, tuple(sections))
+
+    def _level(self, stretch: Stretch) -> list[str]:
+        if stretch.median is None or stretch.lower_fourth is None or stretch.upper_fourth is None:
+            return [f"There is no {self.speech.one} with a value."]
+        speech = self.speech
+        told = [
+            f"{speech.periods(stretch.observations)} with a value. The middle {speech.one} is "
+            f"{speech.with_unit(stretch.median)}."
+        ]
+        if stretch.observations >= FEWEST_BEFORE:
+            told.append(
+                f"The middle half runs from {speech.number(stretch.lower_fourth)} to "
+                f"{speech.with_unit(stretch.upper_fourth)}."
+            )
+        if stretch.lower_fence is not None and stretch.upper_fence is not None:
+            told.append(
+                f"The fences stand at {speech.number(stretch.lower_fence)} and "
+                f"{speech.with_unit(stretch.upper_fence)}."
+            )
+        return told
+
+    def _out_of_line(self, only: Stretch, outside: list[int]) -> list[str]:
+        value_at = {
+            int(day): float(value)
+            for day, value in zip(self.review.points.first, self.review.points.values, strict=True)
+        }
+        told = []
+        for day in outside[:_LISTED]:
+            assert only.lower_fence is not None
+            assert only.upper_fence is not None
+            is_high = day in only.above
+            side, fence = (
+                ("above the upper", only.upper_fence) if is_high else ("below the lower", only.lower_fence)
+            )
+            name = self.days.name(day)
+            told.append(
+                f"{name[0].upper()}{name[1:]}: {self.speech.with_unit(value_at[day])}, "
+                f"{side} fence of {self.speech.number(fence)}."
+            )
+        if len(outside) > _LISTED:
+            told.append(f"The other {len(outside) - _LISTED} are marked on the chart.")
+        told.append(f"One {self.speech.one} alone says nothing about the level.")
+        return told
+
+    def _moved(self, before: Stretch, after: Stretch, answer: Answer) -> Findings:
+        sections = [Section("Did it move?", tuple(self._did_it_move(before, after, answer)))]
+        if answer.shift is not None:
+            sections.append(Section("By how much?", tuple(self._by_how_much(before, after, answer))))
+        if answer.carried is not None and after.observations:
+            day_by_day = outside_sentence(answer.carried, after.observations, self.speech)
+            sections.append(Section(f"{self.speech.one.capitalize()} by {self.speech.one}", (day_by_day,)))
+        if answer.since is not None and answer.sureness in (*CLAIMS, "leaning"):
+            sections.append(Section("Since when?", (self._since(answer.since, after),)))
+        sections += self._doubts()
+        if answer.sureness != "too early":
+            sections[-1] = Section(sections[-1].title, (*sections[-1].sentences, NO_CAUSE))
+        settle = self._settle(before, after, answer)
+        if settle:
+            sections.append(Section("What would settle it?", (settle,)))
+        return Findings(self._headline(before, after, answer), tuple(sections))
+
+    def _headline(self, before: Stretch, after: Stretch, answer: Answer) -> str:
+        match answer.sureness:
+            case "too early":
+                return "Too early to say if it moved."
+            case "cannot tell":
+                return "This log cannot tell if it moved."
+            case "leaning":
+                return f"It may have moved: {self._levels(before, after, answer)}"
+            case _:
+                return f"It moved: {self._levels(before, after, answer)}"
+
+    def _levels(self, before: Stretch, after: Stretch, answer: Answer) -> str:
+        """Before and since in one breath, in the terms that mean most for this log."""
+        speech = self.speech
+        often = answer.how_often
+        if often is not None:
+            done, of = often.after
+            was, was_of = often.before
+            return f"on {done} of {of} {speech.many} there was some, on {was} of {was_of} before."
+        assert before.median is not None
+        assert after.median is not None
+        was_middle, is_middle = speech.number(before.median), speech.with_unit(after.median)
+        if speech.number(after.median) == was_middle and answer.shift is not None:
+            direction = "above" if answer.direction == "more" else "below"
+            return (
+                f"{answer.shift.better_days} of {answer.shift.days} {speech.many} since are {direction} "
+                f"the old middle of {speech.with_unit(before.median)}."
+            )
+        return f"{is_middle} on a middle {speech.one}, {was_middle} before."
+
+    def _did_it_move(self, before: Stretch, after: Stretch, answer: Answer) -> list[str]:
+        speech = self.speech
+        if answer.sureness == "too early":
+            return [
+                f"There {'is' if before.observations == 1 else 'are'} {speech.periods(before.observations)} "
+                f"with a value before the change and {after.observations} after. An answer needs "
+                f"{FEWEST_BEFORE} before and {FEWEST_AFTER} after; 14 before is better."
+            ]
+        assert answer.luck is not None
+        luck = (
+            f"If nothing had changed, a gap this big would turn up by luck in "
+            f"{chance_in_100(answer.luck.p)} logs like this one."
+        )
+        reason = f"{before.observations} {speech.many} before, {after.observations} after."
+        word = str(answer.sureness)
+        return [f"{word[0].upper()}{word[1:]}: {reason} {luck}"]
+
+    def _by_how_much(self, before: Stretch, after: Stretch, answer: Answer) -> list[str]:
+        speech, shift = self.speech, answer.shift
+        assert shift is not None
+        told = []
+        if answer.how_often is not None:
+            if answer.how_much is not None:
+                told.append(
+                    f"On those {speech.many} the middle was {speech.number(answer.how_much.before)} before "
+                    f"and is {speech.with_unit(answer.how_much.after)} since."
+                )
+        elif answer.sureness not in CLAIMS and before.median is not None and after.median is not None:
+            told.append(
+                f"A middle {speech.one} was {speech.with_unit(before.median)} before and is "
+                f"{speech.number(after.median)} since."
+            )
+        if shift.low == shift.high == 0:
+            told.append("Day for day there is no difference to see.")
+        elif answer.sureness == "too early":
+            told.append(f"The difference could be {speech.between(shift.low, shift.high)}.")
+        else:
+            told.append(f"The difference is probably {speech.between(shift.low, shift.high)}.")
+        told += self._better_days(before, answer)
+        if answer.goal is not None:
+            told.append(
+                f"Inside the range you set on {answer.goal.after[0]} of {answer.goal.after[1]} {speech.many}, "
+                f"{answer.goal.before[0]} of {answer.goal.before[1]} before."
+            )
+        wanted = self.review.measure.aim
+        if wanted in ("more", "less") and answer.direction in ("more", "less"):
+            way = speech.way(1 if answer.direction == "more" else -1).capitalize()
+            told.append(f"{way}, which is {'' if wanted == answer.direction else 'not '}the way you wanted.")
+        return told
+
+    def _better_days(self, before: Stretch, answer: Answer) -> list[str]:
+        shift, aim = answer.shift, self.review.measure.aim
+        assert shift is not None
+        if isinstance(aim, tuple) or before.median is None or answer.how_often is not None:
+            return []
+        wants_less = aim == "less" or (aim == "none" and shift.estimate < 0)
+        verb = "was" if shift.better_days == 1 else "were"
+        return [
+            f"{shift.better_days} of {self.speech.periods(shift.days)} {verb} "
+            f"{'below' if wants_less else 'above'} the old middle."
+        ]
+
+    def _since(self, since: Since, after: Stretch) -> str:
+        name = self.days.name
+        if since.first == since.last:
+            told = f"Since {name(since.likely)}."
+        else:
+            told = (
+                f"Most likely since {name(since.likely)}; any start from {name(since.first)} to "
+                f"{name(since.last)} fits about as well."
+            )
+        if after.change is None:
+            return told
+        marked = self.days.day(after.change)
+        if since.before_change:
+            return f"{told} That is before the day you marked, {marked}."
+        if since.first > after.change:
+            return f"{told} That is after the day you marked, {marked}."
+        return f"{told} That fits the day you marked, {marked}."
+
+    def _doubts(self) -> list[Section]:
+        told = tuple(doubt_sentence(doubt, self.speech) for doubt in self.review.doubts)
+        if not told and len(self.review.stretches) == 1:
+            return []
+        return [Section("What else could explain it?", told)]
+
+    def _settle(self, before: Stretch, after: Stretch, answer: Answer) -> str | None:
+        speech = self.speech
+        if answer.sureness == "too early":
+            short_before = max(0, FEWEST_BEFORE - before.observations)
+            short_after = max(0, FEWEST_AFTER - after.observations)
+            if short_before:
+                return (
+                    f"The days before the change are too few, by {short_before}, and cannot be added later. "
+                    "If you wrote down earlier days somewhere, add them."
+                )
+            return f"{speech.periods(short_after)} more after the change."
+        if answer.sureness == "cannot tell" and answer.bound:
+            return (
+                f"If it changed at all, it was by less than {speech.with_unit(answer.bound)}{speech.rate()}. "
+                "More days would narrow this."
+            )
+        return None
