@@ -158,6 +158,22 @@ class Goal:
 
 
 @dataclass(frozen=True)
+class StillNeeded:
+    """Further logged days that would show a move of ``for_amount`` in 80 of 100 logs.
+
+    Attributes:
+        days: 0 = there are enough; None = no number is enough with this baseline.
+        low, high: its range; None where not computed.
+        for_amount: size of the move, in the measure's unit.
+    """
+
+    days: int | None
+    low: int | None
+    high: int | None
+    for_amount: float
+
+
+@dataclass(frozen=True)
 class Doubt:
     """Something in this log that could explain the answer, or keep it from being one.
 
@@ -194,7 +210,7 @@ class Answer:
     weekday_rhythm: None = None
     season: None = None
     bound: float | None = None
-    still_needed: None = None
+    still_needed: StillNeeded | None = None
 
 
 @dataclass(frozen=True)

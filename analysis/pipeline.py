@@ -20,6 +20,7 @@ from analysis.answer import (
     Review,
     Shift,
     Since,
+    StillNeeded,
     Stretch,
 )
 from analysis.batch.fences import Fences, fences, is_above, is_below
@@ -30,6 +31,7 @@ from analysis.errors import AnalysisError
 from analysis.log import Change, Log, Measure, Values
 from analysis.points import Points, first_logged_day, points_of
 from analysis.questions.by_how_much import difference_of_shares, share_range, shift
+from analysis.questions.days_still_needed import days_needed_after
 from analysis.questions.did_it_move import FEWEST_BEFORE, rank_sum, sureness
 from analysis.questions.since_when import plausible_splits
 from analysis.series.carry_over import carry_over, widening
@@ -43,6 +45,7 @@ def review(
     changes: Sequence[Change] = (),
     baseline: tuple[date, date] | None = None,
     today: date | None = None,
+    worth: float | None = None,
 ) -> Review:
     """Answer whether a log moved, by how much and since when.
 
@@ -51,6 +54,7 @@ def review(
         changes: in any order; those of one day are one change.
         baseline: first and last day to judge against; the days up to the first change when left out.
         today: the day after which nothing is used; the last day of the log when left out.
+        worth: the smallest move that would be worth it, in the measure's unit.
 
     Raises:
         AnalysisError: the baseline ends before it begins, or reaches into a change.
@@ -66,7 +70,7 @@ def review(
     edges = _edges(marked, baseline, begin, end)
     stretches = tuple(_stretch(points, edge, is_after=place > 0) for place, edge in enumerate(edges))
     rows = [_stretch_values(points, first, last) for _, first, last in edges]
-    comparisons = tuple(_comparisons(log.measure, points, stretches, edges, rows))
+    comparisons = tuple(_comparisons(log.measure, points, stretches, edges, rows, worth))
     answer = next(
         (one.answer for one in comparisons if one.stretch == len(stretches) - 1 and one.against == "baseline"),
         Answer(),
@@ -187,11 +191,12 @@ def _comparisons(
     stretches: Sequence[Stretch],
     edges: Sequence[Edge],
     rows: Sequence[Values],
+    worth: float | None,
 ) -> Iterable[Comparison]:
     for place in range(1, len(stretches)):
-        yield Comparison(place, "baseline", _answer(measure, points, stretches, edges, rows, 0, place))
+        yield Comparison(place, "baseline", _answer(measure, points, stretches, edges, rows, 0, place, worth))
         if place > 1:
-            answer = _answer(measure, points, stretches, edges, rows, place - 1, place)
+            answer = _answer(measure, points, stretches, edges, rows, place - 1, place, worth)
             yield Comparison(place, "before", answer)
 
 
@@ -203,6 +208,7 @@ def _answer(
     rows: Sequence[Values],
     against: int,
     place: int,
+    worth: float | None,
 ) -> Answer:
     """One stretch against an earlier one."""
     before, after = (row[~np.isnan(row)] for row in (rows[against], rows[place]))
@@ -240,7 +246,15 @@ def _answer(
         goal=_goal(measure, before, after, widened),
         carry_over=r,
         bound=max(abs(low), abs(high)) if word == "cannot tell" else None,
+        still_needed=_still_needed(before, after, worth, widened),
     )
+
+
+def _still_needed(before: Values, after: Values, worth: float | None, widened: float) -> StillNeeded | None:
+    if not worth:
+        return None
+    needed = days_needed_after(before, worth, widened)
+    return StillNeeded(None if needed is None else max(0, needed - len(after)), None, None, abs(worth))
 
 
 def in_100(p: float) -> int:

@@ -32,6 +32,7 @@ ExchangeReason = Literal[
     "which day column",
     "which value column",
     "which day order",
+    "which century",
     "which decimal mark",
     "unknown column",
     "day written twice",

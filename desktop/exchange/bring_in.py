@@ -14,9 +14,11 @@ from desktop.exchange.day_column import DaysRead, find_name, find_times, read_da
 from desktop.exchange.day_tokens import DayOrder, RowPeriod
 from desktop.exchange.day_words import is_total
 from desktop.exchange.number_tokens import DecimalMark, Refusal
+from desktop.exchange.slots import slots_of_day
 from desktop.exchange.source_text import file_bytes
-from desktop.exchange.table import SkippedLine, Table, find_table, is_index
-from desktop.exchange.value_column import CellsRead, holds_values, read_values
+from desktop.exchange.table import Column, SkippedLine, Table, find_table, is_index
+from desktop.exchange.units import split_header
+from desktop.exchange.value_column import HALVES, CellsRead, holds_values, read_values
 
 Status = Literal["kept", "blank", "set aside"]
 
@@ -163,16 +165,16 @@ def read_table(
     days = read_days(table, day_order=day_order, day_column=day_column, century=century)
     places, clocks, index = _value_places(table, days)
     wanted = _wanted_places(table, days, places, columns)
-    cells = [
-        (place, read)
-        for place in wanted
-        for read in read_values(table.columns[place], decimal, one_day=days.period == "day")
-    ]
     row_days = _row_days(table, days, places, index)
-    if not any(isinstance(day, date) for day in row_days):
+    kept = [place for place, day in enumerate(row_days) if isinstance(day, date)]
+    if not kept:
         counted = Counter(fate.reason for fate in row_days if isinstance(fate, Fate))
         raise ExchangeError("no days read", column=table.columns[days.place].name, reasons=dict(counted))
-    read_columns = tuple(_read_column(table, place, read, row_days, clocks) for place, read in cells)
+    read_columns = tuple(
+        _read_column(table, place, read, row_days, clocks)
+        for place in wanted
+        for read in read_values(_only(table.columns[place], kept), decimal, one_day=days.period == "day")
+    )
     return Reading(
         separator=table.separator,
         encoding=table.encoding,
@@ -214,10 +216,13 @@ def _named(reading: Reading, name: str) -> ReadColumn:
     halves = [column.name for column in reading.columns if column.pair.casefold() == name.strip().casefold()]
     if halves and name.strip():
         raise ExchangeError("which value column", choices=halves)
-    for wanted in (name.strip(), name.strip().casefold()):
-        for column in reading.columns:
-            if wanted in (column.name, column.name.casefold()):
-                return column
+    wanted = (name.strip(), split_header(name.strip())[0])
+    for column in reading.columns:
+        if column.name in wanted:
+            return column
+    for column in reading.columns:
+        if column.name.casefold() in map(str.casefold, wanted):
+            return column
     raise ExchangeError("unknown column", name=name, choices=[column.name for column in reading.columns])
 
 
@@ -240,13 +245,24 @@ def _value_places(table: Table, days: DaysRead) -> tuple[list[int], list[time | 
 
 
 def _wanted_places(table: Table, days: DaysRead, places: Sequence[int], names: Sequence[str] | None) -> list[int]:
-    if names is None:
+    if not names:
         if not places:
             raise ExchangeError("no value column", columns=[column.name for column in table.columns])
         return list(places)
     choices = [column for place, column in enumerate(table.columns) if place != days.place]
-    found = [find_name(name, choices) for name in names]
+    found = [_find_whole(name, choices) for name in names]
     return [place for place, column in enumerate(table.columns) if column.name in found]
+
+
+def _find_whole(name: str, columns: Sequence[Column]) -> str:
+    """The name of the column meant, where a half of a column of pairs may be named too."""
+    try:
+        return find_name(name, columns)
+    except ExchangeError:
+        whole, _, half = name.strip().rpartition(" ")
+        if half.casefold() not in HALVES:
+            raise
+        return find_name(whole, columns)
 
 
 def _row_days(table: Table, days: DaysRead, places: Sequence[int], index: int | None) -> list[date | Fate]:
@@ -257,7 +273,8 @@ def _row_days(table: Table, days: DaysRead, places: Sequence[int], index: int | 
     result: list[date | Fate] = []
     for place, (row, text) in enumerate(zip(table.rows, table.columns[days.place].cells, strict=True)):
         day = days.days[text]
-        reason = _misfit(table, place, width, needed) if len(row) != width else ""
+        fits = len(row) == width and table.lines[place] not in table.broken
+        reason = "" if fits else _misfit(table, place, width, needed)
         if not reason and isinstance(day, str):
             reason = _why_no_day(table, place, day)
         if not reason:
@@ -269,6 +286,13 @@ def _row_days(table: Table, days: DaysRead, places: Sequence[int], index: int | 
         else:
             result.append(day)
     return result
+
+
+def _only(column: Column, places: Sequence[int]) -> Column:
+    """The column with the cells of some rows only, so that no other row has a say in how they are read."""
+    if len(places) == len(column.cells):
+        return column
+    return replace(column, cells=tuple(column.cells[place] for place in places))
 
 
 def _misfit(table: Table, place: int, width: int, needed: int) -> str:
@@ -318,37 +342,6 @@ def _read_column(
     return ReadColumn(
         read.name, read.unit, read.decimal, read.durations, read.pair, values, tuple(blanks), tuple(refused)
     )
-
-
-def slots_of_day(days: Sequence[date], times: Sequence[time | None]) -> list[str]:
-    """A slot for each value, so that no two of one day share one.
-
-    Args:
-        days: the day of each value.
-        times: the time of day of each value, None where it is not written.
-
-    Returns:
-        All ``""`` where no day has several values. Else ``morning``, ``midday`` or ``evening`` where there
-        is a time, ``""`` where there is none; a second one in the same slot has a 2 behind it.
-    """
-    if len(set(days)) == len(days):
-        return [""] * len(days)
-    taken: Counter[tuple[date, str]] = Counter()
-    slots = []
-    for day, clock in zip(days, times, strict=True):
-        part = _part_of_day(clock)
-        taken[day, part] += 1
-        number = taken[day, part]
-        slots.append(part if number == 1 else f"{part} {number}".strip())
-    return slots
-
-
-def _part_of_day(clock: time | None) -> str:
-    if clock is None:
-        return ""
-    if clock.hour < 12:
-        return "morning"
-    return "midday" if clock.hour < 15 else "evening"
 
 
 def _several(columns: Iterable[ReadColumn]) -> tuple[date, ...]:

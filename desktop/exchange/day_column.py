@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections import Counter
 from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from datetime import date, time
@@ -173,9 +174,9 @@ def _read_numbered(place: int, texts: Sequence[str]) -> DaysRead:
 
 
 def _period(cells: Sequence[str], tokens: dict[str, DayToken]) -> RowPeriod:
-    found = [tokens[text].period for text in cells if text in tokens]
+    found = Counter(tokens[text].period for text in cells if text in tokens)
     periods: tuple[RowPeriod, ...] = ("day", "month", "year")
-    return max(periods, key=found.count)
+    return max(periods, key=found.__getitem__)
 
 
 def _settle_order(tokens: Sequence[DayToken], answer: DayOrder | None) -> DayOrder | None:
@@ -204,6 +205,11 @@ def _settle_century(tokens: Sequence[DayToken], order: DayOrder | None, answer: 
 
 
 def _in_order(token: DayToken, order: DayOrder | None, century: int | None) -> date | None:
+    if token.settled and not token.short_year:
+        try:
+            return date(*token.settled)
+        except ValueError:
+            return None
     readings = token.readings(century)
     return readings.get(None) or readings.get(order)
 

@@ -4,9 +4,8 @@ from __future__ import annotations
 
 import re
 from collections.abc import Iterable
-from dataclasses import dataclass
 from datetime import date, time, timedelta
-from typing import Literal, get_args
+from typing import Literal, NamedTuple, get_args
 
 from desktop.exchange.day_words import FILLERS, MONTH_NUMBERS, WEEKDAYS, simple
 from desktop.exchange.number_tokens import plain_marks
@@ -34,6 +33,7 @@ _YEAR_FIRST = re.compile(r"([0-9]{4})([-/. ])\s?([0-9]{1,2})\2\s?([0-9]{1,2})")
 _YEAR_LAST = re.compile(r"([0-9]{1,2})([-/. ])\s?([0-9]{1,2})\2\s?([0-9]{4})")
 _SHORT_YEAR = re.compile(r"([0-9]{1,2})([-/.])\s?([0-9]{1,2})\2\s?([0-9]{1,2})")
 _MONTH_ROW = re.compile(r"([0-9]{4})[-/]([0-9]{1,2})|([0-9]{1,2})[-/]([0-9]{4})")
+_AMOUNT = re.compile(r"-?[0-9]+(?:[.,][0-9]+)?")
 _YEAR_ROW = re.compile(r"([0-9]{4})(?:[.,]0{1,6})?")
 _LEADING_WORD = re.compile(r"([^\W\d_]+)\.?,?\s+(\S.*)")
 _TRAILING_WORD = re.compile(r"(.*[0-9])[\s,]+\(?([^\W\d_]+)\.?\)?")
@@ -41,8 +41,7 @@ _NAMED = re.compile(r"[\w\s.,/'-]+")
 _NAME_PARTS = re.compile(r"([0-9]+)(?:st|nd|rd|th|er|re|o|a)?(?![^\W\d_])|([^\W\d_]+)")
 
 
-@dataclass(frozen=True, slots=True)
-class DayToken:
+class DayToken(NamedTuple):
     """A text that has the shape of a day, a month or a year.
 
     Attributes:
@@ -96,6 +95,8 @@ def parse_day(text: str) -> DayToken | None:
     match = _ISO.fullmatch(text)
     if match:
         return DayToken("day", (int(match[1]), int(match[2]), int(match[3])))
+    if _AMOUNT.fullmatch(text):
+        return _year_row(text)
     if len(text) > _LONGEST or len(text) < 4 or not any(map(str.isdecimal, text)):
         return None
     text = plain_marks(text)
@@ -145,6 +146,10 @@ def _numeric(text: str) -> DayToken | None:
     match = _MONTH_ROW.fullmatch(text)
     if match:
         return DayToken("month", (int(match[1] or match[4]), int(match[2] or match[3]), 1))
+    return _year_row(text)
+
+
+def _year_row(text: str) -> DayToken | None:
     match = _YEAR_ROW.fullmatch(text)
     return DayToken("year", (int(match[1]), 1, 1)) if match and int(match[1]) in SERIES_YEARS else None
 

@@ -9,7 +9,7 @@ import re
 import unicodedata
 from collections.abc import Iterable
 from dataclasses import dataclass
-from typing import Literal
+from typing import Literal, NamedTuple
 
 from desktop.exchange.units import convert_time, known_unit
 
@@ -19,6 +19,7 @@ Kind = Literal["number", "duration", "pair"]
 LARGEST = 1e9
 """No daily value is larger; a number beyond it is a telephone number, a code or a slip."""
 
+_LONGEST = 60
 _BLANK = frozenset({"", "-", "–", "—", "na", "n/a", "n.a.", "#n/a", "null"})
 _MARKS = str.maketrans(
     {
@@ -52,8 +53,7 @@ _WRITTEN: dict[DecimalMark, re.Pattern[str]] = {
 _EITHER = re.compile(r"[1-9][0-9]{0,2}[.,][0-9]{3}")
 
 
-@dataclass(frozen=True, slots=True)
-class NumberToken:
+class NumberToken(NamedTuple):
     """A number that could be read.
 
     Attributes:
@@ -144,6 +144,8 @@ def read_number(text: str, decimal: DecimalMark = ".") -> NumberToken | Refusal:
         return NumberToken("number", float(text) + 0.0)
     if is_blank(text):
         return Refusal("blank")
+    if len(text) > _LONGEST:
+        return Refusal("not a number")
     text = plain_marks(text)
     return _read_timed(text) or _read_pair(text) or _read_amount(text, decimal)
 

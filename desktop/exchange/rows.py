@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import csv
+import re
 from collections.abc import Callable, Iterable, Iterator
 from dataclasses import dataclass
 from io import StringIO
@@ -20,6 +21,7 @@ _MOST_LINES = 1_000_000
 _LONGEST_LINE = MOST_COLUMNS * LONGEST_CELL
 _LOOKED_AT = 1_000
 _MOST_JOINED = 20
+_BLANKS = re.compile(r"[^\S\n]")
 
 Row = list[str]
 
@@ -32,7 +34,7 @@ class Rows:
         separator: what stands between cells.
         cells: the cells of each row, without blanks around them.
         lines: the line of the file each row begins on, from 1.
-        broken: lines whose quotes do not close; such a row holds the line's text as its only cell.
+        broken: lines whose quotes do not close; such a row is cut at every separator.
     """
 
     separator: str
@@ -58,7 +60,7 @@ def split_rows(text: str) -> Rows:
             raise _too_large("cell", LONGEST_CELL, len(line), number)
     separator = choose_separator(lines)
     if '"' not in text:
-        return _kept(separator, ((number, line.split(separator)) for number, line in enumerate(lines, 1)), ())
+        return _kept(separator, _plain_records(text, lines, separator), ())
     try:
         return _kept(separator, _strict_records(text, separator), ())
     except csv.Error:
@@ -95,6 +97,16 @@ def _holds_cells(line: str, separator: str) -> bool:
     return separator in line
 
 
+def _plain_records(text: str, lines: list[str], separator: str) -> Iterator[tuple[int, Row]]:
+    if not _BLANKS.search(text):
+        return ((number, line.split(separator)) for number, line in enumerate(lines, 1))
+    return ((number, _stripped(line.split(separator))) for number, line in enumerate(lines, 1))
+
+
+def _stripped(row: Row) -> Row:
+    return [cell.strip() for cell in row]
+
+
 def _strict_records(text: str, separator: str) -> Iterator[tuple[int, Row]]:
     """Rows by the strict rules.
 
@@ -106,7 +118,7 @@ def _strict_records(text: str, separator: str) -> Iterator[tuple[int, Row]]:
     for row in reader:
         if reader.line_num > begins and _swallows(row, separator):
             raise csv.Error
-        yield begins, row
+        yield begins, _stripped(row)
         begins = reader.line_num + 1
 
 
@@ -129,8 +141,8 @@ def _line_records(lines: list[str], separator: str, broken: list[int]) -> Iterat
         row = _strict_record("\n".join(lines[at : last + 1]), separator)
         if row is None:
             broken.append(at + 1)
-            row, last = [lines[at]], at
-        yield at + 1, row
+            row, last = lines[at].split(separator), at
+        yield at + 1, _stripped(row)
         at = last + 1
 
 
@@ -150,11 +162,10 @@ def _kept(separator: str, records: Iterable[tuple[int, Row]], broken: Iterable[i
     kept: list[Row] = []
     lines: list[int] = []
     for line, row in records:
-        cells = [cell.strip() for cell in row]
-        if len(cells) > MOST_COLUMNS:
-            cells = _without_trailing_blanks(cells, line)
-        if any(cells):
-            kept.append(cells)
+        if len(row) > MOST_COLUMNS:
+            row = _without_trailing_blanks(row, line)
+        if any(row):
+            kept.append(row)
             lines.append(line)
             if len(kept) > MOST_ROWS + 1:
                 raise _too_large("rows", MOST_ROWS, len(kept))

@@ -43,21 +43,25 @@ class Column:
     cells: Cells
 
 
-class DaySeen:
+class DaySeen(dict[str, DayToken | None]):
     """What each different text is as a day; a log repeats few texts, so each is looked at once."""
 
     def __init__(self) -> None:
-        self._seen: dict[str, DayToken | None] = {}
+        super().__init__()
+        self._periods: dict[str, str] = {}
 
-    def __getitem__(self, text: str) -> DayToken | None:
-        if text not in self._seen:
-            self._seen[text] = parse_day(text)
-        return self._seen[text]
+    def __missing__(self, text: str) -> DayToken | None:
+        token = self[text] = parse_day(text)
+        self._periods[text] = token.period if token else ""
+        return token
 
     def count(self, cells: Sequence[str], *, years: bool) -> int:
         """How many cells hold a day or month or, with ``years``, a year."""
-        tokens = ((self[text], number) for text, number in Counter(cells).items())
-        return sum(number for token, number in tokens if token and (token.period == "year") == years)
+        for text in set(cells):
+            if text not in self:
+                self.__missing__(text)
+        periods = Counter(map(self._periods.__getitem__, cells))
+        return periods["year"] if years else periods["day"] + periods["month"]
 
 
 @dataclass(frozen=True)
@@ -107,7 +111,7 @@ def find_table(source: bytes) -> Table:
     text = decode(source)
     found = split_rows(text.text)
     seen = DaySeen()
-    if max(map(len, found.cells)) < 2:
+    if max(map(len, found.cells), default=0) < 2:
         raise ExchangeError("not a table")
     place = _day_place(found.cells, seen)
     header, begins = _header_and_first(found.cells, place, seen)
@@ -149,15 +153,16 @@ def _day_place(rows: Sequence[Row], seen: DaySeen) -> int | None:
 def _header_and_first(rows: Sequence[Row], place: int | None, seen: DaySeen) -> tuple[int | None, int]:
     """The place of the header, or None, and of the first row that is data."""
     begins = _first_with_day(rows, place, seen) if place is not None else _first_with_number(rows)
+    named = [above for above, row in enumerate(rows[:begins]) if _names_days(row, seen)]
+    if named:
+        return named[-1], named[-1] + 1
     width = _usual_width(rows[begins:])
-    above = begins - 1
-    while above >= 0:
+    for above in range(begins - 1, -1, -1):
         if _is_header(rows[above], width):
             return above, above + 1
-        if not _is_data(rows[above]):
+        if not _is_data(rows[above], seen):
             break
         begins = above
-        above -= 1
     return None, begins
 
 
@@ -175,20 +180,27 @@ def _is_number(text: str) -> bool:
     return any(isinstance(read_number(text, mark), NumberToken) for mark in (".", ","))
 
 
-def _is_data(row: Row) -> bool:
-    return len(row) > 1 and any(_is_number(cell) for cell in row)
+def _is_data(row: Row, seen: DaySeen) -> bool:
+    return len(row) > 1 and any(_is_number(cell) or seen[cell] for cell in row)
+
+
+def _names_days(row: Row, seen: DaySeen) -> bool:
+    """Whether a row is sure to be a header: one of its cells is a word for days, and none is a day."""
+    return len(row) > 1 and any(map(_is_day_word, row)) and not seen.count(row, years=False)
+
+
+def _is_day_word(text: str) -> bool:
+    return simple(text.lstrip("# ")) in DAY_HEADERS
 
 
 def _is_header(row: Row, width: int) -> bool:
     """Whether a row names columns: words, as many as the table has columns, and no values under them."""
-    if len(row) < 2 or is_total(row[0]):
+    if len(row) < max(width, 2) or is_total(row[0]):
         return False
     filled = [cell for cell in row if not is_blank(cell)]
-    named = any(simple(cell.lstrip("# ")) in DAY_HEADERS for cell in row)
-    if named or _is_numbered(row):
-        return True
     words = [cell for cell in filled if not _is_number(cell)]
-    return len(row) >= width and 2 * len(words) > len(filled) and any(map(str.isalpha, "".join(words)))
+    worded = 2 * len(words) > len(filled) and any(map(str.isalpha, "".join(words)))
+    return worded or _is_numbered(row)
 
 
 def _is_numbered(row: Row) -> bool:
@@ -204,7 +216,7 @@ def _headers(rows: Sequence[Row], header: int | None, begins: int, place: int | 
     headers = [rows[header][0].lstrip("# "), *rows[header][1:]]
     while len(headers) > width and not headers[-1]:
         headers.pop()
-    if width == len(headers) + 1 and place and simple(headers[place - 1]) in DAY_HEADERS:
+    if place and place < width == len(headers) + 1 and _is_day_word(headers[place - 1]):
         # Some programs write row numbers without giving their column a header.
         headers.insert(0, "")
     return headers

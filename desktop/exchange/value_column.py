@@ -19,6 +19,9 @@ from desktop.exchange.number_tokens import (
 from desktop.exchange.table import Column
 from desktop.exchange.units import impossible, unit_in_name
 
+HALVES = ("upper", "lower")
+"""What the two columns made of a column of pairs have behind its name."""
+
 Outcome = float | Refusal | None
 """A value, why there is none, or None for a blank cell."""
 
@@ -90,9 +93,10 @@ def read_values(column: Column, decimal: DecimalMark | None, *, one_day: bool) -
 
     if not _is_of_pairs(read, counts):
         return (half(column.name, "", lambda token: in_unit(token, unit)),)
+    upper, lower = (f"{column.name} {word}" for word in HALVES)
     return (
-        half(f"{column.name} upper", column.name, lambda token: _of_pair(token, token.value)),
-        half(f"{column.name} lower", column.name, lambda token: _of_pair(token, token.second)),
+        half(upper, column.name, lambda token: _of_pair(token, token.value)),
+        half(lower, column.name, lambda token: _of_pair(token, token.second)),
     )
 
 

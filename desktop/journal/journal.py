@@ -145,10 +145,7 @@ class Journal:
             [float("nan") if entry.value is None else entry.value for entry in entries],
             [entry.kind for entry in entries],
             [entry.slot for entry in entries],
-            [
-                analysis.log.Span(span.first, span.last, span.kind, span.label)
-                for span in self.spans_of(measure)
-            ],
+            [analysis.log.Span(span.first, span.last, span.kind, span.label) for span in self.spans_of(measure)],
         )
 
     def analysis_changes(self, measure: int) -> list[analysis.log.Change]:

@@ -12,7 +12,7 @@ from analysis.questions.did_it_move import CLAIMS, FEWEST_AFTER, FEWEST_BEFORE
 from desktop.wording.cautions import CAUTION
 from desktop.wording.days import DayWords
 from desktop.wording.doubts import doubt_sentence
-from desktop.wording.numbers import Speech, chance_in_100, decimals_of
+from desktop.wording.numbers import Speech, chance_in_100, decimals_for
 
 NO_CAUSE = (
     "This compares days before and after. It cannot tell what caused a difference: "
@@ -61,7 +61,7 @@ def worded(review: Review) -> Review:
 def speech_of(review: Review) -> Speech:
     """How the review's numbers are said: with the digits its own values have."""
     values = review.points.values
-    return Speech(review.measure, decimals_of(values[~np.isnan(values)].tolist()))
+    return Speech(review.measure, decimals_for(values[~np.isnan(values)].tolist()))
 
 
 def day_words_of(review: Review) -> DayWords:
@@ -74,6 +74,11 @@ def outside_sentence(carried: Carried, days: int, speech: Speech) -> str:
     """How many periods are outside the carried fences, and how many would be by luck alone."""
     low, high = len(carried.below), len(carried.above)
     outside = low + high
+    if days == 1:
+        where = (
+            "is outside the old fences, " + ("high" if high else "low") if outside else "is inside the old fences"
+        )
+        return f"The one {speech.one} since {where}."
     if not outside:
         seen = f"None of the {speech.periods(days)} since is outside the old fences."
     else:
@@ -282,7 +287,7 @@ class _Teller:
         wants_less = aim == "less" or (aim == "none" and shift.estimate < 0)
         verb = "was" if shift.better_days == 1 else "were"
         return [
-            f"{shift.better_days} of {self.speech.periods(shift.days)} {verb} "
+            f"{shift.better_days} of {shift.days} {self.speech.many} {verb} "
             f"{'below' if wants_less else 'above'} the old middle."
         ]
 

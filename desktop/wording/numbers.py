@@ -22,6 +22,19 @@ def decimals_of(values: Iterable[float]) -> int:
     return _MOST_DECIMALS
 
 
+def decimals_for(values: Iterable[float]) -> int:
+    """Digits after the mark for what is said of these values: theirs, but no finer than the range is worth.
+
+    Averages of many readings have long tails of digits that say nothing.
+    """
+    listed = [value for value in values if math.isfinite(value)]
+    if not listed:
+        return 0
+    spread = max(listed) / 2 - min(listed) / 2
+    useful = 2 - math.floor(math.log10(spread)) if spread > 0 else _MOST_DECIMALS
+    return min(decimals_of(listed), max(0, useful - 1))
+
+
 def plain(value: float, decimals: int) -> str:
     """A number with at most this many digits after the mark, without trailing zeros."""
     if abs(value) >= 1e15:
@@ -103,6 +116,8 @@ class Speech:
         """The range of a difference: ``between 3 and 16 minutes more a day``."""
         if low >= 0 or high <= 0:
             near, far = sorted((abs(low), abs(high)))
+            if self.number(near) == self.number(far):
+                return f"about {self.sized(low)}{self.rate()}"
             return f"between {self.number(near)} and {self.sized(math.copysign(far, low + high))}{self.rate()}"
         return f"anywhere from {self.sized(low)} to {self.sized(high)}{self.rate()}"
 

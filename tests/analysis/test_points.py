@@ -157,5 +157,5 @@ def test_days_outside_a_chosen_baseline_are_in_no_number():
 
 
 def test_a_chosen_baseline_without_a_change_makes_one_after_stretch():
-    before, after = review(log_of([10] * 10 + [20] * 10), baseline=(FIRST_DAY, day(9))).stretches
+    _, after = review(log_of([10] * 10 + [20] * 10), baseline=(FIRST_DAY, day(9))).stretches
     assert (after.name, after.label, after.change, after.observations) == ("after", None, None, 10)

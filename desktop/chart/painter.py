@@ -1,0 +1,422 @@
+"""Draws a picture with a QPainter, in points or pixels alike: on screen, on the page, into a file.
+
+Each function paints one part into the rectangle it is given. A ``Frame`` says which days and values lie where.
+"""
+
+from __future__ import annotations
+
+from collections.abc import Iterable
+from dataclasses import dataclass
+
+import numpy as np
+from numpy.typing import NDArray
+from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
+from PySide6.QtGui import QBrush, QColor, QFont, QFontMetricsF, QPainter, QPen, QPolygonF
+
+from desktop.chart.look import Look
+from desktop.chart.picture import SHAPES, EndLabel, LanePart, Line, Picture, Side
+from desktop.chart.ticks import day_ticks, value_ticks
+
+LANE_LINES = 1.9
+"""Height of the lane, in lines of text."""
+
+BELOW_LINES = 3.6
+"""Height of the part below the plot: ticks, days, the bracket."""
+
+_TICK_STRIP = 0.7
+_DASHES = {
+    "fence": Qt.PenStyle.SolidLine,
+    "carried fence": Qt.PenStyle.DashLine,
+    "carried median": Qt.PenStyle.DashDotLine,
+}
+
+
+@dataclass(frozen=True)
+class Frame:
+    """Which part of a picture fills a rectangle."""
+
+    rect: QRectF
+    x0: float
+    x1: float
+    y0: float
+    y1: float
+
+    def x(self, day: float) -> float:
+        """The place across of a day number."""
+        return self.rect.left() + (day - self.x0) / (self.x1 - self.x0) * self.rect.width()
+
+    def y(self, value: float) -> float:
+        """The place up of a value."""
+        return self.rect.bottom() - (value - self.y0) / (self.y1 - self.y0) * self.rect.height()
+
+    @property
+    def day_width(self) -> float:
+        """The width of one day."""
+        return self.rect.width() / (self.x1 - self.x0)
+
+
+@dataclass(frozen=True)
+class Style:
+    """Inks and type.
+
+    Attributes:
+        look: the inks.
+        font: the plain face.
+        size: height of its letters, in the painter's unit.
+    """
+
+    look: Look
+    font: QFont
+    size: float
+
+    def face(self, *, bold: bool = False, italic: bool = False, part: float = 1.0) -> QFont:
+        """The face, bold or italic, at a part of its size."""
+        face = QFont(self.font)
+        face.setPixelSize(max(6, round(self.size * part)))
+        face.setBold(bold)
+        face.setItalic(italic)
+        return face
+
+    def side(self, side: Side, alpha: int = 255) -> QColor:
+        """The ink of the baseline or of the days after."""
+        return self.look.colour(side, alpha)
+
+
+def paint_plot(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:
+    """Bands, levels, changes, days and the values of days outside the fences."""
+    painter.save()
+    painter.setClipRect(frame.rect)
+    painter.setRenderHint(QPainter.RenderHint.Antialiasing)
+    _grid(painter, frame, style)
+    _spans(painter, frame, picture, style)
+    _bands(painter, frame, picture, style)
+    _levels(painter, frame, picture.lines, style)
+    painter.setPen(QPen(style.look.colour("ink"), style.size / 9))
+    for day in picture.uprights:
+        painter.drawLine(QLineF(frame.x(day), frame.rect.top(), frame.x(day), frame.rect.bottom()))
+    _days(painter, frame, picture, style)
+    _edge_words(painter, frame, picture, style)
+    painter.restore()
+
+
+def paint_lane(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture, style: Style) -> None:
+    """The lane above the plot: what each stretch and each named row of days is called."""
+    painter.save()
+    painter.setClipRect(rect)
+    painter.fillRect(rect, style.look.colour("lane"))
+    spans = [part for part in picture.lane if part.kind == "span"]
+    for part in picture.lane:
+        if part.kind in ("stretch", "change"):
+            room = _lane_room(part, spans, frame)
+            bold = part.kind == "change"
+            painter.setPen(style.look.colour("ink" if bold else "quiet"))
+            _fitted(painter, rect, frame, part.x0, room, part.text, style.face(bold=bold))
+            if bold:
+                painter.setPen(QPen(style.look.colour("ink"), style.size / 9))
+                painter.drawLine(QLineF(frame.x(part.x0), rect.top(), frame.x(part.x0), rect.bottom()))
+        elif part.kind == "span":
+            _hatched(painter, frame, part, rect, style)
+            painter.setPen(style.look.colour("quiet"))
+            _fitted(painter, rect, frame, part.x0, frame.x(part.x1), part.text, style.face(italic=True, part=0.9))
+    painter.restore()
+
+
+def paint_value_axis(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture, style: Style) -> None:
+    """Numbers at the left, and in words what they count and which end is more."""
+    painter.save()
+    face = style.face(part=0.92)
+    painter.setFont(face)
+    painter.setPen(style.look.colour("quiet"))
+    height = QFontMetricsF(face).height()
+    right = Qt.AlignmentFlag.AlignRight | Qt.AlignmentFlag.AlignVCenter
+    for value, text in _value_ticks(frame, style):
+        box = QRectF(rect.left(), frame.y(value) - height / 2, rect.width() - style.size * 0.5, height)
+        painter.drawText(box, right, text)
+    painter.setFont(style.face(italic=True, part=0.92))
+    painter.translate(rect.left() + height * 0.6, frame.rect.center().y())
+    painter.rotate(-90)
+    length = frame.rect.height()
+    box = QRectF(-length / 2, -height / 2, length, height)
+    sides = (Qt.AlignmentFlag.AlignLeft, Qt.AlignmentFlag.AlignHCenter, Qt.AlignmentFlag.AlignRight)
+    for side, words in zip(sides, picture.axis_words, strict=True):
+        painter.drawText(box, side | Qt.AlignmentFlag.AlignVCenter, words)
+    painter.restore()
+
+
+def value_axis_width(frame: Frame, style: Style) -> float:
+    """How wide the left axis must be for its numbers and its words."""
+    metrics = QFontMetricsF(style.face(part=0.92))
+    widest = max((metrics.horizontalAdvance(text) for _, text in _value_ticks(frame, style)), default=0.0)
+    return widest + metrics.height() * 1.3 + style.size
+
+
+def paint_end_labels(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture, style: Style) -> None:
+    """The levels' names with their numbers, at the right end of their lines and never over one another."""
+    painter.save()
+    height = QFontMetricsF(style.face()).height()
+    shown = [label for label in picture.end_labels if frame.y0 <= label.y <= frame.y1]
+    shown.sort(key=lambda label: (frame.y(label.y), label.strong))
+    for label, middle in zip(shown, _parted([frame.y(one.y) for one in shown], height, frame.rect), strict=True):
+        painter.setFont(style.face(bold=label.strong))
+        painter.setPen(style.side(label.side))
+        box = QRectF(rect.left() + style.size * 0.5, middle - height / 2, rect.width(), height)
+        painter.drawText(box, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, label.text)
+    painter.restore()
+
+
+def end_labels_width(labels: Iterable[EndLabel], style: Style) -> float:
+    """How wide the right side must be for these labels."""
+    metrics = QFontMetricsF(style.face(bold=True))
+    return max((metrics.horizontalAdvance(label.text) for label in labels), default=0.0) + style.size
+
+
+def paint_below(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture, style: Style) -> None:
+    """Under the plot: a tick for days blank, ill, away or late, the days, and where the new level began."""
+    painter.save()
+    painter.setRenderHint(QPainter.RenderHint.Antialiasing)
+    strip = style.size * _TICK_STRIP
+    painter.setPen(QPen(style.look.colour("quiet"), style.size / 12))
+    painter.drawLine(QLineF(frame.rect.left(), rect.top(), frame.rect.right(), rect.top()))
+    for tick in picture.ticks:
+        at = frame.x(tick.x)
+        if frame.rect.left() <= at <= frame.rect.right():
+            length = strip * (0.5 if tick.kind == "late" else 1.0)
+            painter.drawLine(QLineF(at, rect.top(), at, rect.top() + length))
+    face = style.face(part=0.92)
+    metrics = QFontMetricsF(face)
+    painter.setFont(face)
+    line = metrics.height()
+    widest = metrics.horizontalAdvance("28 Sep 2031")
+    for day, text in day_ticks(frame.x0, frame.x1, int(frame.rect.width() / widest)):
+        at, width = frame.x(day), metrics.horizontalAdvance(text)
+        left = min(max(at - width / 2, rect.left()), rect.right() - width)
+        painter.drawText(QRectF(left, rect.top() + strip, width + 2, line), Qt.AlignmentFlag.AlignLeft, text)
+    _bracket(painter, rect.top() + strip + line, frame, picture, style)
+    painter.restore()
+
+
+def _bracket(painter: QPainter, top: float, frame: Frame, picture: Picture, style: Style) -> None:
+    if picture.bracket is None or picture.bracket.x1 < frame.x0 or picture.bracket.x0 > frame.x1:
+        return
+    left = max(frame.x(picture.bracket.x0), frame.rect.left())
+    right = min(max(frame.x(picture.bracket.x1), left + 2), frame.rect.right())
+    up, down = top + style.size * 0.15, top + style.size * 0.6
+    painter.setPen(QPen(style.look.colour("ink"), style.size / 9))
+    painter.drawPolyline([QPointF(left, up), QPointF(left, down), QPointF(right, down), QPointF(right, up)])
+    face = style.face(part=0.92)
+    painter.setFont(face)
+    metrics = QFontMetricsF(face)
+    width = metrics.horizontalAdvance(picture.bracket.text)
+    begin = right + style.size * 0.5
+    if begin + width > frame.rect.right():
+        begin = max(left - style.size * 0.5 - width, frame.rect.left())
+    box = QRectF(begin, down - metrics.height() * 0.7, width + 2, metrics.height())
+    painter.drawText(box, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, picture.bracket.text)
+
+
+def _value_ticks(frame: Frame, style: Style) -> list[tuple[float, str]]:
+    return value_ticks(frame.y0, frame.y1, int(frame.rect.height() / (style.size * 3.2)))
+
+
+def _grid(painter: QPainter, frame: Frame, style: Style) -> None:
+    painter.setPen(QPen(style.look.colour("grid"), style.size / 14))
+    for value, _ in _value_ticks(frame, style):
+        painter.drawLine(QLineF(frame.rect.left(), frame.y(value), frame.rect.right(), frame.y(value)))
+
+
+def _spans(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:
+    face = style.face(italic=True, part=0.92)
+    line = QFontMetricsF(face).height()
+    for part in picture.lane:
+        if part.kind in ("span", "settling in"):
+            _hatched(painter, frame, part, frame.rect, style)
+        if part.kind == "settling in":
+            foot = QRectF(frame.rect.left(), frame.rect.bottom() - 1.4 * line, frame.rect.width(), line)
+            painter.setPen(style.look.colour("quiet"))
+            _fitted(painter, foot, frame, part.x0, frame.x(part.x1), part.text, face)
+
+
+def _hatched(painter: QPainter, frame: Frame, part: LanePart, rect: QRectF, style: Style) -> None:
+    left, right = frame.x(part.x0), frame.x(part.x1)
+    box = QRectF(left, rect.top(), right - left, rect.height()).intersected(rect)
+    painter.fillRect(box, QBrush(style.look.colour("quiet", 110), Qt.BrushStyle.BDiagPattern))
+
+
+def _bands(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:
+    for band in sorted(picture.bands, key=lambda one: one.inner):
+        alpha = style.look.inner_band if band.inner else style.look.band
+        left, right = frame.x(band.x0), frame.x(band.x1)
+        top, bottom = frame.y(band.y1), frame.y(band.y0)
+        painter.fillRect(QRectF(left, top, right - left, bottom - top), style.side(band.side, alpha))
+
+
+def _levels(painter: QPainter, frame: Frame, lines: Iterable[Line], style: Style) -> None:
+    for line in lines:
+        if line.role == "median":
+            pen = QPen(style.side(line.side), style.size / 4.2)
+            pen.setCapStyle(Qt.PenCapStyle.FlatCap)
+            if line.side == "after":
+                # A second line style, so that the two medians differ without colour.
+                pen.setDashPattern([6.0, 0.7])
+        else:
+            dashes = Qt.PenStyle.DotLine if line.role == "fence" and line.side == "after" else _DASHES[line.role]
+            pen = QPen(style.side(line.side), style.size / 11, dashes)
+        painter.setPen(pen)
+        painter.drawLine(QLineF(frame.x(line.x0), frame.y(line.y), frame.x(line.x1), frame.y(line.y)))
+
+
+def _days(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:
+    marks = picture.marks
+    seen = (marks.x >= frame.x0 - 1) & (marks.x <= frame.x1 + 1)
+    if not seen.any():
+        return
+    x = frame.rect.left() + (marks.x - frame.x0) / (frame.x1 - frame.x0) * frame.rect.width()
+    y = frame.rect.bottom() - (marks.y - frame.y0) / (frame.y1 - frame.y0) * frame.rect.height()
+    _joins(painter, x, y, marks.joined, seen, style)
+    one = frame.rect.width() / max(int(seen.sum()), 1)
+    radius = min(max(one * 0.4, style.size / 11), style.size / 3.1)
+    for place, name in enumerate(SHAPES):
+        chosen = seen & (marks.shape == place)
+        if chosen.any():
+            _shapes(painter, name, x[chosen], y[chosen], marks.is_zero[chosen], radius, style)
+    _value_labels(painter, frame, picture, x, y, radius, style)
+
+
+def _joins(
+    painter: QPainter,
+    x: NDArray[np.float64],
+    y: NDArray[np.float64],
+    joined: NDArray[np.bool_],
+    seen: NDArray[np.bool_],
+    style: Style,
+) -> None:
+    """Thin lines between neighbouring days, broken at every blank."""
+    painter.setPen(QPen(style.look.colour("quiet", 150), 1 if style.size > 9 else 0.5))
+    painter.setBrush(Qt.BrushStyle.NoBrush)
+    places = np.flatnonzero(seen)
+    breaks = np.flatnonzero(~joined[places])
+    for run in np.split(places, breaks):
+        if len(run) > 1:
+            painter.drawPolyline(QPolygonF([QPointF(x[at], y[at]) for at in run]))
+
+
+def _shapes(
+    painter: QPainter,
+    name: str,
+    x: NDArray[np.float64],
+    y: NDArray[np.float64],
+    is_zero: NDArray[np.bool_],
+    radius: float,
+    style: Style,
+) -> None:
+    """All marks of one shape; a counted zero is hollow."""
+    look = style.look
+    paper = QBrush(look.colour("paper"))
+    thin = max(radius * 0.45, 0.6)
+    for at_x, at_y, zero in zip(x.tolist(), y.tolist(), is_zero.tolist(), strict=True):
+        match name:
+            case "before":
+                colour = look.colour("before")
+                painter.setPen(QPen(colour, thin) if zero else QPen(look.colour("paper"), thin * 0.5))
+                painter.setBrush(paper if zero else QBrush(colour))
+                painter.drawEllipse(QPointF(at_x, at_y), radius, radius)
+            case "after":
+                colour = look.colour("after")
+                painter.setPen(QPen(colour, thin))
+                painter.setBrush(paper)
+                side = radius * (1.3 if zero else 1.8)
+                painter.drawRect(QRectF(at_x - side / 2, at_y - side / 2, side, side))
+            case "above" | "below":
+                _triangle(painter, at_x, at_y, radius * 1.55, up=name == "above", hollow=zero, style=style)
+            case "set aside":
+                painter.setPen(QPen(look.colour("ink"), thin))
+                for lean in (-radius, radius):
+                    painter.drawLine(QLineF(at_x - radius, at_y - lean, at_x + radius, at_y + lean))
+            case _:
+                painter.setPen(QPen(look.colour("quiet"), thin))
+                painter.setBrush(paper)
+                painter.drawEllipse(QPointF(at_x, at_y), radius * 0.85, radius * 0.85)
+
+
+def _triangle(painter: QPainter, x: float, y: float, size: float, *, up: bool, hollow: bool, style: Style) -> None:
+    tip = -size if up else size
+    ink = style.look.colour("ink")
+    painter.setPen(QPen(ink if hollow else style.look.colour("paper"), max(size * 0.2, 0.6)))
+    painter.setBrush(QBrush(style.look.colour("paper") if hollow else ink))
+    base = y - tip * 0.75
+    painter.drawPolygon(QPolygonF([QPointF(x, y + tip), QPointF(x - size, base), QPointF(x + size, base)]))
+
+
+def _value_labels(
+    painter: QPainter,
+    frame: Frame,
+    picture: Picture,
+    x: NDArray[np.float64],
+    y: NDArray[np.float64],
+    radius: float,
+    style: Style,
+) -> None:
+    """The values of days outside the fences; one that would touch another is left to its mark."""
+    face = style.face(bold=True, part=0.92)
+    metrics = QFontMetricsF(face)
+    painter.setFont(face)
+    painter.setPen(style.look.colour("ink"))
+    taken: list[QRectF] = []
+    # The farthest days first: where room is short, they keep their numbers.
+    middle = float(np.median(y))
+    for place in sorted(picture.marks.labels, key=lambda at: -abs(float(y[at]) - middle)):
+        text = picture.marks.labels[place]
+        width, height = metrics.horizontalAdvance(text) + 2, metrics.height() * 0.85
+        is_above = SHAPES[int(picture.marks.shape[place])] == "above"
+        offset = -(radius * 1.9 + height) if is_above else radius * 1.9
+        box = QRectF(float(x[place]) - width / 2, float(y[place]) + offset, width, height)
+        if box.top() < frame.rect.top():
+            box.moveTop(float(y[place]) + radius * 1.9)
+        if box.bottom() > frame.rect.bottom():
+            box.moveTop(float(y[place]) - radius * 1.9 - height)
+        box.moveLeft(min(max(box.left(), frame.rect.left()), frame.rect.right() - width))
+        if any(box.intersects(other) for other in taken):
+            continue
+        taken.append(box)
+        painter.drawText(box, Qt.AlignmentFlag.AlignCenter | Qt.TextFlag.TextDontClip, text)
+
+
+def _edge_words(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:
+    face = style.face(part=0.85)
+    metrics = QFontMetricsF(face)
+    painter.setFont(face)
+    heights = {"above": frame.rect.top() + 2, "below": frame.rect.bottom() - metrics.height() - 2}
+    for edge, text in picture.edge_words:
+        painter.setPen(style.side("after" if text.startswith("own") else "before"))
+        box = QRectF(frame.rect.left(), heights[edge], frame.rect.width() - style.size * 0.6, metrics.height())
+        painter.drawText(box, Qt.AlignmentFlag.AlignRight, text)
+        heights[edge] += metrics.height() if edge == "above" else -metrics.height()
+
+
+def _lane_room(part: LanePart, spans: Iterable[LanePart], frame: Frame) -> float:
+    """Where the words of a lane part must end: at its edge, or at the named days inside it."""
+    inside = [span.x0 for span in spans if part.x0 < span.x0 < part.x1]
+    return frame.x(min([part.x1, *inside]))
+
+
+def _fitted(painter: QPainter, rect: QRectF, frame: Frame, x0: float, end: float, text: str, face: QFont) -> None:
+    begin = max(frame.x(x0), frame.rect.left())
+    pad = QFontMetricsF(face).averageCharWidth()
+    box = QRectF(begin + pad, rect.top(), end - begin - 1.2 * pad, rect.height())
+    if box.width() < 3 * pad:
+        return
+    painter.setFont(face)
+    words = QFontMetricsF(face).elidedText(text, Qt.TextElideMode.ElideRight, box.width())
+    painter.drawText(box, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, words)
+
+
+def _parted(middles: list[float], height: float, rect: QRectF) -> list[float]:
+    """Places from top to bottom moved apart so that no two are nearer than a line, and all are inside."""
+    placed: list[float] = []
+    for middle in middles:
+        placed.append(max(middle, placed[-1] + height) if placed else max(middle, rect.top() + height / 2))
+    lowest = rect.bottom() - height / 2
+    for at in range(len(placed) - 1, -1, -1):
+        placed[at] = min(placed[at], lowest)
+        lowest = placed[at] - height
+    return placed

@@ -1,0 +1,93 @@
+"""The middle pane: the chart, what the keys or the mouse are on, and how a point is made."""
+
+from __future__ import annotations
+
+from typing import TYPE_CHECKING
+
+from PySide6.QtCore import Signal
+from PySide6.QtWidgets import QComboBox, QHBoxLayout, QLabel, QSizePolicy, QVBoxLayout, QWidget
+
+from analysis import Review
+from analysis.log import PERIODS, Period
+from desktop.chart.look import LIGHT, Look
+from desktop.chart.picture import Picture, empty_picture, picture_of
+from desktop.models.session import Session
+
+if TYPE_CHECKING:
+    from desktop.chart.plot import Chart
+
+PERIOD_WORDS: dict[Period, str] = {
+    "day": "each day",
+    "week": "each week",
+    "month": "each month",
+    "year": "each year",
+}
+
+
+class ChartPane(QWidget):
+    """Holds the chart's place until ``load_chart``: the days can be read before pyqtgraph is.
+
+    Signals:
+        period_chosen: a point is to be made of a day, a week, a month or a year.
+    """
+
+    period_chosen = Signal(str)
+
+    def __init__(self, parent: QWidget | None = None) -> None:
+        super().__init__(parent)
+        self.chart: Chart | None = None
+        self._look = LIGHT
+        self._picture: Picture | None = None
+        self._shown_for: tuple[int | None, str] | None = None
+        self._read_out = QLabel()
+        self._read_out.setSizePolicy(QSizePolicy.Policy.Ignored, QSizePolicy.Policy.Preferred)
+        self._read_out.setAccessibleName("Day on the chart")
+        self.periods = QComboBox()
+        self.periods.addItems([PERIOD_WORDS[period] for period in PERIODS])
+        self.periods.setAccessibleName("How a point is made")
+        self.periods.setToolTip("How a point is made")
+        self.periods.activated.connect(lambda place: self.period_chosen.emit(PERIODS[place]))
+        below = QHBoxLayout()
+        below.setContentsMargins(8, 2, 8, 6)
+        below.addWidget(self._read_out, 1)
+        below.addWidget(self.periods)
+        self._layout = QVBoxLayout(self)
+        self._layout.setContentsMargins(0, 0, 0, 0)
+        self._layout.setSpacing(0)
+        self._place = QWidget()
+        self._layout.addWidget(self._place, 1)
+        self._layout.addLayout(below)
+
+    def load_chart(self) -> None:
+        """Bring the chart in; reads pyqtgraph, which takes longer than the rest of the window."""
+        if self.chart is not None:
+            return
+        from desktop.chart.plot import Chart
+
+        self.chart = Chart()
+        self.chart.day_read.connect(self._read_out.setText)
+        self.chart.set_look(self._look)
+        self._layout.replaceWidget(self._place, self.chart)
+        self._place.deleteLater()
+        if self._picture is not None:
+            self.chart.show_picture(self._picture, keep_view=False)
+
+    def set_look(self, look: Look) -> None:
+        """Draw with other inks."""
+        self._look = look
+        if self.chart is not None:
+            self.chart.set_look(look)
+
+    def show_review(self, review: Review | None, session: Session) -> None:
+        """Draw a review of the session's measure."""
+        measure = session.current
+        if review is None or measure is None or not review.points.known.any():
+            self._picture = empty_picture(measure, session.today)
+        else:
+            self._picture = picture_of(review, session.journal, measure.id)
+        period = review.measure.period if review is not None else "day"
+        self.periods.setCurrentIndex(PERIODS.index(period))
+        shown_for = (session.measure, period)
+        if self.chart is not None:
+            self.chart.show_picture(self._picture, keep_view=shown_for == self._shown_for)
+        self._shown_for = shown_for

@@ -1,0 +1,193 @@
+"""The left pane: the days, typed one after the other."""
+
+from __future__ import annotations
+
+from typing import cast
+
+from PySide6.QtCore import QEvent, QModelIndex, QPersistentModelIndex, Qt, Signal
+from PySide6.QtGui import QFontMetrics, QGuiApplication, QKeyEvent, QKeySequence
+from PySide6.QtWidgets import (
+    QAbstractItemDelegate,
+    QAbstractItemView,
+    QHeaderView,
+    QLineEdit,
+    QStyledItemDelegate,
+    QStyleOptionViewItem,
+    QTableView,
+    QWidget,
+)
+
+from desktop.models.days_table import KIND_LETTERS, DaysTable
+
+_ROW_HEIGHT = 1.7
+"""Of a line of text; at least 24 pixels to press."""
+
+
+class DaysPane(QTableView):
+    """A digit starts typing, Enter keeps it and goes to the next day, Tab to the next measure.
+
+    Signals:
+        said: a sentence about what was just done or could not be done.
+    """
+
+    said = Signal(str)
+
+    def __init__(self, parent: QWidget | None = None) -> None:
+        super().__init__(parent)
+        self.setItemDelegate(_CellDelegate(self))
+        self.setEditTriggers(
+            QAbstractItemView.EditTrigger.AnyKeyPressed
+            | QAbstractItemView.EditTrigger.DoubleClicked
+            | QAbstractItemView.EditTrigger.EditKeyPressed
+        )
+        self.setTabKeyNavigation(True)
+        self.setShowGrid(False)
+        self.setFrameShape(self.Shape.NoFrame)
+        self.setHorizontalScrollMode(QAbstractItemView.ScrollMode.ScrollPerPixel)
+        self.verticalHeader().setSectionResizeMode(QHeaderView.ResizeMode.Fixed)
+        self.verticalHeader().setDefaultAlignment(Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter)
+        self.horizontalHeader().setHighlightSections(False)
+        self.horizontalHeader().setSectionsMovable(False)
+        self.setCornerButtonEnabled(False)
+        self.setAccessibleName("Days")
+        self._settle_sizes()
+
+    def show_days(self, model: DaysTable) -> None:
+        """Show the days of a journal, today in reach."""
+        self.setModel(model)
+        self._settle_sizes()
+        model.modelReset.connect(self._settle_sizes)
+        self.go_to_row(model.rowCount() - 1)
+
+    @property
+    def days(self) -> DaysTable:
+        """The model shown."""
+        return cast(DaysTable, self.model())
+
+    def go_to_row(self, row: int) -> None:
+        """Make a day current, in the measure that is current, and bring it into view."""
+        column = max(self.currentIndex().column(), 0)
+        self.setCurrentIndex(self.model().index(row, column))
+        self.scrollTo(self.currentIndex(), QAbstractItemView.ScrollHint.PositionAtBottom)
+
+    def go_to_column(self, column: int) -> None:
+        """Make a measure current, on the day that is current."""
+        self.setCurrentIndex(self.model().index(max(self.currentIndex().row(), 0), column))
+
+    def finish_typing(self) -> None:
+        """Keep what is in the cell being typed into, if any."""
+        if self.state() == QAbstractItemView.State.EditingState:
+            editor = self.indexWidget(self.currentIndex()) or self.viewport().findChild(QLineEdit)
+            if editor is not None:
+                self.commitData(editor)
+                super().closeEditor(editor, QAbstractItemDelegate.EndEditHint.NoHint)
+
+    def keyPressEvent(self, event: QKeyEvent) -> None:
+        """Enter goes down; Delete makes blank; r, i and a set the kind of day."""
+        harmless = Qt.KeyboardModifier.KeypadModifier | Qt.KeyboardModifier.ShiftModifier
+        is_plain = not event.modifiers() & ~harmless
+        is_note = self.days.measure(self.currentIndex().column()) is None
+        key, text = event.key(), event.text().lower()
+        can_change = bool(self.model().flags(self.currentIndex()) & Qt.ItemFlag.ItemIsEditable)
+        if self.state() == QAbstractItemView.State.EditingState:
+            # The editor has had its keys; one that it lets pass is not for the table.
+            event.accept()
+        elif key in (Qt.Key.Key_Return, Qt.Key.Key_Enter):
+            self._go_down()
+        elif key in (Qt.Key.Key_Delete, Qt.Key.Key_Backspace) and can_change:
+            self.days.clear(self.selectedIndexes())
+        elif is_plain and text in KIND_LETTERS and not is_note and can_change:
+            self.days.set_kind(self.selectedIndexes(), KIND_LETTERS[text])
+            self._go_down()
+        elif event.matches(QKeySequence.StandardKey.Paste) and can_change:
+            self.paste()
+        elif event.matches(QKeySequence.StandardKey.Copy):
+            self.copy()
+        else:
+            super().keyPressEvent(event)
+
+    def paste(self) -> None:
+        """Write a block from the clipboard, from the current cell on."""
+        text = QGuiApplication.clipboard().text()
+        if text.strip():
+            self.said.emit(self.days.paste(self.currentIndex(), text))
+
+    def copy(self) -> None:
+        """Put the selected block on the clipboard, columns parted by tabs."""
+        selection = self.selectionModel().selection()
+        if selection.isEmpty():
+            return
+        block = selection.at(0)
+        lines = [
+            "\t".join(
+                str(self.model().index(row, column).data(Qt.ItemDataRole.EditRole) or "")
+                for column in range(block.left(), block.right() + 1)
+            )
+            for row in range(block.top(), block.bottom() + 1)
+        ]
+        QGuiApplication.clipboard().setText("\n".join(lines))
+
+    def closeEditor(self, editor: QWidget, hint: QAbstractItemDelegate.EndEditHint) -> None:
+        """After Enter the next day is current, not the cell typed into."""
+        if hint == QAbstractItemDelegate.EndEditHint.SubmitModelCache:
+            super().closeEditor(editor, QAbstractItemDelegate.EndEditHint.NoHint)
+            self._go_down()
+        else:
+            super().closeEditor(editor, hint)
+
+    def changeEvent(self, event: QEvent) -> None:
+        """Follow the text size."""
+        super().changeEvent(event)
+        if event.type() == QEvent.Type.FontChange:
+            self._settle_sizes()
+
+    def _go_down(self) -> None:
+        at = self.currentIndex()
+        below = min(at.row() + 1, self.model().rowCount() - 1)
+        self.setCurrentIndex(self.model().index(below, at.column()))
+
+    def _settle_sizes(self) -> None:
+        metrics = QFontMetrics(self.font())
+        height = max(24, round(metrics.height() * _ROW_HEIGHT))
+        self.verticalHeader().setDefaultSectionSize(height)
+        pad = 3 * metrics.averageCharWidth() + 12
+        self.verticalHeader().setFixedWidth(metrics.horizontalAdvance("Wed 28 Mar") + pad)
+        if self.model() is None:
+            return
+        last = self.model().columnCount() - 1
+        for column in range(last):
+            title = str(self.model().headerData(column, Qt.Orientation.Horizontal) or "")
+            widest = max(metrics.horizontalAdvance(line) for line in [*title.split("\n"), "set aside"])
+            self.setColumnWidth(column, widest + 3 * metrics.averageCharWidth())
+        self.horizontalHeader().setStretchLastSection(True)
+        self.horizontalHeader().setMinimumSectionSize(metrics.averageCharWidth() * 6)
+
+    def set_paper(self, paper: str) -> None:
+        """Give titles and days the paper of the cells, without the style's raised edges."""
+        flat = f"QHeaderView, QHeaderView::section {{ background: {paper}; border: none; padding: 0 6px; }}"
+        self.setStyleSheet(f"QTableCornerButton::section {{ background: {paper}; border: none; }}")
+        self.horizontalHeader().setStyleSheet(flat)
+        self.verticalHeader().setStyleSheet(flat)
+
+    @property
+    def wanted_width(self) -> int:
+        """Wide enough for the days, every measure and a short note."""
+        measures = sum(self.columnWidth(column) for column in range(self.model().columnCount() - 1))
+        note = QFontMetrics(self.font()).averageCharWidth() * 9
+        return self.verticalHeader().width() + measures + note + self.verticalScrollBar().sizeHint().width()
+
+
+class _CellDelegate(QStyledItemDelegate):
+    """A plain line of text as editor: the model reads it, in any locale alike."""
+
+    def createEditor(
+        self, parent: QWidget, option: QStyleOptionViewItem, index: QModelIndex | QPersistentModelIndex
+    ) -> QWidget:
+        editor = QLineEdit(parent)
+        editor.setFrame(False)
+        model = cast(DaysTable, index.model())
+        is_note = model.measure(index.column()) is None
+        editor.setAlignment(Qt.AlignmentFlag.AlignLeft if is_note else Qt.AlignmentFlag.AlignRight)
+        editor.setAccessibleName(str(index.data(Qt.ItemDataRole.AccessibleTextRole) or ""))
+        editor.setMaxLength(2000 if is_note else 60)
+        return editor

@@ -1,0 +1,462 @@
+"""The window: the start screen or an open journal, and one method for each command."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from datetime import date, datetime, timedelta
+from pathlib import Path
+
+from PySide6.QtCore import QSettings, Qt, QTimer
+from PySide6.QtGui import QCloseEvent
+from PySide6.QtWidgets import QApplication, QDialog, QFileDialog, QMainWindow, QMessageBox, QStackedWidget, QWidget
+
+from analysis.log import Period
+from desktop.edits.changes import edit_change, mark_change, remove_change
+from desktop.edits.days import put_back, set_aside
+from desktop.edits.measures import add_measures
+from desktop.errors import DayfenceError, StorageError
+from desktop.models.days_table import DaysTable, Unlikely
+from desktop.models.ready_made import make_sample, new_person
+from desktop.models.session import Session
+from desktop.screens.bring_in_dialog import BringInDialog, read_with_questions
+from desktop.screens.days_pane import DaysPane
+from desktop.screens.dialogs import ChangeDialog, MeasureDialog, ask_day, ask_if_right, ask_reason
+from desktop.screens.menus import Menus
+from desktop.screens.start_screen import StartScreen
+from desktop.screens.status_line import trouble_sentence
+from desktop.screens.theme import ThemeName, apply_theme, is_dark
+from desktop.screens.workspace import Workspace
+from desktop.storage.store import Store
+from desktop.wording.help import ABOUT, KEYS
+from desktop.wording.numbers import count
+from desktop.wording.problems import problem_sentence
+
+JOURNAL_ENDING = ".dayfence"
+_TEXT_SIZES = (100, 125, 150, 175, 200)
+_CLOCK_LOOK = 60_000
+"""Milliseconds between two looks at the calendar."""
+
+
+class MainWindow(QMainWindow):
+    """Everything on screen around one open journal, or the start screen without one."""
+
+    def __init__(
+        self, folder: Path, *, now: Callable[[], datetime] = datetime.now, parent: QWidget | None = None
+    ) -> None:
+        """A window that keeps its own journal and its settings in ``folder``."""
+        super().__init__(parent)
+        self.folder = folder
+        self.session: Session | None = None
+        self._now = now
+        self._settings = QSettings(str(folder / "settings.ini"), QSettings.Format.IniFormat)
+        self.setWindowTitle("Dayfence")
+        self.start_screen = StartScreen()
+        self.workspace = Workspace()
+        self._pages = QStackedWidget()
+        self._pages.addWidget(self.start_screen)
+        self._pages.addWidget(self.workspace)
+        self.setCentralWidget(self._pages)
+        self._menus = Menus(self)
+        self._connect()
+        self._clock = QTimer(self)
+        self._clock.timeout.connect(self._look_at_calendar)
+        self._clock.start(_CLOCK_LOOK)
+        self.resize(1360, 820)
+        self._restore()
+        self._apply_theme()
+        self._follow_session()
+
+    # Opening and starting.
+
+    @property
+    def own_journal(self) -> Path:
+        """Where the person's own journal is, made or not."""
+        return self.folder / f"journal{JOURNAL_ENDING}"
+
+    def open_own(self) -> None:
+        """Open the person's own journal when there is one; else the start screen stays."""
+        if self.own_journal.exists():
+            self.open_journal(self.own_journal)
+
+    def open_journal(self, path: Path) -> bool:
+        """Open a journal in place of the one that is open; says so when it cannot be."""
+        if self.session is not None and self.session.path == path:
+            return True
+        if not self._let_go():
+            return False
+        try:
+            store = Store.open(path, clock=self._now)
+        except StorageError as error:
+            self._warn(error)
+            self._follow_session()
+            return False
+        self._take(store)
+        return True
+
+    def open_sample(self) -> None:
+        """Open the sample journal, making it first where there is none."""
+        path = self.folder / f"sample{JOURNAL_ENDING}"
+        if not path.exists():
+            try:
+                make_sample(path, self._now)
+            except StorageError as error:
+                self._warn(error)
+                return
+        self.open_journal(path)
+
+    def start_log(self) -> None:
+        """Ask what to log, and begin: in the open journal, or in a new one of the person's own."""
+        dialog = MeasureDialog(self, first=self.session is None)
+        if dialog.exec() != QDialog.DialogCode.Accepted:
+            return
+        session = self.session or self._start_journal(self.own_journal)
+        if session is None:
+            return
+        edit = add_measures(session.journal, session.ids, dialog.measures)
+        session.do(edit)
+        self.show_measure(max(session.journal.measures) - len(edit.changes) + 1)
+        self.go_to_today()
+
+    def new_journal(self) -> None:
+        """Start another journal in a file of the person's choice."""
+        name, _ = QFileDialog.getSaveFileName(
+            self, "New journal", str(self.folder), f"Journals (*{JOURNAL_ENDING})"
+        )
+        if name:
+            path = Path(name) if name.endswith(JOURNAL_ENDING) else Path(name + JOURNAL_ENDING)
+            if self._let_go() and self._start_journal(path) is not None:
+                self.start_log()
+            self._follow_session()
+
+    def open_file(self) -> None:
+        """Open a journal from a file of the person's choice."""
+        name, _ = QFileDialog.getOpenFileName(
+            self, "Open a journal", str(self.folder), f"Journals (*{JOURNAL_ENDING});;All files (*)"
+        )
+        if name:
+            self.open_journal(Path(name))
+
+    def bring_in_table(self) -> None:
+        """Bring in a table from a file of the person's choice."""
+        name, _ = QFileDialog.getOpenFileName(
+            self, "Bring in a table", str(Path.home()), "Tables (*.csv *.tsv *.txt);;All files (*)"
+        )
+        if name:
+            self.bring_in_file(Path(name))
+
+    def bring_in_file(self, path: Path) -> None:
+        """Bring in a table; without an open journal a new one is started for it."""
+        reading = read_with_questions(self, path)
+        if reading is None:
+            return
+        session = self.session or self._start_journal(self.own_journal)
+        if session is None:
+            return
+        dialog = BringInDialog(path, reading, session, self)
+        if dialog.exec() != QDialog.DialogCode.Accepted or dialog.brought is None:
+            return
+        brought = dialog.brought
+        if brought.measures:
+            self.show_measure(brought.measures[0].id)
+        self.say(
+            f"{count(brought.added, 'value')} brought in, {brought.replaced} replaced, "
+            f"{brought.untouched} there already."
+        )
+
+    # The log.
+
+    def mark_change(self) -> None:
+        """Mark a change on the current day."""
+        session = self.session
+        if session is None:
+            return
+        dialog = ChangeDialog(self._current_day(session), session.journal.columns(), self)
+        if dialog.exec() == QDialog.DialogCode.Accepted:
+            chosen = dialog.chosen
+            edit = mark_change(
+                session.journal,
+                session.ids,
+                chosen.day,
+                chosen.label,
+                settle_days=chosen.settle_days,
+                measures=chosen.measures,
+            )
+            session.do(edit)
+
+    def edit_change(self, number: int) -> None:
+        """Edit a change by its id."""
+        session = self.session
+        if session is None:
+            return
+        change = session.journal.changes[number]
+        dialog = ChangeDialog(change.day, session.journal.columns(), self, change)
+        if dialog.exec() == QDialog.DialogCode.Accepted:
+            session.do(edit_change(session.journal, dialog.chosen))
+
+    def remove_change(self, number: int) -> None:
+        """Take a change away by its id; Undo puts it back."""
+        if self.session is not None:
+            self.session.do(remove_change(self.session.journal, number))
+
+    def set_day_aside(self) -> None:
+        """Set the current day aside with a reason, or put it back."""
+        session = self.session
+        if session is None:
+            return
+        index = self.workspace.days.currentIndex()
+        measure = self.workspace.days.days.measure(index.column()) if index.isValid() else None
+        day = self._current_day(session)
+        entry = session.journal.entry(measure.id, day) if measure is not None else None
+        if measure is None or entry is None or entry.value is None:
+            self.say("There is no value on this day to set aside.")
+        elif entry.kind == "set aside":
+            session.do(put_back(session.journal, measure.id, day))
+        elif (reason := ask_reason(self)) is not None:
+            session.do(set_aside(session.journal, measure.id, day, reason))
+
+    def go_to_today(self) -> None:
+        """Make today current."""
+        if self.session is not None:
+            self._go_to(self.session.today)
+
+    def go_to_day(self) -> None:
+        """Ask for a day and make it current; the table begins earlier where it must."""
+        session = self.session
+        if session is None:
+            return
+        day = ask_day(self, "Go to a day", self._current_day(session))
+        if day is not None:
+            self.workspace.days.days.show_from(day - timedelta(7))
+            self._go_to(min(day, session.today))
+
+    def undo(self) -> None:
+        """Take back the last act."""
+        if self.session is not None:
+            self.session.undo()
+
+    def redo(self) -> None:
+        """Do the act last taken back again."""
+        if self.session is not None:
+            self.session.redo()
+
+    # The view.
+
+    def load_chart(self) -> None:
+        """Bring the chart in, once the days are on screen."""
+        self.workspace.chart_pane.load_chart()
+
+    def show_measure(self, measure: int) -> None:
+        """Put a measure on the chart and under the hand that types."""
+        if self.session is not None:
+            self.session.choose_measure(measure)
+            self.workspace.days.go_to_column(self.workspace.days.days.column(measure))
+
+    def choose_period(self, period: Period) -> None:
+        """Make a point of a day, a week, a month or a year."""
+        if self.session is not None:
+            self.session.choose_period(period)
+
+    def show_whole_chart(self) -> None:
+        """Bring every day into view."""
+        if self.workspace.chart_pane.chart is not None:
+            self.workspace.chart_pane.chart.show_all()
+
+    def set_theme(self, theme: ThemeName) -> None:
+        """Light, dark, or as the computer is set."""
+        self._settings.setValue("theme", theme)
+        self._apply_theme()
+
+    def larger_text(self) -> None:
+        """One step larger, up to twice the plain size."""
+        larger = [size for size in _TEXT_SIZES if size > self.text_percent]
+        self._set_text_size(min(larger, default=_TEXT_SIZES[-1]))
+
+    def smaller_text(self) -> None:
+        """One step smaller, down to the plain size."""
+        smaller = [size for size in _TEXT_SIZES if size < self.text_percent]
+        self._set_text_size(max(smaller, default=_TEXT_SIZES[0]))
+
+    @property
+    def text_percent(self) -> int:
+        """The size of text in force."""
+        stored = str(self._settings.value("text", ""))
+        return int(stored) if stored.isdecimal() and int(stored) in _TEXT_SIZES else _TEXT_SIZES[0]
+
+    @property
+    def theme(self) -> ThemeName:
+        """The theme in force."""
+        stored = str(self._settings.value("theme", ""))
+        return "light" if stored == "light" else "dark" if stored == "dark" else "system"
+
+    def say(self, sentence: str) -> None:
+        """Say something in the status line."""
+        self.workspace.status.say(sentence)
+
+    def show_keys(self) -> None:
+        """List the keys."""
+        QMessageBox.information(self, "Keys", KEYS)
+
+    def show_about(self) -> None:
+        """Version, caution and notices."""
+        QMessageBox.about(self, "About Dayfence", ABOUT)
+
+    def closeEvent(self, event: QCloseEvent) -> None:
+        """Write what is left; ask before leaving something that could not be written."""
+        if not self._let_go():
+            event.ignore()
+            return
+        self._settings.setValue("geometry", self.saveGeometry())
+        self._settings.setValue("panes", self.workspace.panes.saveState())
+        self._settings.sync()
+        event.accept()
+
+    # Inside.
+
+    def _connect(self) -> None:
+        self.start_screen.log_wanted.connect(self.start_log)
+        self.start_screen.table_wanted.connect(self.bring_in_table)
+        self.start_screen.sample_wanted.connect(self.open_sample)
+        self.workspace.days.said.connect(self.say)
+        self.workspace.chart_pane.period_chosen.connect(self.choose_period)
+        self.workspace.status.try_again_wanted.connect(self._try_again)
+        self.workspace.status.give_up_wanted.connect(self._give_up)
+
+    def _start_journal(self, path: Path) -> Session | None:
+        try:
+            store = Store.create(path, new_person(), clock=self._now)
+        except StorageError as error:
+            self._warn(error)
+            return None
+        return self._take(store)
+
+    def _take(self, store: Store) -> Session:
+        """Show a store's journal; no other is open."""
+        session = Session(store, now=self._now, parent=self)
+        self.session = session
+        table = DaysTable(session)
+        table.unread.connect(self.say)
+        # Queued: the question must not stand inside the editor's own commit.
+        table.unlikely.connect(self._ask_unlikely, Qt.ConnectionType.QueuedConnection)
+        session.edited.connect(self._after_edit)
+        session.saved.connect(self._follow_session)
+        session.save_failed.connect(self._follow_session)
+        session.measure_chosen.connect(self._follow_session)
+        session.reviewed.connect(self._show_review)
+        self._apply_theme()
+        self.workspace.days.show_days(table)
+        self.workspace.days.selectionModel().currentColumnChanged.connect(self._follow_column)
+        self._pages.setCurrentWidget(self.workspace)
+        if self._settings.value("panes") is None:
+            self.workspace.fit_days()
+        self._follow_session()
+        session.make_review()
+        self.workspace.days.setFocus()
+        return session
+
+    def _let_go(self) -> bool:
+        """Close the open journal; False when the person would rather keep it open."""
+        session = self.session
+        if session is None:
+            return True
+        self.workspace.days.finish_typing()
+        session.wait_until_written()
+        QApplication.processEvents()
+        if session.trouble is not None:
+            sentence = f"{trouble_sentence(session.trouble)}\n\nLeave without what is not saved?"
+            if QMessageBox.question(self, "Dayfence", sentence) != QMessageBox.StandardButton.Yes:
+                return False
+        self.session = None
+        self.workspace.days.setModel(None)
+        session.close()
+        session.deleteLater()
+        return True
+
+    def _follow_session(self) -> None:
+        """Make titles, menus and the status line say what is open."""
+        self._menus.follow()
+        if self.session is None:
+            self._pages.setCurrentWidget(self.start_screen)
+        else:
+            self.workspace.show_session(self.session)
+
+    def _after_edit(self) -> None:
+        self.say("")
+        self._follow_session()
+
+    def _show_review(self) -> None:
+        if self.session is not None:
+            self.workspace.show_review(self.session)
+            self._menus.follow()
+
+    def _try_again(self) -> None:
+        if self.session is not None:
+            self.session.try_again()
+            self._follow_session()
+
+    def _give_up(self) -> None:
+        if self.session is not None:
+            try:
+                self.session.give_up_unsaved()
+            except StorageError as error:
+                self._warn(error)
+            self._follow_session()
+
+    def _ask_unlikely(self, unlikely: Unlikely) -> None:
+        """A number far from what this measure usually is: ask, and keep it when it is right."""
+        if self.session is None:
+            return
+        days = self.workspace.days
+        measure = self.session.journal.measures[unlikely.cell.measure]
+        if ask_if_right(self, measure, unlikely.value, unlikely.cell.day):
+            days.days.keep(unlikely.cell, unlikely.value, unlikely.text)
+            return
+        index = days.days.index(days.days.row(unlikely.cell.day), days.days.column(measure.id))
+        days.setCurrentIndex(index)
+        days.edit(index)
+
+    def _follow_column(self) -> None:
+        """The measure being typed is the one on the chart."""
+        if self.session is not None and self.workspace.days.model() is not None:
+            measure = self.workspace.days.days.measure(self.workspace.days.currentIndex().column())
+            if measure is not None:
+                self.session.choose_measure(measure.id)
+
+    def _go_to(self, day: date) -> None:
+        self.workspace.days.go_to_row(self.workspace.days.days.row(day))
+        self.workspace.days.setFocus()
+
+    def _current_day(self, session: Session) -> date:
+        index = self.workspace.days.currentIndex()
+        return self.workspace.days.days.day(index.row()) if index.isValid() else session.today
+
+    def _set_text_size(self, percent: int) -> None:
+        self._settings.setValue("text", percent)
+        self._apply_theme()
+
+    def _apply_theme(self) -> None:
+        app = QApplication.instance()
+        assert isinstance(app, QApplication)
+        look = apply_theme(app, self.theme, self.text_percent)
+        self.workspace.set_face(app.font())
+        self.start_screen.set_face(app.font())
+        self.workspace.days.set_paper(look.paper)
+        self.workspace.chart_pane.set_look(look)
+        self.workspace.findings.set_dark(is_dark(self.theme))
+        model = self.workspace.days.model()
+        if isinstance(model, DaysTable):
+            model.quiet_colour = look.colour("quiet")
+
+    def _restore(self) -> None:
+        geometry, panes = self._settings.value("geometry"), self._settings.value("panes")
+        if geometry is not None:
+            self.restoreGeometry(geometry)
+        if panes is not None:
+            self.workspace.panes.restoreState(panes)
+
+    def _look_at_calendar(self) -> None:
+        """After midnight a new today is there, but not under someone who is typing."""
+        if self.session is not None and self.workspace.days.state() != DaysPane.State.EditingState:
+            self.workspace.days.days.start_today()
+
+    def _warn(self, error: DayfenceError) -> None:
+        QMessageBox.warning(self, "Dayfence", problem_sentence(error))

@@ -1,0 +1,135 @@
+"""The menus: every command with its keys. Each calls one method of the window."""
+
+from __future__ import annotations
+
+from collections.abc import Callable
+from functools import partial
+from typing import TYPE_CHECKING
+
+from PySide6.QtGui import QAction, QActionGroup, QKeySequence
+from PySide6.QtWidgets import QMenu
+
+from analysis.log import PERIODS
+from desktop.screens.chart_pane import PERIOD_WORDS
+from desktop.wording.acts import act_phrase
+from desktop.wording.days import full_day
+
+if TYPE_CHECKING:
+    from desktop.screens.main_window import MainWindow
+
+Keys = QKeySequence.StandardKey
+
+
+class Menus:
+    """Fills the window's menu bar and keeps it in step with the open journal."""
+
+    def __init__(self, window: MainWindow) -> None:
+        self._window = window
+        bar = window.menuBar()
+        file, edit, log, view, help_menu = map(bar.addMenu, ("&File", "&Edit", "&Log", "&View", "&Help"))
+        self._fill_file(file)
+        self._fill_edit(edit)
+        self._fill_log(log)
+        self._fill_view(view)
+        _add(help_menu, "&Keys", window.show_keys, Keys.HelpContents)
+        _add(help_menu, "&About Dayfence", window.show_about)
+
+    def follow(self) -> None:
+        """Offer what can be done with the journal as it stands."""
+        session = self._window.session
+        can_change = session is not None and not session.read_only
+        for action in self._writing:
+            action.setEnabled(can_change)
+        for action in self._reading:
+            action.setEnabled(session is not None)
+        undoable, redoable = (session.undoable, session.redoable) if session else (None, None)
+        for action, step, word in ((self._undo, undoable, "&Undo"), (self._redo, redoable, "&Redo")):
+            action.setEnabled(step is not None)
+            phrase = act_phrase(step, session.journal) if step is not None and session is not None else ""
+            action.setText(f"{word}: {phrase}" if phrase else word)
+        if session is not None and session.review is not None:
+            self._periods[PERIODS.index(session.review.measure.period)].setChecked(True)
+
+    def _fill_file(self, file: QMenu) -> None:
+        window = self._window
+        _add(file, "&New journal…", window.new_journal, Keys.New)
+        _add(file, "&Open a journal…", window.open_file, Keys.Open)
+        _add(file, "Open the &sample journal", window.open_sample)
+        file.addSeparator()
+        _add(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")
+        file.addSeparator()
+        _add(file, "&Quit", window.close, Keys.Quit)
+
+    def _fill_edit(self, edit: QMenu) -> None:
+        window = self._window
+        self._undo = _add(edit, "&Undo", window.undo, Keys.Undo)
+        self._redo = _add(edit, "&Redo", window.redo, "Ctrl+Shift+Z")
+        edit.addSeparator()
+        self._reading = [_add(edit, "&Copy days", window.workspace.days.copy)]
+        self._writing = [_add(edit, "&Paste days", window.workspace.days.paste)]
+
+    def _fill_log(self, log: QMenu) -> None:
+        window = self._window
+        self._writing += [
+            _add(log, "&Add a measure…", window.start_log, "Ctrl+Shift+A"),
+            _add(log, "&Mark a change…", window.mark_change, "Ctrl+M"),
+            _add(log, "&Set the day aside, or put it back…", window.set_day_aside, "Ctrl+D"),
+        ]
+        changes = log.addMenu("&Changes")
+        changes.aboutToShow.connect(partial(self._list_changes, changes))
+        log.addSeparator()
+        self._reading += [
+            changes.menuAction(),
+            _add(log, "Go to &today", window.go_to_today, "Ctrl+T"),
+            _add(log, "&Go to a day…", window.go_to_day, "Ctrl+G"),
+        ]
+
+    def _fill_view(self, view: QMenu) -> None:
+        window = self._window
+        measures = view.addMenu("&Measure")
+        measures.aboutToShow.connect(partial(self._list_measures, measures))
+        group = QActionGroup(window)
+        for place, period in enumerate(PERIODS, start=1):
+            action = _add(
+                view, PERIOD_WORDS[period].capitalize(), partial(window.choose_period, period), f"Ctrl+{place}"
+            )
+            action.setCheckable(True)
+            group.addAction(action)
+        self._periods = group.actions()
+        whole = _add(view, "&Whole chart", window.show_whole_chart, "Ctrl+0")
+        self._reading += [measures.menuAction(), *self._periods, whole]
+        view.addSeparator()
+        themes = view.addMenu("&Theme")
+        _add(themes, "As the computer is set", partial(window.set_theme, "system"))
+        _add(themes, "Light", partial(window.set_theme, "light"))
+        _add(themes, "Dark", partial(window.set_theme, "dark"))
+        _add(view, "&Larger text", window.larger_text, "Ctrl++")
+        _add(view, "S&maller text", window.smaller_text, "Ctrl+-")
+
+    def _list_changes(self, menu: QMenu) -> None:
+        menu.clear()
+        session = self._window.session
+        changes = sorted(session.journal.changes.values(), key=lambda one: one.day) if session else []
+        if not changes:
+            menu.addAction("No change is marked yet").setEnabled(False)
+        for change in changes:
+            one = menu.addMenu(f"{full_day(change.day)}: {change.label or 'no label'}")
+            _add(one, "Edit…", partial(self._window.edit_change, change.id))
+            _add(one, "Remove", partial(self._window.remove_change, change.id))
+
+    def _list_measures(self, menu: QMenu) -> None:
+        menu.clear()
+        session = self._window.session
+        for measure in session.journal.columns() if session else []:
+            action = _add(menu, measure.title, partial(self._window.show_measure, measure.id))
+            action.setCheckable(True)
+            action.setChecked(session is not None and measure.id == session.measure)
+
+
+def _add(menu: QMenu, text: str, do: Callable[[], object], keys: Keys | str | None = None) -> QAction:
+    action = menu.addAction(text)
+    if keys is not None:
+        action.setShortcut(QKeySequence(keys))
+    # Qt would hand the check mark on to the command.
+    action.triggered.connect(lambda: do())
+    return action

@@ -1,0 +1,77 @@
+"""The three panes of an open journal: type, see, read; above them whose log and which measure."""
+
+from __future__ import annotations
+
+from PySide6.QtCore import Qt
+from PySide6.QtGui import QFont, QFontInfo
+from PySide6.QtWidgets import QHBoxLayout, QLabel, QSplitter, QVBoxLayout, QWidget
+
+from desktop.models.session import Session
+from desktop.screens.chart_pane import ChartPane
+from desktop.screens.days_pane import DaysPane
+from desktop.screens.findings_pane import FindingsPane
+from desktop.screens.status_line import StatusLine
+
+_LEAST_WIDTHS = (200, 280, 240)
+_FIRST_WIDTHS = (350, 660, 350)
+_TITLE_PART = 1.35
+
+
+class Workspace(QWidget):
+    """Days, chart, findings, and the status line."""
+
+    def __init__(self, parent: QWidget | None = None) -> None:
+        super().__init__(parent)
+        self.days = DaysPane()
+        self.chart_pane = ChartPane()
+        self.findings = FindingsPane()
+        self.status = StatusLine()
+        self._title, self._subtitle = QLabel(), QLabel()
+        top = QHBoxLayout()
+        top.setContentsMargins(14, 8, 14, 6)
+        top.setSpacing(14)
+        top.addWidget(self._title, 0, Qt.AlignmentFlag.AlignBaseline)
+        top.addWidget(self._subtitle, 1, Qt.AlignmentFlag.AlignBaseline)
+        self.panes = QSplitter(Qt.Orientation.Horizontal)
+        self.panes.setChildrenCollapsible(False)
+        self.panes.setHandleWidth(7)
+        for pane, least in zip((self.days, self.chart_pane, self.findings), _LEAST_WIDTHS, strict=True):
+            pane.setMinimumWidth(least)
+            self.panes.addWidget(pane)
+        self.panes.setSizes(list(_FIRST_WIDTHS))
+        self.panes.setStretchFactor(1, 1)
+        layout = QVBoxLayout(self)
+        layout.setContentsMargins(0, 0, 0, 0)
+        layout.setSpacing(0)
+        layout.addLayout(top)
+        layout.addWidget(self.panes, 1)
+        layout.addWidget(self.status)
+
+    def fit_days(self) -> None:
+        """Give the days the room their measures need, up to a third of the window."""
+        whole = sum(self.panes.sizes()) or sum(_FIRST_WIDTHS)
+        days = min(self.days.wanted_width, whole // 3)
+        findings = min(_FIRST_WIDTHS[2], whole // 3)
+        self.panes.setSizes([days, whole - days - findings, findings])
+
+    def show_session(self, session: Session) -> None:
+        """Say whose log and which measure it is, and how things stand."""
+        measure = session.current
+        self._title.setText(measure.title if measure else "No measure yet")
+        unit = measure.unit if measure else ""
+        if measure is not None and unit and measure.kind in ("amount", "count"):
+            unit = f"{unit} a day"
+        self._subtitle.setText("  ·  ".join(part for part in (unit, session.journal.person.name) if part))
+        self.status.show_session(session)
+
+    def show_review(self, session: Session) -> None:
+        """Draw and tell the session's review."""
+        self.findings.show_review(session.review)
+        self.chart_pane.show_review(session.review, session)
+
+    def set_face(self, face: QFont) -> None:
+        """Follow the size of text."""
+        largest = QFont(face)
+        largest.setPixelSize(round(QFontInfo(face).pixelSize() * _TITLE_PART))
+        largest.setBold(True)
+        self._title.setFont(largest)
