@@ -14,6 +14,8 @@ from typing import Literal
 from analysis.log import Measure
 from analysis.points import Points
 from analysis.questions.did_it_move import Sureness
+from analysis.questions.is_it_so_still import StillWord
+from analysis.questions.steadier import SpreadWord
 
 Direction = Literal["more", "less", "none"]
 
@@ -158,6 +160,47 @@ class Goal:
 
 
 @dataclass(frozen=True)
+class Still:
+    """What became of the move, and the median of the last 14 periods."""
+
+    state: StillWord
+    last_14: float | None
+
+
+@dataclass(frozen=True)
+class SpreadChange:
+    """Whether the days lie closer to their middle than before, and the chance by luck."""
+
+    word: SpreadWord
+    p: float
+
+
+@dataclass(frozen=True)
+class Slope:
+    """Change a period inside each stretch, in the measure's unit; the chance by luck of the one before."""
+
+    before: float | None
+    after: float | None
+    p_before: float | None
+
+
+@dataclass(frozen=True)
+class WeekdayRhythm:
+    """The chance by luck of weekends' difference from weekdays, and whether it was taken off."""
+
+    p: float
+    used: bool
+
+
+@dataclass(frozen=True)
+class Switches:
+    """With how many of the changes the level moved, to and fro."""
+
+    moved: int
+    of: int
+
+
+@dataclass(frozen=True)
 class StillNeeded:
     """Further logged days that would show a move of ``for_amount`` in 80 of 100 logs.
 
@@ -200,14 +243,14 @@ class Answer:
     sureness: Sureness | None = None
     direction: Direction | None = None
     since: Since | None = None
-    still: None = None
-    spread_change: None = None
-    slope: None = None
+    still: Still | None = None
+    spread_change: SpreadChange | None = None
+    slope: Slope | None = None
     how_often: HowOften | None = None
     how_much: HowMuch | None = None
     goal: Goal | None = None
     carry_over: float | None = None
-    weekday_rhythm: None = None
+    weekday_rhythm: WeekdayRhythm | None = None
     season: None = None
     bound: float | None = None
     still_needed: StillNeeded | None = None
@@ -242,7 +285,7 @@ class Review:
     answer: Answer
     points: Points
     doubts: tuple[Doubt, ...] = ()
-    switches: None = None
+    switches: Switches | None = None
     comparisons: tuple[Comparison, ...] = ()
     findings: tuple[str, ...] = ()
     caution: str = ""
@@ -266,7 +309,7 @@ class Review:
             "doubts": [
                 {"name": doubt.name, "sentence": doubt.sentence, "alters": doubt.alters} for doubt in self.doubts
             ],
-            "switches": self.switches,
+            "switches": {"with": self.switches.moved, "of": self.switches.of} if self.switches else None,
             "comparisons": [
                 {"stretch": one.stretch, "against": one.against, **_answer_json(one.answer)}
                 for one in self.comparisons

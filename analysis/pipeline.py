@@ -12,7 +12,6 @@ from analysis.answer import (
     Answer,
     Carried,
     Comparison,
-    Direction,
     Goal,
     HowMuch,
     HowOften,
@@ -20,24 +19,33 @@ from analysis.answer import (
     Review,
     Shift,
     Since,
+    Slope,
+    SpreadChange,
+    Still,
     StillNeeded,
     Stretch,
+    Switches,
+    WeekdayRhythm,
 )
-from analysis.batch.fences import Fences, fences, is_above, is_below
+from analysis.batch.fences import Fences
 from analysis.batch.fourths import fourths
 from analysis.batch.luck import new_day_rate
-from analysis.doubts.catalogue import Seen, doubts_of
-from analysis.errors import AnalysisError
+from analysis.doubts.catalogue import doubts_of
+from analysis.doubts.seen import Seen
 from analysis.log import Change, Log, Measure, Values
 from analysis.points import Points, first_logged_day, points_of
 from analysis.questions.by_how_much import difference_of_shares, share_range, shift
 from analysis.questions.days_still_needed import days_needed_after
-from analysis.questions.did_it_move import FEWEST_BEFORE, rank_sum, sureness
+from analysis.questions.did_it_move import at_most
+from analysis.questions.is_it_so_still import LATELY, still_state
 from analysis.questions.since_when import plausible_splits
+from analysis.questions.steadier import spread_change
 from analysis.series.carry_over import carry_over, widening
+from analysis.series.slope import common_slope
+from analysis.sides import Level, Sides, chance_of_shares, compare
+from analysis.stretches import Edge, check_baseline, edges_of, merged, outside, stretch_of
 
-ZERO_HEAVY_SHARE = 0.25
-"""From this share of zeros in the baseline on, *how often* and *how much on those days* are told apart."""
+FEWEST_FOR_HOW_MUCH = 3
 
 
 def review(
@@ -62,220 +70,165 @@ def review(
     end = today.toordinal() if today is not None else (int(log.days[-1]) if len(log) else None)
     points = points_of(log, end)
     begin = first_logged_day(log, end)
+    in_force = [one for one in changes if end is None or one.day.toordinal() <= end]
+    marked = merged(in_force)
+    check_baseline(baseline, marked)
     if begin is None or end is None or not points.known.any():
-        _check(baseline, merged(changes))
         return Review(log.measure, (), Answer(), points)
-    marked = [change for change in merged(changes) if change.day.toordinal() <= end]
-    _check(baseline, marked)
-    edges = _edges(marked, baseline, begin, end)
-    stretches = tuple(_stretch(points, edge, is_after=place > 0) for place, edge in enumerate(edges))
-    rows = [_stretch_values(points, first, last) for _, first, last in edges]
-    comparisons = tuple(_comparisons(log.measure, points, stretches, edges, rows, worth))
-    answer = next(
-        (one.answer for one in comparisons if one.stretch == len(stretches) - 1 and one.against == "baseline"),
-        Answer(),
-    )
+    edges = edges_of(marked, baseline, begin, end)
+    stretches = tuple(stretch_of(points, edge, is_after=place > 0) for place, edge in enumerate(edges))
+    asked = _Asked(log.measure, points, stretches, edges, worth)
+    comparisons = [asked.compared(place, 0) for place in range(1, len(stretches))]
+    befores = [asked.compared(place, place - 1) for place in range(2, len(stretches))]
+    last = comparisons[-1] if comparisons else None
+    doubts = doubts_of(Seen(log, in_force, stretches, last.sides if last else None, last.level if last else None))
+    answer = last.answer if last else Answer(slope=_slope_of_one(points, edges[0]))
+    if any(doubt.alters for doubt in doubts):
+        answer = _capped(answer)
+    several = len(stretches) > 2
     return Review(
         log.measure,
         stretches,
         answer,
         points,
-        doubts_of(Seen(log.measure, stretches, answer)),
-        comparisons=comparisons if len(stretches) > 2 else (),
+        doubts,
+        switches=_switches([comparisons[0], *befores]) if several else None,
+        comparisons=tuple(_listed(comparisons, befores)) if several else (),
     )
 
 
-def merged(changes: Iterable[Change]) -> list[Change]:
-    """Changes in order of day; those of one day become one: labels joined, the longest settling-in kept."""
-    by_day: dict[date, Change] = {}
-    for change in sorted(changes, key=lambda one: one.day):
-        same = by_day.get(change.day)
-        if same is not None:
-            label = " + ".join(part for part in (same.label, change.label) if part)
-            change = Change(change.day, label, max(same.settle_days, change.settle_days))
-        by_day[change.day] = change
-    return list(by_day.values())
+class _Asked:
+    """Everything one comparison needs of a log, and the answer to it."""
+
+    def __init__(
+        self,
+        measure: Measure,
+        points: Points,
+        stretches: Sequence[Stretch],
+        edges: Sequence[Edge],
+        worth: float | None,
+    ) -> None:
+        self.measure, self.points, self.stretches, self.edges, self.worth = (
+            measure,
+            points,
+            stretches,
+            edges,
+            worth,
+        )
+
+    def compared(self, place: int, against: int) -> _Compared:
+        """One stretch against an earlier one."""
+        sides = self._sides(against, place)
+        carried = None
+        if not len(sides.known_before) or not len(sides.known_after):
+            return _Compared(
+                None, None, Answer(self._carried(against, place, None), sureness="too early", direction="none")
+            )
+        level = compare(sides)
+        carried = self._carried(against, place, level)
+        since = self._since(sides, level, place) if place == against + 1 else None
+        return _Compared(sides, level, _answer(sides, level, carried, since, self.worth))
+
+    def _sides(self, against: int, place: int) -> Sides:
+        at = np.arange(len(self.points), dtype=np.int64)
+        rows = []
+        for one in (against, place):
+            _, first, last = self.edges[one]
+            inside = self.points.within(first, last)
+            rows.append((self.points.first[inside], at[inside], self.points.values[inside]))
+        (before_days, before_at, before), (after_days, after_at, after) = rows
+        return Sides(self.measure, before_days, before_at, before, after_days, after_at, after)
+
+    def _carried(self, against: int, place: int, level: Level | None) -> Carried | None:
+        baseline = self.stretches[against]
+        if baseline.lower_fence is None or baseline.upper_fence is None:
+            return None
+        _, first, last = self.edges[place]
+        inside = self.points.within(first, last) & self.points.known
+        own = Fences(baseline.lower_fence, baseline.upper_fence, baseline.lower_fence, baseline.upper_fence)
+        values = self.points.values[inside]
+        below, above = outside(self.points.first[inside], values, own)
+        rate = new_day_rate(baseline.observations, level.carry_over if level else None)
+        return Carried(below, above, rate * len(values), 100 * rate)
+
+    def _since(self, sides: Sides, level: Level, place: int) -> Since | None:
+        """Where the row of both stretches splits into two levels best."""
+        row = np.concatenate([level.sides.before, level.sides.after])
+        days = np.concatenate([sides.before_days, sides.after_days])
+        known = ~np.isnan(row)
+        splits = plausible_splits(row[known])
+        if splits is None:
+            return None
+        likely, earliest, latest = (int(days[known][split]) for split in splits)
+        change = self.edges[place][0]
+        marked = change.day.toordinal() if change else self.edges[place][1]
+        return Since(likely, earliest, latest, latest < marked)
 
 
-Edge = tuple[Change | None, int, int]
-"""The change that begins a stretch, and its first and last day number; the days between may be none."""
+class _Compared:
+    """The sides and levels of one comparison beside its answer; None where a side is empty."""
+
+    def __init__(self, sides: Sides | None, level: Level | None, answer: Answer) -> None:
+        self.sides, self.level, self.answer = sides, level, answer
 
 
-def _check(baseline: tuple[date, date] | None, changes: Sequence[Change]) -> None:
-    if baseline is None:
-        return
-    first, last = baseline
-    if first > last:
-        raise AnalysisError("baseline_backwards", first=first, last=last)
-    if changes and last >= changes[0].day:
-        raise AnalysisError("baseline_after_change", last=last, change=changes[0].day)
-
-
-def _edges(changes: Sequence[Change], baseline: tuple[date, date] | None, begin: int, end: int) -> list[Edge]:
-    """The stretches as days: the baseline, then one after each change, settling-in days left out."""
-    first = max(begin, baseline[0].toordinal()) if baseline else begin
-    if changes:
-        last = baseline[1].toordinal() if baseline else changes[0].day.toordinal() - 1
-        edges: list[Edge] = [(None, first, last)]
-        following = [change.day.toordinal() - 1 for change in changes[1:]] + [end]
-        for change, stretch_end in zip(changes, following, strict=True):
-            edges.append((change, change.day.toordinal() + change.settle_days, stretch_end))
-        return edges
-    if baseline is None:
-        return [(None, first, end)]
-    last = min(end, baseline[1].toordinal())
-    return [(None, first, last), (None, last + 1, end)] if last < end else [(None, first, last)]
-
-
-def _stretch_values(points: Points, first: int, last: int) -> Values:
-    return points.values[points.within(first, last)]
-
-
-def _stretch(points: Points, edge: Edge, *, is_after: bool) -> Stretch:
-    change, first, last = edge
-    inside = points.within(first, last)
-    known = inside & points.known
-    starts, values = points.first[known], points.values[known]
-    periods = points.first[inside]
-    stretch = Stretch(
-        name="after" if is_after else "baseline",
-        label=change.label if change else None,
-        change=change.day.toordinal() if change else None,
-        first=int(periods[0]) if len(periods) else first,
-        last=int(periods[-1]) if len(periods) else max(first, last),
-        observations=len(values),
-        blank=len(periods) - len(values),
-    )
-    if not len(values):
-        return stretch
-    batch = fourths(values)
-    own = fences(batch, len(values))
-    stretch = replace(
-        stretch,
-        median=batch.median,
-        mean=_mean(values),
-        lower_fourth=batch.lower,
-        upper_fourth=batch.upper,
-        fourth_spread=batch.spread,
-    )
-    if own is None:
-        return stretch
-    below, above = _outside(starts, values, own)
-    return replace(
-        stretch,
-        lower_fence=own.lower,
-        upper_fence=own.upper,
-        outer_lower_fence=own.outer_lower,
-        outer_upper_fence=own.outer_upper,
-        below=below,
-        above=above,
-    )
-
-
-def _mean(values: Values) -> float:
-    # Scaled so that the sum of huge values stays a number.
-    scale = float(np.max(np.abs(values)))
-    return float(np.mean(values / scale) * scale) if scale > 1e150 else float(np.mean(values))
-
-
-def _outside(starts: np.ndarray, values: Values, own: Fences) -> tuple[tuple[int, ...], tuple[int, ...]]:
-    return (
-        tuple(starts[is_below(values, own.lower)].tolist()),
-        tuple(starts[is_above(values, own.upper)].tolist()),
-    )
-
-
-def _comparisons(
-    measure: Measure,
-    points: Points,
-    stretches: Sequence[Stretch],
-    edges: Sequence[Edge],
-    rows: Sequence[Values],
-    worth: float | None,
-) -> Iterable[Comparison]:
-    for place in range(1, len(stretches)):
-        yield Comparison(place, "baseline", _answer(measure, points, stretches, edges, rows, 0, place, worth))
+def _listed(comparisons: Sequence[_Compared], befores: Sequence[_Compared]) -> Iterable[Comparison]:
+    for place, one in enumerate(comparisons, start=1):
+        yield Comparison(place, "baseline", one.answer)
         if place > 1:
-            answer = _answer(measure, points, stretches, edges, rows, place - 1, place, worth)
-            yield Comparison(place, "before", answer)
+            yield Comparison(place, "before", befores[place - 2].answer)
+
+
+def _switches(compared: Sequence[_Compared]) -> Switches:
+    """How many of the changes the level moved with, each the other way from the one before."""
+    ways = [one.answer.direction if one.level is not None and one.level.is_claim else "none" for one in compared]
+    moved = 0
+    expected = ways[0]
+    for way in ways:
+        moved += way == expected and way != "none"
+        expected = "less" if expected == "more" else "more"
+    return Switches(moved, len(ways))
+
+
+def _capped(answer: Answer) -> Answer:
+    """A doubt that alters leaves at most "leaning"."""
+    if answer.sureness is None:
+        return answer
+    return replace(answer, sureness=at_most(answer.sureness, "leaning"))
 
 
 def _answer(
-    measure: Measure,
-    points: Points,
-    stretches: Sequence[Stretch],
-    edges: Sequence[Edge],
-    rows: Sequence[Values],
-    against: int,
-    place: int,
-    worth: float | None,
+    sides: Sides, level: Level, carried: Carried | None, since: Since | None, worth: float | None
 ) -> Answer:
-    """One stretch against an earlier one."""
-    before, after = (row[~np.isnan(row)] for row in (rows[against], rows[place]))
-    carried = _carried(points, stretches[against], edges[place])
-    if not len(before) or not len(after):
-        return Answer(carried=carried, sureness="too early", direction="none")
-    r = carry_over([rows[against], rows[place]])
-    widened = widening(r)
-    test = rank_sum(before, after, widened)
-    estimate, low, high = shift(before, after, widened)
-    share_low, share_high = share_range(test.share, len(before), len(after), widened)
-    word = sureness(len(before), len(after), test.p, low > 0 or high < 0)
-    direction: Direction = "none"
-    if word not in ("too early", "cannot tell"):
-        direction = _sign(estimate) if estimate else _sign(test.share - 0.5)
+    before, after = sides.known_before, sides.known_after
+    share_low, share_high = share_range(level.share, len(before), len(after), level.widened)
     old_median = fourths(before).median
+    better = _better_days(sides.measure, after, old_median, level.estimate)
+    spread = spread_change(level.sides.known_before, level.sides.known_after, level.widened)
+    rhythm = level.rhythm
     return Answer(
         carried=carried,
-        shift=Shift(
-            estimate,
-            low,
-            high,
-            test.share,
-            share_low,
-            share_high,
-            _better_days(measure, after, old_median, estimate),
-            len(after),
-        ),
-        luck=Luck(test.p, in_100(test.p)),
-        sureness=word,
-        direction=direction,
-        since=_since(points, edges, against, place, widened) if place == against + 1 else None,
-        how_often=_how_often(measure, before, after, widened),
-        how_much=_how_much(measure, before, after, widened),
-        goal=_goal(measure, before, after, widened),
-        carry_over=r,
-        bound=max(abs(low), abs(high)) if word == "cannot tell" else None,
-        still_needed=_still_needed(before, after, worth, widened),
+        shift=Shift(level.estimate, level.low, level.high, level.share, share_low, share_high, better, len(after)),
+        luck=Luck(level.p, in_100(level.p)),
+        sureness=level.sureness,
+        direction=level.direction,
+        since=since,
+        still=_still(level),
+        spread_change=SpreadChange(spread.word, spread.p) if spread else None,
+        slope=_slope(level.sides),
+        how_often=_how_often(sides, level.widened),
+        how_much=_how_much(sides, level.widened),
+        goal=_goal(sides, level.widened),
+        carry_over=level.carry_over,
+        weekday_rhythm=WeekdayRhythm(rhythm.p, rhythm.used) if rhythm else None,
+        bound=max(abs(level.low), abs(level.high)) if level.sureness == "cannot tell" else None,
+        still_needed=_still_needed(before, after, worth, level.widened),
     )
-
-
-def _still_needed(before: Values, after: Values, worth: float | None, widened: float) -> StillNeeded | None:
-    if not worth:
-        return None
-    needed = days_needed_after(before, worth, widened)
-    return StillNeeded(None if needed is None else max(0, needed - len(after)), None, None, abs(worth))
 
 
 def in_100(p: float) -> int:
     """A chance as a whole number of logs in 100."""
     return int(np.floor(100 * p + 0.5))
-
-
-def _sign(number: float) -> Direction:
-    return "more" if number > 0 else "less" if number < 0 else "none"
-
-
-def _carried(points: Points, baseline: Stretch, edge: Edge) -> Carried | None:
-    if baseline.lower_fence is None or baseline.upper_fence is None:
-        return None
-    _, first, last = edge
-    inside = points.within(first, last) & points.known
-    starts, values = points.first[inside], points.values[inside]
-    own = Fences(baseline.lower_fence, baseline.upper_fence, baseline.lower_fence, baseline.upper_fence)
-    below, above = _outside(starts, values, own)
-    rate = new_day_rate(baseline.observations)
-    return Carried(below, above, rate * len(values), 100 * rate)
 
 
 def _better_days(measure: Measure, after: Values, old_median: float, estimate: float) -> int:
@@ -289,46 +242,68 @@ def _days_in_range(values: Values, aim: tuple[float, float]) -> int:
     return int(np.sum((values >= aim[0]) & (values <= aim[1])))
 
 
-def _since(points: Points, edges: Sequence[Edge], against: int, place: int, widened: float) -> Since | None:
-    """Where the row of both stretches splits into two levels best."""
-    _, first, before_last = edges[against]
-    change, after_first, last = edges[place]
-    inside = (points.within(first, before_last) | points.within(after_first, last)) & points.known
-    splits = plausible_splits(points.values[inside], widened)
-    if splits is None:
+def _still(level: Level) -> Still | None:
+    after = level.sides.known_after
+    state = still_state(level.sides.known_before, after)
+    if state is None:
         return None
-    starts = points.first[inside]
-    best, earliest, latest = (int(starts[split]) for split in splits)
-    marked = change.day.toordinal() if change else after_first
-    return Since(best, earliest, latest, latest < marked)
+    lately = level.sides.after[-LATELY:]
+    lately = lately[~np.isnan(lately)]
+    return Still(state, fourths(lately).median if len(lately) else None)
 
 
-def _is_zero_heavy(measure: Measure, before: Values) -> bool:
-    can_be_zero = measure.kind in ("amount", "count") and bool(np.all(before >= 0))
-    return can_be_zero and float(np.mean(before == 0)) >= ZERO_HEAVY_SHARE
+def _slope_of_one(points: Points, edge: Edge) -> Slope | None:
+    """The slope of a log without a change."""
+    _, first, last = edge
+    values = points.values[points.within(first, last)]
+    row = common_slope([np.arange(len(values))], [values], widening(carry_over([values])))
+    return Slope(row.a_period, None, row.p) if row else None
 
 
-def _how_often(measure: Measure, before: Values, after: Values, widened: float) -> HowOften | None:
-    if measure.kind != "yes/no" and not _is_zero_heavy(measure, before):
+def _slope(sides: Sides) -> Slope | None:
+    before = common_slope([sides.before_at], [sides.before])
+    after = common_slope([sides.after_at], [sides.after])
+    if before is None and after is None:
         return None
-    done_before = (int(np.sum(before > 0)), len(before))
-    done_after = (int(np.sum(after > 0)), len(after))
-    low, high = difference_of_shares(done_before, done_after, widened)
-    return HowOften(done_before, done_after, low, high)
+    return Slope(
+        before.a_period if before else None, after.a_period if after else None, before.p if before else None
+    )
 
 
-def _how_much(measure: Measure, before: Values, after: Values, widened: float) -> HowMuch | None:
-    active_before, active_after = before[before > 0], after[after > 0]
-    if not _is_zero_heavy(measure, before) or min(len(active_before), len(active_after)) < FEWEST_BEFORE // 2:
+def _days_with_some(values: Values) -> tuple[int, int]:
+    return int(np.sum(values > 0)), len(values)
+
+
+def _how_often(sides: Sides, widened: float) -> HowOften | None:
+    if not sides.told_by_share:
         return None
-    _, low, high = shift(active_before, active_after, widened)
-    return HowMuch(fourths(active_before).median, fourths(active_after).median, low, high)
+    before, after = _days_with_some(sides.known_before), _days_with_some(sides.known_after)
+    low, high = difference_of_shares(before, after, widened)
+    return HowOften(before, after, low, high, chance_of_shares(before, after, widened))
 
 
-def _goal(measure: Measure, before: Values, after: Values, widened: float) -> Goal | None:
-    if not isinstance(measure.aim, tuple):
+def _how_much(sides: Sides, widened: float) -> HowMuch | None:
+    before, after = sides.known_before, sides.known_after
+    before, after = before[before > 0], after[after > 0]
+    if not sides.is_zero_heavy or min(len(before), len(after)) < FEWEST_FOR_HOW_MUCH:
         return None
-    met_before = (_days_in_range(before, measure.aim), len(before))
-    met_after = (_days_in_range(after, measure.aim), len(after))
+    _, low, high = shift(before, after, widened)
+    return HowMuch(fourths(before).median, fourths(after).median, low, high)
+
+
+def _goal(sides: Sides, widened: float) -> Goal | None:
+    aim = sides.measure.aim
+    if not isinstance(aim, tuple):
+        return None
+    before, after = sides.known_before, sides.known_after
+    met_before = (_days_in_range(before, aim), len(before))
+    met_after = (_days_in_range(after, aim), len(after))
     low, high = difference_of_shares(met_before, met_after, widened)
     return Goal(met_before, met_after, low, high)
+
+
+def _still_needed(before: Values, after: Values, worth: float | None, widened: float) -> StillNeeded | None:
+    if not worth:
+        return None
+    needed = days_needed_after(before, worth, widened)
+    return StillNeeded(None if needed is None else max(0, needed - len(after)), None, None, abs(worth))

@@ -30,6 +30,11 @@ _EXACT_UP_TO = 30
 """Up to this many days together the tie-exact chance is counted; beyond, the normal law is near enough."""
 
 
+def at_most(word: Sureness, most: Sureness) -> Sureness:
+    """The less sure of two words."""
+    return min(word, most, key=SURENESS.index)
+
+
 @dataclass(frozen=True)
 class RankSum:
     """How often an after-day is higher than a before-day, and how often luck alone would part them so far.
@@ -94,12 +99,12 @@ def _exact_chance(ranks: Values, m: int) -> float:
     return float(ways[taken, far].sum() / ways[taken].sum())
 
 
-def sureness(before: int, after: int, p: float, range_excludes_none: bool) -> Sureness:
+def sureness(before: int, after: int, p: float) -> Sureness:
     """The word for how sure the answer is.
 
     - *too early*: fewer than 7 observations before or 4 after;
     - *leaning*: a gap this big turns up by luck in fewer than 20 of 100 unchanged logs;
-    - *fairly sure*: in fewer than 5 of 100, and the range of the shift leaves out "none";
+    - *fairly sure*: in fewer than 5 of 100;
     - *as sure as a log can be*: in fewer than 5 of 1,000, with 14 observations or more on both sides;
     - *cannot tell*: everything else.
 
@@ -107,13 +112,12 @@ def sureness(before: int, after: int, p: float, range_excludes_none: bool) -> Su
         before: observations in the baseline.
         after: observations after the change.
         p: two-sided chance by luck, widened for carry-over.
-        range_excludes_none: whether the range of the shift leaves out zero.
     """
     if before < FEWEST_BEFORE or after < FEWEST_AFTER:
         return "too early"
     if p >= LEANING_BELOW:
         return "cannot tell"
-    if p >= FAIRLY_SURE_BELOW or not range_excludes_none:
+    if p >= FAIRLY_SURE_BELOW:
         return "leaning"
     if p >= MOST_SURE_BELOW or min(before, after) < FEWEST_FOR_MOST_SURE:
         return "fairly sure"

@@ -6,7 +6,7 @@ from collections.abc import Callable
 from datetime import date, datetime, timedelta
 from pathlib import Path
 
-from PySide6.QtCore import QSettings, Qt, QTimer
+from PySide6.QtCore import Qt, QTimer
 from PySide6.QtGui import QCloseEvent
 from PySide6.QtWidgets import QApplication, QDialog, QFileDialog, QMainWindow, QMessageBox, QStackedWidget, QWidget
 
@@ -22,6 +22,7 @@ from desktop.screens.bring_in_dialog import BringInDialog, read_with_questions
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.dialogs import ChangeDialog, MeasureDialog, ask_day, ask_if_right, ask_reason
 from desktop.screens.menus import Menus
+from desktop.screens.settings import TEXT_SIZES, Settings
 from desktop.screens.start_screen import StartScreen
 from desktop.screens.status_line import trouble_sentence
 from desktop.screens.theme import ThemeName, apply_theme, is_dark
@@ -32,7 +33,6 @@ from desktop.wording.numbers import count
 from desktop.wording.problems import problem_sentence
 
 JOURNAL_ENDING = ".dayfence"
-_TEXT_SIZES = (100, 125, 150, 175, 200)
 _CLOCK_LOOK = 60_000
 """Milliseconds between two looks at the calendar."""
 
@@ -48,7 +48,7 @@ class MainWindow(QMainWindow):
         self.folder = folder
         self.session: Session | None = None
         self._now = now
-        self._settings = QSettings(str(folder / "settings.ini"), QSettings.Format.IniFormat)
+        self.settings = Settings(folder)
         self.setWindowTitle("Dayfence")
         self.start_screen = StartScreen()
         self.workspace = Workspace()
@@ -62,7 +62,7 @@ class MainWindow(QMainWindow):
         self._clock.timeout.connect(self._look_at_calendar)
         self._clock.start(_CLOCK_LOOK)
         self.resize(1360, 820)
-        self._restore()
+        self.settings.restore_places(self, self.workspace.panes)
         self._apply_theme()
         self._follow_session()
 
@@ -263,30 +263,18 @@ class MainWindow(QMainWindow):
 
     def set_theme(self, theme: ThemeName) -> None:
         """Light, dark, or as the computer is set."""
-        self._settings.setValue("theme", theme)
+        self.settings.set_theme(theme)
         self._apply_theme()
 
     def larger_text(self) -> None:
         """One step larger, up to twice the plain size."""
-        larger = [size for size in _TEXT_SIZES if size > self.text_percent]
-        self._set_text_size(min(larger, default=_TEXT_SIZES[-1]))
+        larger = [size for size in TEXT_SIZES if size > self.settings.text_percent]
+        self._set_text_size(min(larger, default=TEXT_SIZES[-1]))
 
     def smaller_text(self) -> None:
         """One step smaller, down to the plain size."""
-        smaller = [size for size in _TEXT_SIZES if size < self.text_percent]
-        self._set_text_size(max(smaller, default=_TEXT_SIZES[0]))
-
-    @property
-    def text_percent(self) -> int:
-        """The size of text in force."""
-        stored = str(self._settings.value("text", ""))
-        return int(stored) if stored.isdecimal() and int(stored) in _TEXT_SIZES else _TEXT_SIZES[0]
-
-    @property
-    def theme(self) -> ThemeName:
-        """The theme in force."""
-        stored = str(self._settings.value("theme", ""))
-        return "light" if stored == "light" else "dark" if stored == "dark" else "system"
+        smaller = [size for size in TEXT_SIZES if size < self.settings.text_percent]
+        self._set_text_size(max(smaller, default=TEXT_SIZES[0]))
 
     def say(self, sentence: str) -> None:
         """Say something in the status line."""
@@ -305,9 +293,7 @@ class MainWindow(QMainWindow):
         if not self._let_go():
             event.ignore()
             return
-        self._settings.setValue("geometry", self.saveGeometry())
-        self._settings.setValue("panes", self.workspace.panes.saveState())
-        self._settings.sync()
+        self.settings.keep_places(self, self.workspace.panes)
         event.accept()
 
     # Inside.
@@ -346,7 +332,7 @@ class MainWindow(QMainWindow):
         self.workspace.days.show_days(table)
         self.workspace.days.selectionModel().currentColumnChanged.connect(self._follow_column)
         self._pages.setCurrentWidget(self.workspace)
-        if self._settings.value("panes") is None:
+        if not self.settings.has_panes:
             self.workspace.fit_days()
         self._follow_session()
         session.make_review()
@@ -430,28 +416,21 @@ class MainWindow(QMainWindow):
         return self.workspace.days.days.day(index.row()) if index.isValid() else session.today
 
     def _set_text_size(self, percent: int) -> None:
-        self._settings.setValue("text", percent)
+        self.settings.set_text_percent(percent)
         self._apply_theme()
 
     def _apply_theme(self) -> None:
         app = QApplication.instance()
         assert isinstance(app, QApplication)
-        look = apply_theme(app, self.theme, self.text_percent)
+        look = apply_theme(app, self.settings.theme, self.settings.text_percent)
         self.workspace.set_face(app.font())
         self.start_screen.set_face(app.font())
         self.workspace.days.set_paper(look.paper)
         self.workspace.chart_pane.set_look(look)
-        self.workspace.findings.set_dark(is_dark(self.theme))
+        self.workspace.findings.set_dark(is_dark(self.settings.theme))
         model = self.workspace.days.model()
         if isinstance(model, DaysTable):
             model.quiet_colour = look.colour("quiet")
-
-    def _restore(self) -> None:
-        geometry, panes = self._settings.value("geometry"), self._settings.value("panes")
-        if geometry is not None:
-            self.restoreGeometry(geometry)
-        if panes is not None:
-            self.workspace.panes.restoreState(panes)
 
     def _look_at_calendar(self) -> None:
         """After midnight a new today is there, but not under someone who is typing."""

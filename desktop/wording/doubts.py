@@ -5,18 +5,26 @@ from __future__ import annotations
 from collections.abc import Callable
 
 from analysis.answer import Doubt
-from desktop.wording.numbers import Speech
+from desktop.wording.numbers import Speech, count
 
 Fields = dict[str, float | str]
+Told = Callable[[Fields, Speech], str]
+
+_SAME = "Without them the answer is the same."
+_OTHER = "Without them the answer is no longer sure."
+_SAME_WEEK = "Without that week the answer is the same."
+_OTHER_WEEK = "Without that week the answer is no longer sure."
 
 
 def doubt_sentence(doubt: Doubt, speech: Speech) -> str:
-    """The sentence of a doubt.
+    """The fact of a doubt, then its effect on the answer.
 
     Raises:
         KeyError: a doubt without a sentence; a test looks for one.
     """
-    return SENTENCES[doubt.name](dict(doubt.fields), speech)
+    fact, same, other = SENTENCES[doubt.name]
+    effect = other if doubt.alters else same
+    return f"{fact(dict(doubt.fields), speech)} {effect}".strip()
 
 
 def _few_days(fields: Fields, speech: Speech) -> str:
@@ -42,7 +50,7 @@ def _blank_days(fields: Fields, speech: Speech) -> str:
 def _day_to_day(_fields: Fields, speech: Speech) -> str:
     return (
         f"One {speech.one} carries over into the next, so {speech.many} count for less than their number. "
-        "The range is wider for it."
+        f"Counted as separate {speech.many} the answer would look surer than it is."
     )
 
 
@@ -50,11 +58,119 @@ def _no_low_day(_fields: Fields, speech: Speech) -> str:
     return f"No low {speech.one} can stand out: the lower fence is at zero or below it."
 
 
-SENTENCES: dict[str, Callable[[Fields, Speech], str]] = {
-    "few_days": _few_days,
-    "no_spread": _no_spread,
-    "blank_days": _blank_days,
-    "day_to_day": _day_to_day,
-    "no_low_day": _no_low_day,
+def _slope_before(fields: Fields, speech: Speech) -> str:
+    slope = float(fields["slope"])
+    pace = "week" if speech.one == "day" else speech.one
+    return f"It was moving all along, by about {speech.sized(slope)} a {pace}, before the change and after it."
+
+
+def _worst_spell(fields: Fields, speech: Speech) -> str:
+    wanted = speech.measure.aim
+    kind = "lowest" if wanted == "more" else "highest" if wanted == "less" else "farthest out"
+    return (
+        f"The change came after the {kind} week of {int(fields['weeks'])}. "
+        "Some way back would likely have come anyway."
+    )
+
+
+def _first_days(fields: Fields, _speech: Speech) -> str:
+    return f"The first week of the log was {fields['way']} than the rest of the baseline, as in many new logs."
+
+
+def _odd_day(fields: Fields, speech: Speech) -> str:
+    return f"{count(int(fields['days']), speech.one)} far out of line carry much of it."
+
+
+def _missing_more(fields: Fields, speech: Speech) -> str:
+    return (
+        f"More {speech.many} are blank since the change: {int(fields['after'])} of {int(fields['after_of'])}, "
+        f"{int(fields['before'])} of {int(fields['before_of'])} before."
+    )
+
+
+def _late_entries(fields: Fields, _speech: Speech) -> str:
+    return f"{int(fields['late'])} of {int(fields['days'])} days were typed days afterwards."
+
+
+def _weekdays_only(fields: Fields, _speech: Speech) -> str:
+    ends = int(fields["weekend"])
+    held = "no weekend day" if not ends else "one weekend day"
+    return f"The baseline holds {held}; the days after do."
+
+
+def _device_mark(fields: Fields, _speech: Speech) -> str:
+    named = f" ({fields['label']})" if fields["label"] else ""
+    return f"Another device or way of measuring is marked{named}."
+
+
+def _close_change(fields: Fields, _speech: Speech) -> str:
+    named = f"“{fields['label']}”" if fields["label"] else "Another change"
+    return f"{named} is marked {count(int(fields['days']), 'day')} away. This log cannot tell the two apart."
+
+
+def _several_changes(fields: Fields, _speech: Speech) -> str:
+    return (
+        f"{int(fields['count'])} changes are marked on the same day. This log cannot tell them apart; "
+        "the answer is for all of them together."
+    )
+
+
+def _equal_in_row(fields: Fields, speech: Speech) -> str:
+    value = speech.with_unit(float(fields["value"]))
+    return f"{value} stands there {int(fields['days'])} {speech.many} in a row: exact, or put down from habit?"
+
+
+def _season(fields: Fields, _speech: Speech) -> str:
+    return (
+        f"The two stretches lie about {int(fields['months'])} months apart, "
+        "so the season may be part of the difference."
+    )
+
+
+def _round_numbers(fields: Fields, speech: Speech) -> str:
+    step = int(fields["step"])
+    ends = "0" if step == 10 else "0 or 5"
+    return f"Nearly all values end in {ends}, so a difference under {speech.with_unit(step)} cannot be seen."
+
+
+SENTENCES: dict[str, tuple[Told, str, str]] = {
+    "few_days": (_few_days, "", ""),
+    "no_spread": (_no_spread, "", ""),
+    "blank_days": (_blank_days, "", ""),
+    "day_to_day": (_day_to_day, "", ""),
+    "no_low_day": (_no_low_day, "", ""),
+    "slope_before": (
+        _slope_before,
+        "The answer holds beyond that.",
+        "The change adds nothing sure to it.",
+    ),
+    "worst_spell": (
+        _worst_spell,
+        "Without that week the answer is the same.",
+        "Without that week it is not sure.",
+    ),
+    "first_days": (_first_days, "Without that week the answer is the same.", "Without that week it is not sure."),
+    "odd_day": (_odd_day, _SAME, _OTHER),
+    "missing_more": (
+        _missing_more,
+        "Even if those were on the other side, the answer is the same.",
+        "If those were on the other side, the answer would not be sure.",
+    ),
+    "late_entries": (_late_entries, _SAME, _OTHER),
+    "weekdays_only": (
+        _weekdays_only,
+        "On weekdays alone the answer is the same.",
+        "On weekdays alone the answer is not sure.",
+    ),
+    "device_mark": (
+        _device_mark,
+        "Without those days the answer is the same.",
+        "A step of this size can come from that alone.",
+    ),
+    "close_change": (_close_change, "", ""),
+    "several_changes": (_several_changes, "", ""),
+    "equal_in_row": (_equal_in_row, _SAME, _OTHER),
+    "season": (_season, "", ""),
+    "round_numbers": (_round_numbers, "", ""),
 }
-"""A sentence for every doubt of the catalogue."""
+"""For every doubt of the catalogue its fact, and its effect when it does not alter the answer and when it does."""

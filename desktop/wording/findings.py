@@ -18,6 +18,9 @@ NO_CAUSE = (
     "This compares days before and after. It cannot tell what caused a difference: "
     "other things may have changed at the same time."
 )
+STEADY_BELOW = 0.01
+"""A slope without a change is told when luck alone makes it in fewer than 1 of 100 steady logs."""
+
 _LISTED = 3
 """Days outside are named up to this many; beyond, the chart shows them."""
 
@@ -114,7 +117,12 @@ class _Teller:
     def _one_stretch(self, only: Stretch) -> Findings:
         """Without a change: is any period out of line with the rest?"""
         speech = self.speech
-        sections = [Section("The log so far", tuple(self._level(only)))]
+        slope = self.review.answer.slope
+        steady = slope is not None and slope.before and (slope.p_before or 1.0) < STEADY_BELOW
+        told = self._level(only)
+        if slope is not None and slope.before and steady:
+            told.append(f"It is moving steadily, by about {self._pace(slope.before)}.")
+        sections = [Section("The log so far", tuple(told))]
         outside = sorted([*only.below, *only.above])
         if only.lower_fence is None or only.upper_fence is None:
             headline = f"Too early to say if a {speech.one} is out of line."
@@ -189,8 +197,11 @@ class _Teller:
         if answer.carried is not None and after.observations:
             day_by_day = outside_sentence(answer.carried, after.observations, self.speech)
             sections.append(Section(f"{self.speech.one.capitalize()} by {self.speech.one}", (day_by_day,)))
-        if answer.since is not None and answer.sureness in (*CLAIMS, "leaning"):
-            sections.append(Section("Since when?", (self._since(answer.since, after),)))
+        if answer.sureness in (*CLAIMS, "leaning"):
+            since = (self._since(answer.since, after),) if answer.since is not None else ()
+            sections.append(Section("Since when?", (*since, *self._still(answer))))
+        elif answer.still is not None and answer.still.state in ("faded", "come late"):
+            sections.append(Section("Is it so still?", tuple(self._still(answer))))
         sections += self._doubts()
         if answer.sureness != "too early":
             sections[-1] = Section(sections[-1].title, (*sections[-1].sentences, NO_CAUSE))
@@ -205,10 +216,28 @@ class _Teller:
                 return "Too early to say if it moved."
             case "cannot tell":
                 return "This log cannot tell if it moved."
+            case "leaning" if self._is_slope:
+                return f"It was moving all along, by about {self._slope_told()}."
             case "leaning":
                 return f"It may have moved: {self._levels(before, after, answer)}"
             case _:
                 return f"It moved: {self._levels(before, after, answer)}"
+
+    @property
+    def _is_slope(self) -> bool:
+        """Whether a steady slope explains what looks like a move at the change."""
+        return any(doubt.name == "slope_before" and doubt.alters for doubt in self.review.doubts)
+
+    def _slope_told(self) -> str:
+        slope = next(dict(doubt.fields)["slope"] for doubt in self.review.doubts if doubt.name == "slope_before")
+        pace = "week" if self.speech.one == "day" else self.speech.one
+        return f"{self.speech.sized(float(slope))} a {pace}"
+
+    def _pace(self, a_period: float) -> str:
+        """A slope in words: a week for daily logs, else a period."""
+        if self.speech.one == "day":
+            return f"{self.speech.sized(7 * a_period)} a week"
+        return f"{self.speech.sized(a_period)} a {self.speech.one}"
 
     def _levels(self, before: Stretch, after: Stretch, answer: Answer) -> str:
         """Before and since in one breath, in the terms that mean most for this log."""
@@ -244,7 +273,9 @@ class _Teller:
         )
         reason = f"{before.observations} {speech.many} before, {after.observations} after."
         word = str(answer.sureness)
-        return [f"{word[0].upper()}{word[1:]}: {reason} {luck}"]
+        rhythm = answer.weekday_rhythm
+        like_days = ["Weekends differ from weekdays here; that is taken off."] if rhythm and rhythm.used else []
+        return [f"{word[0].upper()}{word[1:]}: {reason} {luck}", *like_days, *self._switches()]
 
     def _by_how_much(self, before: Stretch, after: Stretch, answer: Answer) -> list[str]:
         speech, shift = self.speech, answer.shift
@@ -268,6 +299,8 @@ class _Teller:
         else:
             told.append(f"The difference is probably {speech.between(shift.low, shift.high)}.")
         told += self._better_days(before, answer)
+        if answer.spread_change is not None and answer.spread_change.word != "alike":
+            told.append(f"The {speech.many} are {answer.spread_change.word} than before.")
         if answer.goal is not None:
             told.append(
                 f"Inside the range you set on {answer.goal.after[0]} of {answer.goal.after[1]} {speech.many}, "
@@ -309,6 +342,30 @@ class _Teller:
             return f"{told} That is after the day you marked, {marked}."
         return f"{told} That fits the day you marked, {marked}."
 
+    def _still(self, answer: Answer) -> list[str]:
+        """What became of the move; nothing where that says no more than the answer."""
+        still, speech = answer.still, self.speech
+        if still is None or still.last_14 is None:
+            return []
+        lately = f"The middle of the last 14 {speech.many} is {speech.with_unit(still.last_14)}."
+        match still.state:
+            case "faded":
+                return [f"It moved at first and has gone back since. {lately}"]
+            case "growing":
+                return [f"It is still moving the same way. {lately}"]
+            case "come late":
+                return [f"It came late: the first {speech.many} after the change were as before. {lately}"]
+            case "still so":
+                return [f"It is so still. {lately}"]
+        return []
+
+    def _switches(self) -> list[str]:
+        switches = self.review.switches
+        if switches is None:
+            return []
+        times = f"{switches.moved} of {switches.of} times"
+        return [f"{switches.of} changes are marked; it moved with them, to and fro, {times}."]
+
     def _doubts(self) -> list[Section]:
         told = tuple(doubt_sentence(doubt, self.speech) for doubt in self.review.doubts)
         if not told and len(self.review.stretches) == 1:
@@ -326,6 +383,14 @@ class _Teller:
                     "If you wrote down earlier days somewhere, add them."
                 )
             return f"{speech.periods(short_after)} more after the change."
+        needed = answer.still_needed
+        if needed is not None and answer.sureness not in CLAIMS:
+            amount = f"{speech.with_unit(needed.for_amount)}{speech.rate()}"
+            if needed.days is None:
+                return f"No number of {speech.many} after is enough with this baseline to see a move of {amount}."
+            if needed.days:
+                return f"About {speech.periods(needed.days)} more would most often show a move of {amount}."
+            return f"There are enough {speech.many} to see a move of {amount}; this log does not show one."
         if answer.sureness == "cannot tell" and answer.bound:
             return (
                 f"If it changed at all, it was by less than {speech.with_unit(answer.bound)}{speech.rate()}. "

@@ -16,8 +16,12 @@ RULES = (
     "Share of pairs: of all pairs of one day before and one after, the share in which after is higher "
     "(range: Newcombe 2006).",
     "Since when: the split into two levels that fits best, and those that fit nearly as well.",
+    "Weekends: where they differ from weekdays by more than luck, the difference is taken off first.",
+    "Logs with many zeros: judged by how many days there was some, and by how much on those days.",
+    "A doubt alters the answer when it is computed again without the doubtful days, or with the other explanation "
+    "in, and is no longer sure. Then the answer is at most leaning.",
     "The five words. Too early: fewer than 7 before or 4 after. Leaning: a gap this big turns up by luck in fewer "
-    "than 20 of 100 unchanged logs. Fairly sure: in fewer than 5 of 100, and the range leaves out no move. "
+    "than 20 of 100 unchanged logs. Fairly sure: in fewer than 5 of 100. "
     "As sure as a log can be: in fewer than 1 of 200, with 14 or more on both sides. Cannot tell: all else.",
 )
 """The rules in force; the code that computes them names the same sources."""

@@ -186,7 +186,7 @@ log_values = st.one_of(
 def test_no_log_makes_a_review_raise_or_warn(values, change, settle, period, kind, missed, combine):
     measure = Measure("x", kind=kind, period=period, missed=missed, combine=combine)
     log = Log.from_pairs([(day(place), value) for place, value in enumerate(values)], measure)
-    json.dumps(review(log, [Change(day(change), "x", settle)]).to_json(), allow_nan=False)
+    assert json.dumps(review(log, [Change(day(change), "x", settle)]).to_json(), allow_nan=False)
 
 
 @settings(deadline=None, max_examples=60)

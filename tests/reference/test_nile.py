@@ -12,7 +12,8 @@ import statsmodels.api as sm
 from statsmodels.tsa.stattools import acf
 
 from analysis import Change, Log, Measure, review
-from analysis.questions.since_when import distances_to_median, plausible_splits
+from analysis.batch.ranks import midranks
+from analysis.questions.since_when import plausible_splits, split_profile
 from analysis.series.carry_over import carry_over
 
 
@@ -70,17 +71,22 @@ def test_it_began_about_1899(nile):
     assert not since.before_change
 
 
-@pytest.mark.parametrize(
-    ("cut", "first", "last"), [(1.92, 1898, 1898), (3.84, 1896, 1899)], ids=["cut 1.92", "cut 3.84"]
-)
-def test_the_years_that_fit_as_last_of_the_old_level(flow, cut, first, last):
-    best, earliest, latest = plausible_splits(flow, cut=cut)
-    assert (1871 + best - 1, 1871 + earliest - 1, 1871 + latest - 1) == (1898, first, last)
+def test_least_squares_gives_the_break_after_1898(flow):
+    # Least squares on the raw flow: the least sum of squares is 1597457.19, and the last years of the old level
+    # within 1.92 of the best are 1897 and 1898.
+    places, loss = split_profile(flow)
+    best = int(places[np.argmin(loss)])
+    assert 1871 + best - 1 == 1898
+    assert np.var(flow[:best]) * best + np.var(flow[best:]) * (100 - best) == pytest.approx(1597457.19, abs=0.01)
+    assert (1871 + places[loss <= 1.92] - 1).tolist() == [1897, 1898]
 
 
-def test_the_least_sum_of_distances(flow):
-    head, tail = distances_to_median(flow), distances_to_median(flow[::-1])[::-1]
-    assert head[27] + tail[28] == pytest.approx(9801)
+def test_ranks_put_the_break_where_pettitts_statistic_does(flow):
+    # Pettitt (1979), Appl. Stat. 28:126-135: K = 1617 after the 28th year; R's documentation says near 1898.
+    ranks = midranks(flow)
+    statistic = 2 * np.cumsum(ranks) - np.arange(1, 101) * 101
+    assert (int(np.argmax(np.abs(statistic))) + 1, np.abs(statistic).max()) == (28, 1617)
+    assert plausible_splits(flow)[0] == 28
 
 
 def test_carry_over_is_taken_within_the_stretches(flow, nile):

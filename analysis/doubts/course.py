@@ -1,0 +1,128 @@
+"""Doubts about the course of the log: it was moving already, began oddly, or began at its worst."""
+
+from __future__ import annotations
+
+import numpy as np
+
+from analysis.answer import Doubt
+from analysis.batch.fences import is_above, is_below
+from analysis.doubts.seen import Seen
+from analysis.questions.did_it_move import rank_sum
+from analysis.series.carry_over import carry_over, widening
+from analysis.series.slope import common_slope
+from analysis.sides import Sides
+
+WEEK = 7
+WEEKS_FOR_WORST_SPELL = 5
+DAYS_FOR_FIRST_WEEK = 21
+SEASON_DAYS = 100
+_SLOPE_BELOW = 0.10
+_PART_OF_SHIFT = 0.6
+"""A slope that would make less than this part of the shift does not explain it."""
+_HIGH_FIRST_WEEK_BELOW = 0.30
+"""New logs mostly begin high, so that a high first week needs less to be named than a low one."""
+_LOW_FIRST_WEEK_BELOW = 0.05
+
+
+def slope_before(seen: Seen) -> Doubt | None:
+    """A steady slope through both stretches, the way of the shift: the change may only lie on it.
+
+    Computed again with the slope taken off. The amount is said a week for daily logs.
+    """
+    if seen.level is None:
+        return None
+    sides = seen.level.sides
+    at, values = [sides.before_at, sides.after_at], [sides.before, sides.after]
+    slope = common_slope(at, values)
+    if slope is None or slope.p >= _SLOPE_BELOW or (slope.a_period > 0) != seen.rose:
+        return None
+    level_rows = sides.less(slope.a_period)
+    slope = common_slope(at, values, widening(carry_over([level_rows.before, level_rows.after])))
+    if slope is None or slope.p >= _SLOPE_BELOW:
+        return None
+    apart = float(np.mean(sides.after_at) - np.mean(sides.before_at))
+    if abs(slope.a_period) * apart < _PART_OF_SHIFT * abs(seen.level.estimate):
+        return None
+    a_week = slope.a_period * WEEK if seen.measure.period == "day" else slope.a_period
+    return Doubt("slope_before", (("slope", a_week),), seen.turns_on(level_rows, _price_of_slope(sides)))
+
+
+def _price_of_slope(sides: Sides) -> float:
+    """By how much the variance of a step grows when a slope is estimated beside it (least squares)."""
+    before, after = sides.before_at[~np.isnan(sides.before)], sides.after_at[~np.isnan(sides.after)]
+    around = np.sum((before - before.mean()) ** 2) + np.sum((after - after.mean()) ** 2)
+    apart = after.mean() - before.mean()
+    return float(1 + apart**2 / (around * (1 / len(before) + 1 / len(after))))
+
+
+def worst_spell(seen: Seen) -> Doubt | None:
+    """The last week before the change was the baseline's lowest (or highest): some way back was due anyway."""
+    sides = seen.sides
+    if sides is None or seen.measure.period != "day" or len(sides.known_before) < WEEKS_FOR_WORST_SPELL * WEEK:
+        return None
+    known = np.flatnonzero(~np.isnan(sides.before))
+    values = sides.before[known]
+    weeks = len(values) // WEEK
+    # Whole weeks counted back from the change.
+    means = values[len(values) - weeks * WEEK :].reshape(weeks, WEEK).mean(axis=1)
+    rose = seen.rose if seen.measure.aim not in ("more", "less") else seen.measure.aim == "more"
+    is_extreme = means[-1] < means[:-1].min() if rose else means[-1] > means[:-1].max()
+    if not is_extreme:
+        return None
+    spell = np.zeros(len(sides.before), dtype=bool)
+    spell[known[-WEEK:]] = True
+    nothing = np.zeros(len(sides.after), dtype=bool)
+    return Doubt("worst_spell", (("weeks", weeks),), seen.turns_on_days(spell, nothing))
+
+
+def first_days(seen: Seen) -> Doubt | None:
+    """The first week of the log is unlike the rest of the baseline: logging itself may have been the change."""
+    sides = seen.sides
+    if sides is None or seen.measure.period != "day" or len(sides.known_before) < DAYS_FOR_FIRST_WEEK:
+        return None
+    if sides.before_days[0] != seen.log.days[0]:
+        return None
+    known = np.flatnonzero(~np.isnan(sides.before))
+    values = sides.before[known]
+    test = rank_sum(values[WEEK:], values[:WEEK], widening(seen.level.carry_over if seen.level else None))
+    is_high = test.share > 0.5
+    if test.p >= (_HIGH_FIRST_WEEK_BELOW if is_high else _LOW_FIRST_WEEK_BELOW):
+        return None
+    week = np.zeros(len(sides.before), dtype=bool)
+    week[known[:WEEK]] = True
+    nothing = np.zeros(len(sides.after), dtype=bool)
+    way = "higher" if is_high else "lower"
+    return Doubt("first_days", (("way", way),), seen.turns_on_days(week, nothing))
+
+
+def odd_day(seen: Seen) -> Doubt | None:
+    """Days beyond a stretch's outer fences on which the claim hangs."""
+    sides = seen.sides
+    if sides is None or not seen.is_claim:
+        return None
+    odd = []
+    for values, stretch in ((sides.before, seen.baseline), (sides.after, seen.stretches[-1])):
+        if stretch.outer_lower_fence is None or stretch.outer_upper_fence is None:
+            odd.append(np.zeros(len(values), dtype=bool))
+        else:
+            odd.append(is_below(values, stretch.outer_lower_fence) | is_above(values, stretch.outer_upper_fence))
+    days = int(odd[0].sum() + odd[1].sum())
+    if not days or not seen.turns_on_days(odd[0], odd[1]):
+        return None
+    return Doubt("odd_day", (("days", days),), alters=True)
+
+
+def season(seen: Seen) -> Doubt | None:
+    """The middles of the two stretches lie months apart, so that the season differs too."""
+    if seen.sides is None or seen.measure.period == "year":
+        return None
+    before, after = seen.sides.before_days, seen.sides.after_days
+    apart = float(np.median(after) - np.median(before))
+    # A log of whole years holds every season on both sides.
+    if not apart >= SEASON_DAYS or min(len(before), len(after)) * _days_a_period(seen) > 365:
+        return None
+    return Doubt("season", (("months", round(apart / 30.4)),), alters=False)
+
+
+def _days_a_period(seen: Seen) -> int:
+    return {"day": 1, "week": 7, "month": 30, "year": 365}[seen.measure.period]
