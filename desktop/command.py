@@ -4,7 +4,9 @@ from __future__ import annotations
 
 import argparse
 import calendar
+import io
 import json
+import os
 import sys
 import textwrap
 from collections.abc import Sequence
@@ -53,7 +55,21 @@ def main(arguments: Sequence[str]) -> int:
         return _refuse(str(refused))
     except (DayfenceError, AnalysisError) as error:
         return _refuse(problem_sentence(error, in_command=True))
-    sys.stdout.write(_as_json(answer) if options.json else _as_text(answer))
+    return _print(_as_json(answer) if options.json else _as_text(answer))
+
+
+def _print(text: str) -> int:
+    """Write the answer out; letters that the terminal does not have are written as escapes."""
+    try:
+        if isinstance(sys.stdout, io.TextIOWrapper):
+            sys.stdout.reconfigure(errors="backslashreplace")
+        sys.stdout.write(text)
+        sys.stdout.flush()
+    except OSError as error:
+        # What is still held back must not be tried again when the program ends.
+        os.dup2(os.open(os.devnull, os.O_WRONLY), sys.stdout.fileno())
+        if not isinstance(error, BrokenPipeError):
+            return _refuse(f"The answer cannot be written out: {error.strerror}.")
     return 0
 
 
@@ -172,7 +188,8 @@ def _measure(options: argparse.Namespace, found: Measure) -> Measure:
 
 
 def _as_json(answer: Review) -> str:
-    return json.dumps(answer.to_json(), ensure_ascii=False, indent=2, allow_nan=False) + "\n"
+    is_unicode = (sys.stdout.encoding or "").lower().startswith("utf")
+    return json.dumps(answer.to_json(), ensure_ascii=not is_unicode, indent=2, allow_nan=False) + "\n"
 
 
 def _as_text(answer: Review) -> str:

@@ -35,7 +35,6 @@ ExchangeReason = Literal[
     "which century",
     "which decimal mark",
     "unknown column",
-    "day written twice",
 ]
 
 

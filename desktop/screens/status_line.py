@@ -65,7 +65,7 @@ def trouble_sentence(trouble: Exception) -> str:
     """Why something is not saved."""
     if isinstance(trouble, DayfenceError):
         return problem_sentence(trouble)
-    return "Not saved: something went wrong in the program. Your earlier entries are safe."
+    return "Not saved: something went wrong in the program. Your earlier entries are kept."
 
 
 def _saved_words(session: Session) -> str:

@@ -13,7 +13,7 @@ Told = Callable[[Fields, Speech], str]
 _SAME = "Without them the answer is the same."
 _OTHER = "Without them the answer is no longer sure."
 _SAME_WEEK = "Without that week the answer is the same."
-_OTHER_WEEK = "Without that week the answer is no longer sure."
+_OTHER_WEEK = "Without that week it is not sure."
 
 
 def doubt_sentence(doubt: Doubt, speech: Speech) -> str:
@@ -144,12 +144,8 @@ SENTENCES: dict[str, tuple[Told, str, str]] = {
         "The answer holds beyond that.",
         "The change adds nothing sure to it.",
     ),
-    "worst_spell": (
-        _worst_spell,
-        "Without that week the answer is the same.",
-        "Without that week it is not sure.",
-    ),
-    "first_days": (_first_days, "Without that week the answer is the same.", "Without that week it is not sure."),
+    "worst_spell": (_worst_spell, _SAME_WEEK, _OTHER_WEEK),
+    "first_days": (_first_days, _SAME_WEEK, _OTHER_WEEK),
     "odd_day": (_odd_day, _SAME, _OTHER),
     "missing_more": (
         _missing_more,

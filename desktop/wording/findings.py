@@ -7,7 +7,7 @@ from datetime import date
 
 import numpy as np
 
-from analysis.answer import Answer, Carried, Review, Since, Stretch
+from analysis.answer import Answer, Carried, HowMuch, HowOften, Review, Shift, Since, Stretch
 from analysis.questions.did_it_move import CLAIMS, FEWEST_AFTER, FEWEST_BEFORE
 from desktop.wording.cautions import CAUTION
 from desktop.wording.days import DayWords
@@ -15,7 +15,7 @@ from desktop.wording.doubts import doubt_sentence
 from desktop.wording.numbers import Speech, chance_in_100, decimals_for
 
 NO_CAUSE = (
-    "This compares days before and after. It cannot tell what caused a difference: "
+    "This compares before with after. It cannot tell what caused a difference: "
     "other things may have changed at the same time."
 )
 STEADY_BELOW = 0.01
@@ -96,7 +96,12 @@ def outside_sentence(carried: Carried, days: int, speech: Speech) -> str:
 def _luck_alone(expected: float) -> str:
     if expected < 0.5:
         return "By luck alone there would most often be none."
-    return f"About {round(expected)} would be by luck alone."
+    return f"About {int(expected + 0.5)} would be by luck alone."
+
+
+def _is_told_by_amount(often: HowOften, much: HowMuch) -> bool:
+    """Whether it is how much that moved, and not on how many days."""
+    return often.low <= 0 <= often.high and not much.low <= 0 <= much.high
 
 
 class _Teller:
@@ -186,7 +191,8 @@ class _Teller:
                 f"{side} fence of {self.speech.number(fence)}."
             )
         if len(outside) > _LISTED:
-            told.append(f"The other {len(outside) - _LISTED} are marked on the chart.")
+            others = len(outside) - _LISTED
+            told.append(f"The other {'one is' if others == 1 else f'{others} are'} marked on the chart.")
         told.append(f"One {self.speech.one} alone says nothing about the level.")
         return told
 
@@ -242,21 +248,34 @@ class _Teller:
     def _levels(self, before: Stretch, after: Stretch, answer: Answer) -> str:
         """Before and since in one breath, in the terms that mean most for this log."""
         speech = self.speech
-        often = answer.how_often
-        if often is not None:
-            done, of = often.after
-            was, was_of = often.before
-            return f"on {done} of {of} {speech.many} there was some, on {was} of {was_of} before."
+        if answer.how_often is not None:
+            much = answer.how_much
+            if much is not None and _is_told_by_amount(answer.how_often, much):
+                is_much = f"{speech.with_unit(much.after)} on a {speech.one} with some"
+                return f"{is_much}, {speech.number(much.before)} before."
+            return f"on {self._often(answer.how_often)}"
         assert before.median is not None
         assert after.median is not None
         was_middle, is_middle = speech.number(before.median), speech.with_unit(after.median)
         if speech.number(after.median) == was_middle and answer.shift is not None:
-            direction = "above" if answer.direction == "more" else "below"
-            return (
-                f"{answer.shift.better_days} of {answer.shift.days} {speech.many} since are {direction} "
-                f"the old middle of {speech.with_unit(before.median)}."
-            )
+            return self._beyond_old_middle(after, before.median, answer)
         return f"{is_middle} on a middle {speech.one}, {was_middle} before."
+
+    def _often(self, often: HowOften) -> str:
+        (done, of), (was, was_of) = often.after, often.before
+        return f"{done} of {of} {self.speech.many} there was some, on {was} of {was_of} before."
+
+    def _beyond_old_middle(self, after: Stretch, old: float, answer: Answer) -> str:
+        """Where the two middles are alike: how many periods lie beyond the old one, whatever is wanted."""
+        points = self.review.points
+        values = points.values[(points.first >= after.first) & (points.first <= after.last) & points.known]
+        is_more = answer.direction == "more"
+        beyond = int(np.sum(values > old) if is_more else np.sum(values < old))
+        verb = "is" if beyond == 1 else "are"
+        return (
+            f"{beyond} of {len(values)} {self.speech.many} since {verb} {'above' if is_more else 'below'} "
+            f"the old middle of {self.speech.with_unit(old)}."
+        )
 
     def _did_it_move(self, before: Stretch, after: Stretch, answer: Answer) -> list[str]:
         speech = self.speech
@@ -282,7 +301,9 @@ class _Teller:
         assert shift is not None
         told = []
         if answer.how_often is not None:
-            if answer.how_much is not None:
+            if answer.how_much is not None and _is_told_by_amount(answer.how_often, answer.how_much):
+                told.append(f"On {self._often(answer.how_often)}")
+            elif answer.how_much is not None:
                 told.append(
                     f"On those {speech.many} the middle was {speech.number(answer.how_much.before)} before "
                     f"and is {speech.with_unit(answer.how_much.after)} since."
@@ -293,11 +314,11 @@ class _Teller:
                 f"{speech.number(after.median)} since."
             )
         if shift.low == shift.high == 0:
-            told.append("Day for day there is no difference to see.")
-        elif answer.sureness == "too early":
-            told.append(f"The difference could be {speech.between(shift.low, shift.high)}.")
+            told.append(f"{speech.one.capitalize()} for {speech.one} there is no difference to see.")
         else:
-            told.append(f"The difference is probably {speech.between(shift.low, shift.high)}.")
+            told.append(
+                f"The difference {self._how_likely(answer, shift)} {speech.between(shift.low, shift.high)}."
+            )
         told += self._better_days(before, answer)
         if answer.spread_change is not None and answer.spread_change.word != "alike":
             told.append(f"The {speech.many} are {answer.spread_change.word} than before.")
@@ -311,6 +332,14 @@ class _Teller:
             way = speech.way(1 if answer.direction == "more" else -1).capitalize()
             told.append(f"{way}, which is {'' if wanted == answer.direction else 'not '}the way you wanted.")
         return told
+
+    def _how_likely(self, answer: Answer, shift: Shift) -> str:
+        if answer.sureness == "too early":
+            return "could be"
+        if shift.low < 0 < shift.high:
+            return "may be"
+        is_one_number = self.speech.number(shift.low) == self.speech.number(shift.high)
+        return "is" if is_one_number else "is probably"
 
     def _better_days(self, before: Stretch, answer: Answer) -> list[str]:
         shift, aim = answer.shift, self.review.measure.aim

@@ -48,7 +48,8 @@ def choice_label(reason: str, choice: object) -> str:
 
 
 def _name(fields: Fields) -> str:
-    return Path(str(fields.get("path", "the file"))).name
+    path = str(fields.get("path", "the file"))
+    return Path(path).name or path
 
 
 def _listed(choices: object) -> str:
@@ -144,7 +145,7 @@ _STORAGE: dict[str, Callable[[Fields], str]] = {
     ),
     "read only": lambda _: "You can read everything, but nothing can be changed in this place.",
     "disk full": lambda _: (
-        "Not saved: the disk is full. Your earlier entries are safe. Make room, then type it again."
+        "Not saved: the disk is full. Your earlier entries are kept. Make room, then type it again."
     ),
     "busy": lambda _: (
         "Not saved: this journal is being written to by another window. Close it there and try again."
@@ -163,7 +164,7 @@ _STORAGE: dict[str, Callable[[Fields], str]] = {
         "Check that you may write in this folder, or choose another."
     ),
     "refused value": lambda _: "Not saved: this value is outside what a journal can hold.",
-    "disk error": lambda _: "Not saved: the disk did not take it. Your earlier entries are safe. Check the disk.",
+    "disk error": lambda _: "Not saved: the disk did not take it. Your earlier entries are kept. Check the disk.",
 }
 
 _ANALYSIS: dict[str, Callable[[Fields], str]] = {

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 from collections import Counter
 from collections.abc import Callable, Iterable
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from datetime import date
 from zlib import crc32
 
@@ -26,7 +26,7 @@ class Case:
 
     values: Values
     change: int
-    measure: Measure = Measure()
+    measure: Measure = field(default_factory=Measure)
     kinds: tuple[str, ...] = ()
     baseline_from: int | None = None
 

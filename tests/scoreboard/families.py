@@ -13,8 +13,6 @@ from math import erf, exp, sqrt
 import numpy as np
 from numpy.typing import NDArray
 
-from analysis import Measure
-
 Values = NDArray[np.float64]
 Draw = Callable[[np.random.Generator, int], Values]
 LEVEL = 10.0
@@ -37,7 +35,7 @@ class Family:
 
     name: str
     draw: Draw
-    finish: Callable[[np.random.Generator, Values], Values] = lambda rng, values: values
+    finish: Callable[[np.random.Generator, Values], Values] = lambda _, values: values
     measure: dict[str, object] = field(default_factory=dict)
     carry: float = 0.0
     information: float = 1.0
@@ -51,7 +49,9 @@ class Family:
 
     def oracle(self, m: int, n: int, move: float) -> float:
         """Chance that the best test, which knows law and carry-over, claims the move in its direction."""
-        precision = 1 / (1 / _precision(round(m * self.logged), self.carry) + 1 / _precision(round(n * self.logged), self.carry))
+        precision = 1 / (
+            1 / _precision(round(m * self.logged), self.carry) + 1 / _precision(round(n * self.logged), self.carry)
+        )
         return _above(move * sqrt(precision * self.information))
 
 

@@ -12,7 +12,15 @@ from scipy.stats import norm
 
 from analysis import Measure, Review
 from tests.scoreboard.cells import SIZES, Case, Make, is_claim, is_naive_claim
-from tests.scoreboard.families import CONTINUOUS, HARDER, LEVEL, SESSION_MEASURE, Family, carried, poisson, sessions
+from tests.scoreboard.families import (
+    CONTINUOUS,
+    HARDER,
+    LEVEL,
+    SESSION_MEASURE,
+    Family,
+    poisson,
+    sessions,
+)
 
 MOVES = (0.5, 1.0, 1.5, 2.0)
 Facts = Callable[[Case, Review], Iterable[str]]
@@ -40,7 +48,8 @@ def _of_family(family: Family, m: int, n: int, move: float) -> Make:
     return lambda rng: Case(family.log(rng, m, n, move), m, measure)
 
 
-def _claim_facts(case: Case, answer: Review) -> Iterable[str]:
+def claim_facts(case: Case, answer: Review) -> Iterable[str]:
+    """What the answer claims, by our rule and by the rule of thumb, and what it doubts."""
     if is_claim(answer):
         yield "claim"
         yield f"claim {answer.answer.direction}"
@@ -61,7 +70,7 @@ def unchanged() -> list[Cell]:
     cells = []
     for m, n in SIZES:
         for family in (*CONTINUOUS, *HARDER):
-            cells.append(Cell("A", family.name, f"{m},{n}", _of_family(family, m, n, 0.0), _claim_facts))
+            cells.append(Cell("A", family.name, f"{m},{n}", _of_family(family, m, n, 0.0), claim_facts))
         others: dict[str, Make] = {
             "counts, mean 6": lambda rng, m=m, n=n: Case(poisson(rng, m + n), m, Measure("x", kind="count")),
         }
@@ -73,7 +82,7 @@ def unchanged() -> list[Cell]:
             others[name] = lambda rng, m=m, n=n, a_week=a_week, fixed=fixed: Case(
                 sessions(rng, m + n, a_week, fixed=fixed), m, Measure("x", **SESSION_MEASURE)
             )
-        cells += [Cell("A", name, f"{m},{n}", make, _claim_facts) for name, make in others.items()]
+        cells += [Cell("A", name, f"{m},{n}", make, claim_facts) for name, make in others.items()]
     return cells
 
 
@@ -83,14 +92,16 @@ def moved() -> list[Cell]:
     for m, n in SIZES[1:]:
         for family in (*CONTINUOUS, *HARDER):
             for move in MOVES:
-                cells.append(Cell("B", family.name, f"{m},{n} {move}", _of_family(family, m, n, move), _claim_facts))
+                cells.append(
+                    Cell("B", family.name, f"{m},{n} {move}", _of_family(family, m, n, move), claim_facts)
+                )
         for a_week in (4, 5, 6):
 
             def make(rng: np.random.Generator, m: int = m, n: int = n, a_week: int = a_week) -> Case:
                 values = np.r_[sessions(rng, m, 3, fixed=False), sessions(rng, n, a_week, fixed=False)]
                 return Case(values, m, Measure("x", **SESSION_MEASURE))  # type: ignore[arg-type]
 
-            cells.append(Cell("B", "3 a week, any days", f"{m},{n} to {a_week}", make, _claim_facts))
+            cells.append(Cell("B", "3 a week, any days", f"{m},{n} to {a_week}", make, claim_facts))
     return cells
 
 
@@ -125,14 +136,16 @@ def ranges() -> list[Cell]:
     for m, n in SIZES[1:]:
         for family in (CONTINUOUS[0], CONTINUOUS[3], CONTINUOUS[4]):
             for move in (1.0, 1.5, 2.0):
-                cells.append(Cell("D", family.name, f"{m},{n} {move}", _of_family(family, m, n, move), _since_facts))
+                cells.append(
+                    Cell("D", family.name, f"{m},{n} {move}", _of_family(family, m, n, move), _since_facts)
+                )
 
             def early(rng: np.random.Generator, family: Family = family, m: int = m, n: int = n) -> Case:
                 values = LEVEL + family.draw(rng, m + n)
                 values[m - 7 :] += 1.5
                 return Case(values, m)
 
-            cells.append(Cell("D", family.name, f"{m},{n} a week before", early, _since_facts))
+            cells.append(Cell("D", family.name, f"{m},{n} early", early, _since_facts))
     return cells
 
 
@@ -155,7 +168,13 @@ def luck() -> list[Cell]:
         for family in families:
             cells.append(Cell("E", family.name, str(m), _of_family(family, m, 28, 0.0), _outside_facts))
         cells.append(
-            Cell("E", "counts, mean 6", str(m), lambda rng, m=m: Case(poisson(rng, m + 28), m, Measure("x", kind="count")), _outside_facts)
+            Cell(
+                "E",
+                "counts, mean 6",
+                str(m),
+                lambda rng, m=m: Case(poisson(rng, m + 28), m, Measure("x", kind="count")),
+                _outside_facts,
+            )
         )
     return cells
 
@@ -231,7 +250,7 @@ def traps() -> list[Cell]:
 
 
 def _trap_facts(case: Case, answer: Review) -> Iterable[str]:
-    yield from _claim_facts(case, answer)
+    yield from claim_facts(case, answer)
     values = case.values
     before, after = values[: case.change], values[case.change :]
     before, after = before[~np.isnan(before)], after[~np.isnan(after)]
