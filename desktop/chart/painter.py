@@ -389,7 +389,8 @@ def _edge_words(painter: QPainter, frame: Frame, picture: Picture, style: Style)
     for edge, text in picture.edge_words:
         painter.setPen(style.side("after" if text.startswith("own") else "before"))
         box = QRectF(frame.rect.left(), heights[edge], frame.rect.width() - style.size * 0.6, metrics.height())
-        painter.drawText(box, Qt.AlignmentFlag.AlignRight, text)
+        words = metrics.elidedText(text, Qt.TextElideMode.ElideRight, box.width())
+        painter.drawText(box, Qt.AlignmentFlag.AlignRight, words)
         heights[edge] += metrics.height() if edge == "above" else -metrics.height()
 
 

@@ -34,6 +34,9 @@ _ROOM = 0.06
 _FENCE_REACH = 0.3
 """A fence no further beyond the days than this part of their range is drawn; beyond, it is told in words."""
 
+_EDGE_ROOM = 0.09
+"""Room for a line of words at the upper edge, of the values' range."""
+
 _MOST_LABELS = 40
 
 
@@ -195,6 +198,8 @@ class _Composer:
         marks = self._marks()
         low, high = self._value_range(marks.y)
         bands, lines, labels, edge_words = self._levels(low, high)
+        # Words at the upper edge get room of their own, so that no mark stands in them.
+        high += (high - low) * _EDGE_ROOM * sum(edge == "above" for edge, _ in edge_words)
         return Picture(
             period=self.points.period,
             x0=self.first_day,
@@ -395,7 +400,7 @@ class _Composer:
         where = {"above": "above the upper fence", "below": "below the lower fence"}.get(SHAPES[shape], "")
         at = date.fromordinal(start)
         name = long_day(at) if self.points.period == "day" else self.days.name(start)
-        said = f"{name}: {self.speech.with_unit(value)}"
+        said = f"{name[0].upper()}{name[1:]}: {self.speech.with_unit(value)}"
         if not where:
             return f"{said}."
         baseline = self.stretches[0]

@@ -26,16 +26,21 @@ def day_ticks(x0: float, x1: float, most: int, week_start: int = 0) -> list[tupl
     first, last = math.ceil(max(x0, 1)), math.floor(x1)
     for step in _DAY_STEPS:
         if span / step <= most:
-            # Whole weeks begin on the week's first day; day number 1 was a Monday.
-            begin = first if step < 7 else first + (week_start + 1 - first) % 7
-            return [(float(day), _day_word(date.fromordinal(day))) for day in range(begin, last + 1, step)]
+            return _day_ticks(first, last, step, week_start)
     for step in _MONTH_STEPS:
         if span / 30.4 / step <= most:
-            return _month_ticks(first, last, step)
+            # A little more than four weeks may hold no first of a month.
+            return _month_ticks(first, last, step) or _day_ticks(first, last, _DAY_STEPS[-1], week_start)
     for step in _YEAR_STEPS:
         if span / 365.25 / step <= most:
             return _year_ticks(first, last, step)
     return _year_ticks(first, last, _YEAR_STEPS[-1])
+
+
+def _day_ticks(first: int, last: int, step: int, week_start: int) -> list[tuple[float, str]]:
+    # Whole weeks begin on the week's first day; day number 1 was a Monday.
+    begin = first if step < 7 else first + (week_start + 1 - first) % 7
+    return [(float(day), _day_word(date.fromordinal(day))) for day in range(begin, last + 1, step)]
 
 
 def _day_word(day: date) -> str:

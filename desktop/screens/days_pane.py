@@ -28,9 +28,11 @@ class DaysPane(QTableView):
 
     Signals:
         said: a sentence about what was just done or could not be done.
+        layout_changed: the columns, or the room they need, are others.
     """
 
     said = Signal(str)
+    layout_changed = Signal()
 
     def __init__(self, parent: QWidget | None = None) -> None:
         super().__init__(parent)
@@ -161,6 +163,7 @@ class DaysPane(QTableView):
             self.setColumnWidth(column, widest + 3 * metrics.averageCharWidth())
         self.horizontalHeader().setStretchLastSection(True)
         self.horizontalHeader().setMinimumSectionSize(metrics.averageCharWidth() * 6)
+        self.layout_changed.emit()
 
     def set_paper(self, paper: str) -> None:
         """Give titles and days the paper of the cells, without the style's raised edges."""
@@ -172,6 +175,8 @@ class DaysPane(QTableView):
     @property
     def wanted_width(self) -> int:
         """Wide enough for the days, every measure and a short note."""
+        if self.model() is None:
+            return self.minimumWidth()
         measures = sum(self.columnWidth(column) for column in range(self.model().columnCount() - 1))
         note = QFontMetrics(self.font()).averageCharWidth() * 9
         return self.verticalHeader().width() + measures + note + self.verticalScrollBar().sizeHint().width()

@@ -4,8 +4,8 @@ from __future__ import annotations
 
 from html import escape
 
-from PySide6.QtCore import QUrl
-from PySide6.QtGui import QFontInfo
+from PySide6.QtCore import QEvent, QUrl
+from PySide6.QtGui import QFont, QFontInfo
 from PySide6.QtWidgets import QFrame, QLabel, QTextBrowser, QVBoxLayout, QWidget
 
 from analysis import Review
@@ -15,6 +15,8 @@ from desktop.wording.findings import findings_of
 from desktop.wording.worked_out import worked_out
 
 _HOW = "how"
+_CAUTION_PART = 0.9
+"""The caution is a little smaller than the rest, so that it leaves the findings room in large text."""
 
 
 class FindingsPane(QWidget):
@@ -55,6 +57,15 @@ class FindingsPane(QWidget):
         """Tell a review; None where there is no measure yet."""
         if review is not self._review:
             self._review = review
+            self._fill()
+
+    def changeEvent(self, event: QEvent) -> None:
+        """Follow the text size."""
+        super().changeEvent(event)
+        if event.type() == QEvent.Type.FontChange:
+            small = QFont(self.font())
+            small.setPixelSize(round(QFontInfo(self.font()).pixelSize() * _CAUTION_PART))
+            self._caution.setFont(small)
             self._fill()
 
     def _fill(self) -> None:

@@ -62,7 +62,7 @@ class MainWindow(QMainWindow):
         self._clock.timeout.connect(self._look_at_calendar)
         self._clock.start(_CLOCK_LOOK)
         self.resize(1360, 820)
-        self.settings.restore_places(self, self.workspace.panes)
+        self.workspace.restore_panes(self.settings.restore_places(self))
         self._apply_theme()
         self._follow_session()
 
@@ -293,7 +293,7 @@ class MainWindow(QMainWindow):
         if not self._let_go():
             event.ignore()
             return
-        self.settings.keep_places(self, self.workspace.panes)
+        self.settings.keep_places(self, self.workspace.chosen_panes)
         event.accept()
 
     # Inside.
@@ -332,8 +332,7 @@ class MainWindow(QMainWindow):
         self.workspace.days.show_days(table)
         self.workspace.days.selectionModel().currentColumnChanged.connect(self._follow_column)
         self._pages.setCurrentWidget(self.workspace)
-        if not self.settings.has_panes:
-            self.workspace.fit_days()
+        self.workspace.fit_days()
         self._follow_session()
         session.make_review()
         self.workspace.days.setFocus()
@@ -347,6 +346,9 @@ class MainWindow(QMainWindow):
         self.workspace.days.finish_typing()
         session.wait_until_written()
         QApplication.processEvents()
+        if self.workspace.days.state() == DaysPane.State.EditingState:
+            # What was being typed was asked about, and is being typed again.
+            return False
         if session.trouble is not None:
             sentence = f"{trouble_sentence(session.trouble)}\n\nLeave without what is not saved?"
             if QMessageBox.question(self, "Dayfence", sentence) != QMessageBox.StandardButton.Yes:

@@ -4,8 +4,8 @@ from __future__ import annotations
 
 from pathlib import Path
 
-from PySide6.QtCore import QSettings
-from PySide6.QtWidgets import QMainWindow, QSplitter
+from PySide6.QtCore import QByteArray, QSettings
+from PySide6.QtWidgets import QMainWindow
 
 from desktop.screens.theme import ThemeName
 
@@ -39,21 +39,16 @@ class Settings:
         """Remember a theme."""
         self._stored.setValue("theme", theme)
 
-    @property
-    def has_panes(self) -> bool:
-        """Whether the person's own widths of the panes are known."""
-        return self._stored.value("panes") is not None
-
-    def keep_places(self, window: QMainWindow, panes: QSplitter) -> None:
-        """Remember where the window is and how wide its panes are."""
+    def keep_places(self, window: QMainWindow, panes: QByteArray | None) -> None:
+        """Remember where the window is and, where the person chose them, the widths of its panes."""
         self._stored.setValue("geometry", window.saveGeometry())
-        self._stored.setValue("panes", panes.saveState())
+        if panes is not None:
+            self._stored.setValue("panes", panes)
         self._stored.sync()
 
-    def restore_places(self, window: QMainWindow, panes: QSplitter) -> None:
-        """Put the window and its panes where they were."""
-        geometry, widths = self._stored.value("geometry"), self._stored.value("panes")
-        if geometry is not None:
+    def restore_places(self, window: QMainWindow) -> QByteArray | None:
+        """Put the window where it was; returns the widths the person chose for its panes, if any."""
+        geometry, panes = self._stored.value("geometry"), self._stored.value("panes")
+        if isinstance(geometry, QByteArray):
             window.restoreGeometry(geometry)
-        if widths is not None:
-            panes.restoreState(widths)
+        return panes if isinstance(panes, QByteArray) else None

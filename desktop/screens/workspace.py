@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from PySide6.QtCore import Qt
+from PySide6.QtCore import QByteArray, Qt
 from PySide6.QtGui import QFont, QFontInfo
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QSplitter, QVBoxLayout, QWidget
 
@@ -11,6 +11,7 @@ from desktop.screens.chart_pane import ChartPane
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.findings_pane import FindingsPane
 from desktop.screens.status_line import StatusLine
+from desktop.screens.theme import PLAIN_SIZE
 
 _LEAST_WIDTHS = (200, 280, 240)
 _FIRST_WIDTHS = (350, 660, 350)
@@ -40,6 +41,9 @@ class Workspace(QWidget):
             self.panes.addWidget(pane)
         self.panes.setSizes(list(_FIRST_WIDTHS))
         self.panes.setStretchFactor(1, 1)
+        self._moved_by_hand = False
+        self.panes.splitterMoved.connect(self._keep_as_moved)
+        self.days.layout_changed.connect(self.fit_days)
         layout = QVBoxLayout(self)
         layout.setContentsMargins(0, 0, 0, 0)
         layout.setSpacing(0)
@@ -47,12 +51,28 @@ class Workspace(QWidget):
         layout.addWidget(self.panes, 1)
         layout.addWidget(self.status)
 
+    def restore_panes(self, widths: QByteArray | None) -> None:
+        """Take the widths the person gave the panes earlier, if any."""
+        if widths is not None:
+            self._moved_by_hand = self.panes.restoreState(widths)
+
+    @property
+    def chosen_panes(self) -> QByteArray | None:
+        """The widths the person gave the panes; None where they were never moved."""
+        return self.panes.saveState() if self._moved_by_hand else None
+
     def fit_days(self) -> None:
-        """Give the days the room their measures need, up to a third of the window."""
+        """Give the days the room their measures need, up to a third, unless the person chose the widths."""
+        if self._moved_by_hand:
+            return
         whole = sum(self.panes.sizes()) or sum(_FIRST_WIDTHS)
         days = min(self.days.wanted_width, whole // 3)
-        findings = min(_FIRST_WIDTHS[2], whole // 3)
+        larger = QFontInfo(self.font()).pixelSize() / PLAIN_SIZE
+        findings = min(round(_FIRST_WIDTHS[2] * larger), whole * 2 // 5)
         self.panes.setSizes([days, whole - days - findings, findings])
+
+    def _keep_as_moved(self) -> None:
+        self._moved_by_hand = True
 
     def show_session(self, session: Session) -> None:
         """Say whose log and which measure it is, and how things stand."""

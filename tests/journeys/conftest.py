@@ -11,7 +11,7 @@ from tempfile import mkdtemp
 import pytest
 from PySide6.QtCore import Qt, QTimer
 from PySide6.QtTest import QTest
-from PySide6.QtWidgets import QApplication, QLineEdit
+from PySide6.QtWidgets import QAbstractItemDelegate, QApplication, QLineEdit
 
 from desktop.screens.main_window import MainWindow
 from desktop.screens.theme import load_faces
@@ -109,4 +109,7 @@ def person(qtbot, journal_folder):
     one = Person(qtbot, journal_folder)
     yield one
     if one.window is not None and one.window.session is not None:
+        # A test that failed half-way leaves an open cell, whose question nobody would answer.
+        for editor in one.days.viewport().findChildren(QLineEdit):
+            one.days.closeEditor(editor, QAbstractItemDelegate.EndEditHint.RevertModelCache)
         one.window.close()
