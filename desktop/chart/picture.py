@@ -198,8 +198,10 @@ class _Composer:
         marks = self._marks()
         low, high = self._value_range(marks.y)
         bands, lines, labels, edge_words = self._levels(low, high)
-        # Words at the upper edge get room of their own, so that no mark stands in them.
-        high += (high - low) * _EDGE_ROOM * sum(edge == "above" for edge, _ in edge_words)
+        if words_above := sum(edge == "above" for edge, _ in edge_words):
+            # They get room of their own, so that no mark stands in them; a fence that it holds is drawn after all.
+            high += (high - low) * _EDGE_ROOM * words_above
+            bands, lines, labels, edge_words = self._levels(low, high)
         return Picture(
             period=self.points.period,
             x0=self.first_day,

@@ -46,8 +46,14 @@ class Person:
             dialog = QApplication.activeModalWidget()
             if dialog is None:
                 QTimer.singleShot(20, when_open)
-            else:
+                return
+            # A dialog that is still there after seconds is left, so that the test fails instead of waiting.
+            QTimer.singleShot(10_000, dialog, dialog.reject)
+            try:
                 act(dialog)
+            except BaseException:
+                dialog.reject()
+                raise
 
         QTimer.singleShot(20, when_open)
 
