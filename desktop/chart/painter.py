@@ -24,6 +24,8 @@ BELOW_LINES = 3.6
 """Height of the part below the plot: ticks, days, the bracket."""
 
 _TICK_STRIP = 0.7
+_LEAST_JOINED = 7
+"""Days nearer to one another than this part of a letter are not joined: the lines would hide the days."""
 _DASHES = {
     "fence": Qt.PenStyle.SolidLine,
     "carried fence": Qt.PenStyle.DashLine,
@@ -272,8 +274,9 @@ def _days(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> No
         return
     x = frame.rect.left() + (marks.x - frame.x0) / (frame.x1 - frame.x0) * frame.rect.width()
     y = frame.rect.bottom() - (marks.y - frame.y0) / (frame.y1 - frame.y0) * frame.rect.height()
-    _joins(painter, x, y, marks.joined, seen, style)
     one = frame.rect.width() / max(int(seen.sum()), 1)
+    if one >= style.size / _LEAST_JOINED:
+        _joins(painter, x, y, marks.joined, seen, style)
     radius = min(max(one * 0.4, style.size / 11), style.size / 3.1)
     for place, name in enumerate(SHAPES):
         chosen = seen & (marks.shape == place)

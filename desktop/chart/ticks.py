@@ -31,10 +31,10 @@ def day_ticks(x0: float, x1: float, most: int, week_start: int = 0) -> list[tupl
         if span / 30.4 / step <= most:
             # A little more than four weeks may hold no first of a month.
             return _month_ticks(first, last, step) or _day_ticks(first, last, _DAY_STEPS[-1], week_start)
-    for step in _YEAR_STEPS:
-        if span / 365.25 / step <= most:
-            return _year_ticks(first, last, step)
-    return _year_ticks(first, last, _YEAR_STEPS[-1])
+    fitting = [step for step in _YEAR_STEPS if span / 365.25 / step <= most] or [_YEAR_STEPS[-1]]
+    # A few years may hold no round one: then finer steps are tried, down to single years.
+    finer = [step for step in reversed(_YEAR_STEPS) if step <= fitting[0]]
+    return next((ticks for step in finer if (ticks := _year_ticks(first, last, step))), [])
 
 
 def _day_ticks(first: int, last: int, step: int, week_start: int) -> list[tuple[float, str]]:

@@ -325,7 +325,8 @@ class DaysTable(QAbstractTableModel):
             case Qt.ItemDataRole.DisplayRole:
                 if measure is None:
                     return "Note"
-                return "\n".join([*measure.title.split(maxsplit=1), measure.unit]).strip()
+                unit = "" if measure.unit.casefold() == measure.title.casefold() else measure.unit
+                return "\n".join([*measure.title.split(maxsplit=1), unit]).strip()
             case Qt.ItemDataRole.TextAlignmentRole:
                 side = Qt.AlignmentFlag.AlignLeft if measure is None else Qt.AlignmentFlag.AlignRight
                 return side | Qt.AlignmentFlag.AlignVCenter
