@@ -256,7 +256,12 @@ def _slope_of_one(points: Points, edge: Edge) -> Slope | None:
     """The slope of a log without a change."""
     _, first, last = edge
     values = points.values[points.within(first, last)]
-    row = common_slope([np.arange(len(values))], [values], widening(carry_over([values])))
+    at = np.arange(len(values), dtype=np.int64)
+    rough = common_slope([at], [values])
+    if rough is None:
+        return None
+    # Carry-over is that of the days around the slope, which by itself would look like nothing else.
+    row = common_slope([at], [values], widening(carry_over([values - rough.a_period * at])))
     return Slope(row.a_period, None, row.p) if row else None
 
 

@@ -24,6 +24,7 @@ ZERO_HEAVY_SHARE = 0.25
 OFTEN_PART = 0.8
 """Of the chance of a false claim on a zero-heavy log, how much goes to *how often*; the rest to *how much*."""
 
+FEWEST_ACTIVE = 4
 WEEK = 7
 FEWEST_WEEKS = 4
 REGULAR_PART = 0.5
@@ -174,18 +175,29 @@ def chance_of_shares(before: tuple[int, int], after: tuple[int, int], widened: f
 
 def _chance_by_share(sides: Sides, widened: float) -> float:
     """The chance for a log told by shares: how often, and for amounts how much on those days, together."""
-    before, after = sides.known_before, sides.known_after
-    often = chance_of_shares((int(np.sum(before > 0)), len(before)), (int(np.sum(after > 0)), len(after)), widened)
-    by_week = _chance_by_week(sides)
-    if by_week is not None:
-        often = by_week
+    often = _chance_often(sides, widened)
     if sides.measure.kind == "yes/no":
         return often
-    active_before, active_after = before[before > 0], after[after > 0]
-    much = 1.0
-    if min(len(active_before), len(active_after)) >= 4:
-        much = rank_sum(active_before, active_after, widened).p
-    return min(1.0, often / OFTEN_PART, much / (1 - OFTEN_PART))
+    return min(1.0, often / OFTEN_PART, _chance_much(sides, widened) / (1 - OFTEN_PART))
+
+
+def _chance_often(sides: Sides, widened: float) -> float:
+    """The chance of a gap in how many days there was some; by whole weeks where those are kept to a plan."""
+    by_week = _chance_by_week(sides)
+    if by_week is not None:
+        return by_week
+    before, after = sides.known_before, sides.known_after
+    done_before, done_after = int(np.sum(before > 0)), int(np.sum(after > 0))
+    return chance_of_shares((done_before, len(before)), (done_after, len(after)), widened)
+
+
+def _chance_much(sides: Sides, widened: float) -> float:
+    """The chance of a gap in how much there was on days with some; 1 where either side has hardly any."""
+    before, after = sides.known_before, sides.known_after
+    before, after = before[before > 0], after[after > 0]
+    if sides.measure.kind == "yes/no" or min(len(before), len(after)) < FEWEST_ACTIVE:
+        return 1.0
+    return rank_sum(before, after, widened).p
 
 
 def _chance_by_week(sides: Sides) -> float | None:
@@ -221,7 +233,12 @@ def _days_done_a_week(values: Values) -> Values:
 def _way(sides: Sides, estimate: float, share: float) -> Direction:
     """The way the level moved; where the middle difference is none, the way most pairs or days go."""
     if sides.told_by_share:
-        gap = float(np.mean(sides.known_after > 0) - np.mean(sides.known_before > 0))
-        estimate = gap or share - 0.5
+        before, after = sides.known_before, sides.known_after
+        often = _chance_often(sides, 1.0) / OFTEN_PART
+        much = _chance_much(sides, 1.0) / (1 - OFTEN_PART)
+        if often <= much:
+            estimate = float(np.mean(after > 0) - np.mean(before > 0))
+        else:
+            estimate = rank_sum(before[before > 0], after[after > 0]).share - 0.5
     moved = estimate or share - 0.5
     return "more" if moved > 0 else "less" if moved < 0 else "none"

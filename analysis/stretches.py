@@ -55,7 +55,9 @@ def edges_of(changes: Sequence[Change], baseline: tuple[date, date] | None, begi
         edges: list[Edge] = [(None, first, last)]
         following = [change.day.toordinal() - 1 for change in changes[1:]] + [end]
         for change, stretch_end in zip(changes, following, strict=True):
-            edges.append((change, change.day.toordinal() + change.settle_days, stretch_end))
+            # A settling-in longer than the calendar ends with it.
+            first_counted = min(change.day.toordinal() + change.settle_days, date.max.toordinal())
+            edges.append((change, first_counted, stretch_end))
         return edges
     if baseline is None:
         return [(None, first, end)]

@@ -142,7 +142,8 @@ def _from_table(options: argparse.Namespace) -> tuple[Log, list[Change], Rows]:
     )
     reading = choose_column(reading, options.measure)
     column = reading.columns[0]
-    measure = _measure(options, Measure(column.name, column.unit))
+    # Rows of months or years alone are a monthly or yearly series.
+    measure = _measure(options, Measure(column.name, column.unit, period=reading.period))
     values = [(value.day, value.value, value.slot) for value in column.values]
     blanks = [(day, None, "") for _, day in column.blanks]
     return Log.from_pairs([*values, *blanks], measure), [], _rows(reading)
@@ -161,15 +162,16 @@ def _from_journal(options: argparse.Namespace) -> tuple[Log, list[Change], Rows]
         journal = store.read()
     finally:
         store.close()
-    titles = {measure.title: measure for measure in journal.columns()}
-    if options.measure is None and len(titles) == 1:
-        chosen = next(iter(titles.values()))
-    elif options.measure is None:
-        raise ExchangeError("which value column", choices=list(titles))
-    elif options.measure not in titles:
-        raise ExchangeError("unknown column", name=options.measure, choices=list(titles))
-    else:
-        chosen = titles[options.measure]
+    columns = journal.columns()
+    titles = [measure.title for measure in columns]
+    if not columns:
+        raise ExchangeError("no value column", columns=titles)
+    if options.measure is None and len(columns) > 1:
+        raise ExchangeError("which value column", choices=titles)
+    named = [one for one in columns if options.measure in (None, one.title)]
+    if not named:
+        raise ExchangeError("unknown column", name=options.measure, choices=titles)
+    chosen = named[0]
     log = journal.log_of(chosen.id)
     log = replace(log, measure=_measure(options, log.measure))
     return log, journal.analysis_changes(chosen.id), Rows(len(log), len(log))

@@ -8,7 +8,7 @@ from pathlib import Path
 
 from PySide6.QtCore import Qt, QTimer
 from PySide6.QtGui import QCloseEvent
-from PySide6.QtWidgets import QApplication, QDialog, QFileDialog, QMainWindow, QMessageBox, QStackedWidget, QWidget
+from PySide6.QtWidgets import QApplication, QDialog, QMainWindow, QMessageBox, QStackedWidget, QWidget
 
 from analysis.log import Period
 from desktop.edits.changes import edit_change, mark_change, remove_change
@@ -20,7 +20,14 @@ from desktop.models.ready_made import make_sample, new_person
 from desktop.models.session import Session
 from desktop.screens.bring_in_dialog import BringInDialog, read_with_questions
 from desktop.screens.days_pane import DaysPane
-from desktop.screens.dialogs import ChangeDialog, MeasureDialog, ask_day, ask_if_right, ask_reason
+from desktop.screens.dialogs import (
+    ChangeDialog,
+    MeasureDialog,
+    ask_day,
+    ask_if_right,
+    ask_reason,
+)
+from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_journal, ask_table
 from desktop.screens.menus import Menus
 from desktop.screens.settings import TEXT_SIZES, Settings
 from desktop.screens.start_screen import StartScreen
@@ -28,11 +35,9 @@ from desktop.screens.status_line import trouble_sentence
 from desktop.screens.theme import ThemeName, apply_theme, is_dark
 from desktop.screens.workspace import Workspace
 from desktop.storage.store import Store
-from desktop.wording.help import ABOUT, KEYS
 from desktop.wording.numbers import count
 from desktop.wording.problems import problem_sentence
 
-JOURNAL_ENDING = ".dayfence"
 _CLOCK_LOOK = 60_000
 """Milliseconds between two looks at the calendar."""
 
@@ -119,30 +124,23 @@ class MainWindow(QMainWindow):
 
     def new_journal(self) -> None:
         """Start another journal in a file of the person's choice."""
-        name, _ = QFileDialog.getSaveFileName(
-            self, "New journal", str(self.folder), f"Journals (*{JOURNAL_ENDING})"
-        )
-        if name:
-            path = Path(name) if name.endswith(JOURNAL_ENDING) else Path(name + JOURNAL_ENDING)
+        path = ask_new_journal(self, self.folder)
+        if path is not None:
             if self._let_go() and self._start_journal(path) is not None:
                 self.start_log()
             self._follow_session()
 
     def open_file(self) -> None:
         """Open a journal from a file of the person's choice."""
-        name, _ = QFileDialog.getOpenFileName(
-            self, "Open a journal", str(self.folder), f"Journals (*{JOURNAL_ENDING});;All files (*)"
-        )
-        if name:
-            self.open_journal(Path(name))
+        path = ask_journal(self, self.folder)
+        if path is not None:
+            self.open_journal(path)
 
     def bring_in_table(self) -> None:
         """Bring in a table from a file of the person's choice."""
-        name, _ = QFileDialog.getOpenFileName(
-            self, "Bring in a table", str(Path.home()), "Tables (*.csv *.tsv *.txt);;All files (*)"
-        )
-        if name:
-            self.bring_in_file(Path(name))
+        path = ask_table(self)
+        if path is not None:
+            self.bring_in_file(path)
 
     def bring_in_file(self, path: Path) -> None:
         """Bring in a table; without an open journal a new one is started for it."""
@@ -279,14 +277,6 @@ class MainWindow(QMainWindow):
     def say(self, sentence: str) -> None:
         """Say something in the status line."""
         self.workspace.status.say(sentence)
-
-    def show_keys(self) -> None:
-        """List the keys."""
-        QMessageBox.information(self, "Keys", KEYS)
-
-    def show_about(self) -> None:
-        """Version, caution and notices."""
-        QMessageBox.about(self, "About Dayfence", ABOUT)
 
     def closeEvent(self, event: QCloseEvent) -> None:
         """Write what is left; ask before leaving something that could not be written."""

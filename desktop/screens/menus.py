@@ -11,6 +11,7 @@ from PySide6.QtWidgets import QMenu
 
 from analysis.log import PERIODS
 from desktop.screens.chart_pane import PERIOD_WORDS
+from desktop.screens.help import show_about, show_how_often_wrong, show_keys
 from desktop.wording.acts import act_phrase
 from desktop.wording.days import full_day
 
@@ -31,8 +32,9 @@ class Menus:
         self._fill_edit(edit)
         self._fill_log(log)
         self._fill_view(view)
-        _add(help_menu, "&Keys", window.show_keys, Keys.HelpContents)
-        _add(help_menu, "&About Dayfence", window.show_about)
+        _add(help_menu, "&Keys", partial(show_keys, window), Keys.HelpContents)
+        _add(help_menu, "How often is it &wrong?", partial(show_how_often_wrong, window))
+        _add(help_menu, "&About Dayfence", partial(show_about, window))
 
     def follow(self) -> None:
         """Offer what can be done with the journal as it stands."""

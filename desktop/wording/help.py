@@ -16,4 +16,4 @@ Dayfence 0.1
 
 The typeface is Atkinson Hyperlegible, copyright 2020 Braille Institute of America, \
 under the SIL Open Font License. \
-Made with Qt and PySide6 (LGPL), pyqtgraph (MIT), NumPy and pandas (BSD)."""
+Made with Qt and PySide6 (LGPL), pyqtgraph (MIT) and NumPy (BSD)."""

@@ -1,0 +1,31 @@
+"""Which file: a new journal, one to open, a table to bring in. Each answer is None when the person left it."""
+
+from __future__ import annotations
+
+from pathlib import Path
+
+from PySide6.QtWidgets import QFileDialog, QWidget
+
+JOURNAL_ENDING = ".dayfence"
+
+
+def ask_new_journal(parent: QWidget, folder: Path) -> Path | None:
+    """Where a new journal is to be; the ending is added where it was left out."""
+    name, _ = QFileDialog.getSaveFileName(parent, "New journal", str(folder), f"Journals (*{JOURNAL_ENDING})")
+    if not name:
+        return None
+    return Path(name) if name.endswith(JOURNAL_ENDING) else Path(name + JOURNAL_ENDING)
+
+
+def ask_journal(parent: QWidget, folder: Path) -> Path | None:
+    """Which journal to open."""
+    kinds = f"Journals (*{JOURNAL_ENDING});;All files (*)"
+    name, _ = QFileDialog.getOpenFileName(parent, "Open a journal", str(folder), kinds)
+    return Path(name) if name else None
+
+
+def ask_table(parent: QWidget) -> Path | None:
+    """Which table to bring in."""
+    kinds = "Tables (*.csv *.tsv *.txt);;All files (*)"
+    name, _ = QFileDialog.getOpenFileName(parent, "Bring in a table", str(Path.home()), kinds)
+    return Path(name) if name else None
