@@ -117,6 +117,8 @@ class DaysTable(QAbstractTableModel):
 
     def flags(self, index: Index) -> Qt.ItemFlag:
         """Every cell can be typed into, unless nothing can be changed here."""
+        if not index.isValid():
+            return Qt.ItemFlag.NoItemFlags
         flags = Qt.ItemFlag.ItemIsEnabled | Qt.ItemFlag.ItemIsSelectable
         return flags if self._session.read_only else flags | Qt.ItemFlag.ItemIsEditable
 
