@@ -11,6 +11,7 @@ StorageReason = Literal[
     "read only",
     "disk full",
     "busy",
+    "open already",
     "moved",
     "stale",
     "missing",

@@ -173,7 +173,7 @@ def open_database(path: Path, steps: Sequence[Migration] = MIGRATIONS) -> Databa
     path = path.absolute()
     key = _identity(path)
     if key in _open_files:
-        raise StorageError("busy", path=str(path))
+        raise StorageError("open already", path=str(path))
     _check_header(path, newest=len(steps))
     read_only = not (os.access(path, os.W_OK) and os.access(path.parent, os.W_OK))
     with storage_errors(path):

@@ -147,6 +147,7 @@ _STORAGE: dict[str, Callable[[Fields], str]] = {
     "disk full": lambda _: (
         "Not saved: the disk is full. Your earlier entries are kept. Make room, then type it again."
     ),
+    "open already": lambda fields: f"{_name(fields)} is open already in another window. Use that one.",
     "busy": lambda _: (
         "Not saved: this journal is being written to by another window. Close it there and try again."
     ),

@@ -219,8 +219,8 @@ def test_a_file_without_its_person(store: Store, path: Path) -> None:
 def test_once_in_a_process(store: Store, path: Path, journal_folder: Path) -> None:
     link = journal_folder / "link"
     link.symlink_to(path)
-    assert refusal(lambda: Store.open(path)).reason == "busy"
-    assert refusal(lambda: Store.open(link)).reason == "busy"
+    assert refusal(lambda: Store.open(path)).reason == "open already"
+    assert refusal(lambda: Store.open(link)).reason == "open already"
     store.close()
     store.close()
     with Store.open(link) as opened:
