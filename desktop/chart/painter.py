@@ -189,9 +189,13 @@ def paint_below(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture,
     painter.setFont(face)
     line = metrics.height()
     widest = metrics.horizontalAdvance("28 Sep 2031")
+    free_from = rect.left()
     for day, text in day_ticks(frame.x0, frame.x1, int(frame.rect.width() / widest)):
         at, width = frame.x(day), metrics.horizontalAdvance(text)
         left = min(max(at - width / 2, rect.left()), rect.right() - width)
+        if left < free_from:
+            continue
+        free_from = left + width + metrics.averageCharWidth()
         painter.drawText(QRectF(left, rect.top() + strip, width + 2, line), Qt.AlignmentFlag.AlignLeft, text)
     _bracket(painter, rect.top() + strip + line, frame, picture, style)
     painter.restore()
@@ -211,7 +215,9 @@ def _bracket(painter: QPainter, top: float, frame: Frame, picture: Picture, styl
     width = metrics.horizontalAdvance(picture.bracket.text)
     begin = right + style.size * 0.5
     if begin + width > frame.rect.right():
-        begin = max(left - style.size * 0.5 - width, frame.rect.left())
+        begin = left - style.size * 0.5 - width
+    if begin < frame.rect.left():
+        return  # No room beside the bracket; the findings say it too.
     box = QRectF(begin, down - metrics.height() * 0.7, width + 2, metrics.height())
     painter.drawText(box, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, picture.bracket.text)
 

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from PySide6.QtCore import QByteArray, Qt
-from PySide6.QtGui import QFont, QFontInfo
+from PySide6.QtGui import QFont, QFontInfo, QResizeEvent
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QSplitter, QVBoxLayout, QWidget
 
 from desktop.models.session import Session
@@ -16,6 +16,8 @@ from desktop.screens.theme import PLAIN_SIZE
 _LEAST_WIDTHS = (200, 280, 240)
 _FIRST_WIDTHS = (350, 660, 350)
 _TITLE_PART = 1.35
+_DAYS_PART, _FINDINGS_PART = 0.31, 0.32
+"""The most of the width that each side may take; the rest is the chart's."""
 
 
 class Workspace(QWidget):
@@ -62,14 +64,19 @@ class Workspace(QWidget):
         return self.panes.saveState() if self._moved_by_hand else None
 
     def fit_days(self) -> None:
-        """Give the days the room their measures need, up to a third, unless the person chose the widths."""
+        """Give days and findings the room they need, up to their parts, unless the person chose the widths."""
         if self._moved_by_hand:
             return
-        whole = sum(self.panes.sizes()) or sum(_FIRST_WIDTHS)
-        days = min(self.days.wanted_width, whole // 3)
+        whole = self.width()
+        days = min(self.days.wanted_width, round(whole * _DAYS_PART))
         larger = QFontInfo(self.font()).pixelSize() / PLAIN_SIZE
-        findings = min(round(_FIRST_WIDTHS[2] * larger), whole * 2 // 5)
+        findings = min(round(_FIRST_WIDTHS[2] * larger), round(whole * _FINDINGS_PART))
         self.panes.setSizes([days, whole - days - findings, findings])
+
+    def resizeEvent(self, event: QResizeEvent) -> None:
+        """Share the width out anew: a narrow window keeps room for the chart."""
+        super().resizeEvent(event)
+        self.fit_days()
 
     def _keep_as_moved(self) -> None:
         self._moved_by_hand = True
