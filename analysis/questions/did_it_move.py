@@ -24,7 +24,7 @@ FEWEST_FOR_MOST_SURE = 14
 
 LEANING_BELOW = 0.20
 FAIRLY_SURE_BELOW = 0.05
-MOST_SURE_BELOW = 0.005
+MOST_SURE_BELOW = 0.003
 
 _EXACT_UP_TO = 30
 """Up to this many days together the tie-exact chance is counted; beyond, the normal law is near enough."""
@@ -105,7 +105,7 @@ def sureness(before: int, after: int, p: float) -> Sureness:
     - *too early*: fewer than 7 observations before or 4 after;
     - *leaning*: a gap this big turns up by luck in fewer than 20 of 100 unchanged logs;
     - *fairly sure*: in fewer than 5 of 100;
-    - *as sure as a log can be*: in fewer than 5 of 1,000, with 14 observations or more on both sides;
+    - *as sure as a log can be*: in fewer than 3 of 1,000, with 14 observations or more on both sides;
     - *cannot tell*: everything else.
 
     Args:

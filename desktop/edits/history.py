@@ -35,15 +35,14 @@ class UndoHistory:
 
     def record(self, step: Step) -> None:
         """Take note of the next step of the history."""
-        match step.kind:
-            case "do":
-                self._undone.clear()
-                if step.act != "start journal":
-                    self._done.append(step)
-            case "undo":
-                self._undone.append(_taken(self._done, step))
-            case "redo":
-                self._done.append(_taken(self._undone, step))
+        if step.kind == "undo":
+            self._undone.append(_taken(self._done, step))
+        elif step.kind == "redo":
+            self._done.append(_taken(self._undone, step))
+        else:
+            self._undone.clear()
+            if step.act != "start journal":
+                self._done.append(step)
 
 
 def undo_edit(step: Step) -> Edit:

@@ -22,7 +22,7 @@ RULES = (
     "in, and is no longer sure. Then the answer is at most leaning.",
     "The five words. Too early: fewer than 7 before or 4 after. Leaning: a gap this big turns up by luck in fewer "
     "than 20 of 100 unchanged logs. Fairly sure: in fewer than 5 of 100. "
-    "As sure as a log can be: in fewer than 1 of 200, with 14 or more on both sides. Cannot tell: all else.",
+    "As sure as a log can be: in fewer than 3 of 1,000, with 14 or more on both sides. Cannot tell: all else.",
 )
 """The rules in force; the code that computes them names the same sources."""
 

@@ -140,6 +140,21 @@ def test_another_database(journal_folder: Path, application: int, version: int) 
     assert other.read_bytes() == before
 
 
+def test_a_path_that_leads_nowhere(journal_folder: Path) -> None:
+    loop = journal_folder / "loop"
+    loop.symlink_to(loop)
+    assert refusal(lambda: Store.open(loop)).reason == "cannot open"
+    assert refusal(lambda: Store.open(journal_folder / ("x" * 5000))).reason == "cannot open"
+
+
+def test_a_header_that_cannot_be_read(store: Store, path: Path, monkeypatch: pytest.MonkeyPatch) -> None:
+    store.close()
+    with monkeypatch.context() as patch:
+        patch.setattr(Path, "open", _failing(5))
+        assert refusal(lambda: Store.open(path)).reason == "cannot open"
+    Store.open(path).close()
+
+
 def test_a_folder(journal_folder: Path) -> None:
     assert refusal(lambda: Store.open(journal_folder)).reason == "not a journal"
 
@@ -225,6 +240,15 @@ def test_once_in_a_process(store: Store, path: Path, journal_folder: Path) -> No
     store.close()
     with Store.open(link) as opened:
         assert opened.read().measures == {1: EXERCISE}
+
+
+def test_closing_one_leaves_the_others_held(store: Store, path: Path, journal_folder: Path) -> None:
+    for name in ("b", "c"):
+        Store.create(journal_folder / name, PERSON).close()
+    with Store.open(journal_folder / "b"):
+        Store.open(journal_folder / "c").close()
+        assert refusal(lambda: Store.open(path)).reason == "open already"
+        assert refusal(lambda: Store.open(journal_folder / "b")).reason == "open already"
 
 
 def test_a_store_that_is_forgotten_lets_go(store: Store, path: Path) -> None:
@@ -337,6 +361,22 @@ def test_a_place_to_read_only(
     assert as_nobody(READ_AND_TRY, path) == "True 1 2\nread only"
     assert path.read_bytes() == before
     assert names(open_to_all) == [path.name]
+
+
+def test_where_the_system_says_it_cannot_be_written(
+    store: Store, path: Path, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    store.close()
+    monkeypatch.setattr(os, "access", lambda *_: False)
+    with Store.open(path) as opened:
+        assert opened.read_only
+        assert opened.read().measures == {1: EXERCISE}
+        assert refusal(lambda: opened.write("put value", added(minutes(1)))).reason == "read only"
+        # And SQLite itself would not write either.
+        with pytest.raises(sqlite3.OperationalError, match="readonly"):
+            opened._database._connection.execute("DELETE FROM entry")
+    newer = (*MIGRATIONS, lambda _: None)
+    assert refusal(lambda: database.open_database(path, newer)).reason == "read only"
 
 
 def test_the_same_place_may_be_written_by_its_owner(store: Store) -> None:
