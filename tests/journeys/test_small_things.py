@@ -1,0 +1,76 @@
+"""Small things of an evening at the table: leaving a cell, going on, pasting, taking back."""
+
+from datetime import date, timedelta
+
+from PySide6.QtCore import Qt
+from PySide6.QtGui import QGuiApplication
+from PySide6.QtTest import QTest
+from PySide6.QtWidgets import QLineEdit
+
+from tests.journeys.test_first_four_weeks import FIRST, starts_a_log
+
+
+def shown(person, day, column=0):
+    return person.days.model().index(person.days.days.row(day), column).data()
+
+
+def test_escape_leaves_a_cell_as_it_was(person):
+    person.starts_the_program()
+    starts_a_log(person)
+    person.goes_to(FIRST)
+    person.types("30⏎")
+    person.goes_to(FIRST)
+    person.types("99")
+    QTest.keyClick(person.days.viewport().findChild(QLineEdit), Qt.Key.Key_Escape)
+    person.qtbot.waitUntil(lambda: person.days.state() != person.days.State.EditingState)
+    assert shown(person, FIRST) == "30"
+
+
+def test_tab_goes_to_the_note_and_a_note_is_kept(person):
+    person.starts_the_program()
+    starts_a_log(person)
+    person.goes_to(FIRST)
+    person.presses(Qt.Key.Key_Tab)
+    person.types("rain⏎")
+    assert shown(person, FIRST, 1) == "rain"
+    assert person.window.session.journal.note(FIRST) == "rain"
+
+
+def test_delete_makes_a_day_blank_and_undo_brings_it_back(person):
+    person.starts_the_program()
+    starts_a_log(person)
+    person.goes_to(FIRST)
+    person.types("30⏎25⏎")
+    person.goes_to(FIRST)
+    person.presses(Qt.Key.Key_Delete)
+    assert person.window.session.journal.entry(1, FIRST) is None
+    person.holds_control_and_presses(Qt.Key.Key_Z)
+    assert shown(person, FIRST) == "30"
+
+
+def test_a_column_from_a_spreadsheet_is_pasted_as_one_act(person):
+    person.starts_the_program()
+    starts_a_log(person)
+    person.goes_to(FIRST)
+    QGuiApplication.clipboard().setText("20\n25\n30\n")
+    person.holds_control_and_presses(Qt.Key.Key_V)
+    assert [shown(person, FIRST + timedelta(place)) for place in range(3)] == ["20", "25", "30"]
+    person.holds_control_and_presses(Qt.Key.Key_Z)
+    assert shown(person, FIRST) == ""
+
+
+def test_an_earlier_day_is_reached_by_its_date(person):
+    person.starts_the_program()
+    starts_a_log(person)
+
+    def types_a_day(dialog):
+        from desktop.screens.dialogs import DayBox
+
+        dialog.findChild(DayBox).setDate(date(2030, 12, 24))
+        QTest.keyClick(dialog.findChild(DayBox), Qt.Key.Key_Return)
+
+    person.answers(types_a_day)
+    person.holds_control_and_presses(Qt.Key.Key_G)
+    assert person.days.days.day(person.days.currentIndex().row()) == date(2030, 12, 24)
+    person.types("15⏎")
+    assert person.window.session.journal.entry(1, date(2030, 12, 24)).kind == "late"
