@@ -285,16 +285,14 @@ class Store:
         """What the history makes of nothing, each record as its JSON, by table and key."""
         held: dict[tuple[str, str], str] = {}
         chain = _Position().chain
-        for number, cells in enumerate(
-            connection.execute(f'SELECT {_HISTORY} FROM "history" ORDER BY "seq"'), start=1
-        ):
+        for cells in connection.execute(f'SELECT {_HISTORY} FROM "history" ORDER BY "seq"'):
             row = _row(cells)
             chain = row.chained(chain)
-            if row.seq != number or cells[-1] != chain:
-                raise self._damaged("the chain of the history is broken", seq=number)
+            if cells[-1] != chain:
+                raise self._damaged("the chain of the history is broken", seq=row.seq)
             key = (row.tbl, row.key)
             if held.pop(key, None) != row.before:
-                raise self._damaged("a step starts from what was not there", seq=number)
+                raise self._damaged("a step starts from what was not there", seq=row.seq)
             if row.after is not None:
                 held[key] = row.after
         return held

@@ -105,6 +105,13 @@ def test_a_text_that_is_no_record_is_refused(text: str) -> None:
         TABLES["note"].from_json(text)
 
 
+def test_columns_in_another_order_are_refused_even_when_each_would_fit() -> None:
+    text = TABLES["person"].json(("0" * 32, "a", "b"))
+    assert TABLES["person"].from_json(text) == Person("0" * 32, "a", "b")
+    with pytest.raises(ValueError, match="columns of person"):
+        TABLES["person"].from_json(text.replace("name", "x").replace("question", "name").replace("x", "question"))
+
+
 def test_keys_are_readable_and_apart() -> None:
     assert key_text(("person",)) == ""
     assert key_text(("measure", 12)) == "12"

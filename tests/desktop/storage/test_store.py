@@ -236,6 +236,14 @@ def test_a_second_writer_is_noticed(store: Store, path: Path) -> None:
     assert store.read().entries == {}
 
 
+def test_nobody_writes_between_the_look_and_the_write(store: Store, path: Path) -> None:
+    other = sqlite3.connect(path, isolation_level=None, timeout=0)
+    with store._database.writing(), pytest.raises(sqlite3.OperationalError, match="locked"):
+        other.execute("BEGIN IMMEDIATE")
+    other.execute("BEGIN IMMEDIATE")
+    other.close()
+
+
 def test_a_file_in_use_by_another_program(store: Store, path: Path) -> None:
     store._database._connection.execute("PRAGMA busy_timeout = 10")
     other = sqlite3.connect(path, isolation_level=None)

@@ -2,8 +2,10 @@
 
 from __future__ import annotations
 
+import json
 import sqlite3
 from collections.abc import Callable
+from hashlib import blake2b
 from pathlib import Path
 from random import Random
 
@@ -84,6 +86,19 @@ def test_what_was_changed_outside(kept: Path, statement: str) -> None:
     tamper(kept, statement)
     error = damage_found(kept)
     assert error.fields["detail"]
+
+
+def test_each_row_of_the_history_is_tied_to_the_one_before(kept: Path) -> None:
+    """The rule of the chain, written out a second time."""
+    connection = sqlite3.connect(kept)
+    rows = connection.execute("SELECT * FROM history ORDER BY seq").fetchall()
+    connection.close()
+    assert len(rows) == 18
+    chain = bytes(16)
+    for *cells, found in rows:
+        text = json.dumps(cells, ensure_ascii=False, separators=(",", ":"))
+        chain = blake2b(chain + text.encode("utf-8"), digest_size=16).digest()
+        assert found == chain
 
 
 def test_a_value_changed_in_table_and_history_alike(kept: Path) -> None:
