@@ -35,7 +35,7 @@ from analysis.doubts.seen import Seen
 from analysis.log import Change, Log, Measure, Values
 from analysis.points import Points, first_logged_day, points_of
 from analysis.questions.by_how_much import difference_of_shares, share_range, shift
-from analysis.questions.days_still_needed import days_needed_after
+from analysis.questions.days_still_needed import forecast
 from analysis.questions.did_it_move import at_most
 from analysis.questions.is_it_so_still import LATELY, still_state
 from analysis.questions.since_when import plausible_splits
@@ -222,7 +222,7 @@ def _answer(
         carry_over=level.carry_over,
         weekday_rhythm=WeekdayRhythm(rhythm.p, rhythm.used) if rhythm else None,
         bound=max(abs(level.low), abs(level.high)) if level.sureness == "cannot tell" else None,
-        still_needed=_still_needed(before, after, worth, level.widened),
+        still_needed=_still_needed(sides, level, worth),
     )
 
 
@@ -307,8 +307,16 @@ def _goal(sides: Sides, widened: float) -> Goal | None:
     return Goal(met_before, met_after, low, high)
 
 
-def _still_needed(before: Values, after: Values, worth: float | None, widened: float) -> StillNeeded | None:
+def _still_needed(sides: Sides, level: Level, worth: float | None) -> StillNeeded | None:
     if not worth:
         return None
-    needed = days_needed_after(before, worth, widened)
-    return StillNeeded(None if needed is None else max(0, needed - len(after)), None, None, abs(worth))
+    if level.is_claim:
+        return StillNeeded(0, 0, 0, abs(worth))
+    # A weekly rhythm in use is taken off, as it will be when the move is looked for.
+    before, so_far = level.sides.known_before, len(sides.known_after)
+    logged = len(before) + so_far
+    needed = forecast(before, worth, level.carry_over, logged, by_share=sides.told_by_share)
+    days, low, high = (
+        None if one is None else max(0, one - so_far) for one in (needed.days, needed.low, needed.high)
+    )
+    return StillNeeded(days, low, high, abs(worth))

@@ -7,7 +7,7 @@ from datetime import date
 
 import numpy as np
 
-from analysis.answer import Answer, Carried, HowMuch, HowOften, Review, Shift, Since, Stretch
+from analysis.answer import Answer, Carried, HowMuch, HowOften, Review, Shift, Since, StillNeeded, Stretch
 from analysis.questions.did_it_move import CLAIMS, FEWEST_AFTER, FEWEST_BEFORE
 from desktop.wording.cautions import CAUTION
 from desktop.wording.days import DayWords
@@ -416,9 +416,12 @@ class _Teller:
         if needed is not None and answer.sureness not in CLAIMS:
             amount = f"{speech.with_unit(needed.for_amount)}{speech.rate()}"
             if needed.days is None:
-                return f"No number of {speech.many} after is enough with this baseline to see a move of {amount}."
+                return (
+                    f"With this baseline even very many {speech.many} after are not enough "
+                    f"to see a move of {amount}."
+                )
             if needed.days:
-                return f"About {speech.periods(needed.days)} more would most often show a move of {amount}."
+                return f"{self._days_more(needed)} would most often show a move of {amount}."
             return f"There are enough {speech.many} to see a move of {amount}; this log does not show one."
         if answer.sureness == "cannot tell" and answer.bound:
             return (
@@ -426,3 +429,13 @@ class _Teller:
                 "More days would narrow this."
             )
         return None
+
+    def _days_more(self, needed: StillNeeded) -> str:
+        """The days still needed with their range, where few days leave it wide."""
+        assert needed.days is not None
+        told = f"About {self.speech.periods(needed.days)} more"
+        if needed.high is None:
+            return f"{told}, or many more than that,"
+        if needed.low is None or needed.high <= needed.low + 1:
+            return told
+        return f"{told} ({needed.low} to {needed.high})" if needed.low else f"{told} ({needed.high} at most)"

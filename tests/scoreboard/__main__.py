@@ -62,6 +62,8 @@ def told(counts: Counts, logs: int) -> str:
         ("C. The range of the shift holds the truth (move in standard deviations)", "C", "covers"),
         ("D. The range of the start holds the truth", "D", "covers"),
         ("   it says that the move began before the change (early: a week before, by 1.5)", "D", "before change"),
+        ("F. A week after a move of 1.5: days still needed are forecast", "F", "number"),
+        ("   with an end to their range", "F", "number and end"),
         ("G. Told as faded (faded: up for three weeks, then back)", "G", "faded"),
     ):
         lines += _table(counts, title, table, None, share(fact))
@@ -71,6 +73,13 @@ def told(counts: Counts, logs: int) -> str:
         "E",
         None,
         lambda held: 100 * held["expected"] / 1000 / max(held["outside"], 1),
+    )
+    lines += _table(
+        counts,
+        "   on the day forecast, of 100 logs with a forecast: the answer is the right one",
+        "F",
+        None,
+        lambda held: 100 * held["right then"] / max(held["number"], 1),
     )
     return "\n".join(lines) + "\n"
 

@@ -22,13 +22,19 @@ Make = Callable[[np.random.Generator], "Case"]
 
 @dataclass(frozen=True)
 class Case:
-    """One simulated log with its change, and whatever else the review is told."""
+    """One simulated log with its change, and whatever else the review is told.
+
+    Attributes:
+        later: the days yet to come, which the review does not see.
+    """
 
     values: Values
     change: int
     measure: Measure = field(default_factory=Measure)
     kinds: tuple[str, ...] = ()
     baseline_from: int | None = None
+    worth: float | None = None
+    later: Values | None = None
 
 
 def reviewed(case: Case) -> Review:
@@ -41,7 +47,7 @@ def reviewed(case: Case) -> Review:
     if case.baseline_from is not None:
         first = date.fromordinal(FIRST + case.baseline_from)
         baseline = (first, date.fromordinal(FIRST + case.change - 1))
-    return review(log, [change], baseline, today=date.fromordinal(FIRST + count - 1))
+    return review(log, [change], baseline, today=date.fromordinal(FIRST + count - 1), worth=case.worth)
 
 
 def rng_of(*names: object) -> np.random.Generator:

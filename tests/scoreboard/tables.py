@@ -4,14 +4,14 @@ from __future__ import annotations
 
 from collections import Counter
 from collections.abc import Callable, Iterable, Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from math import sqrt
 
 import numpy as np
 from scipy.stats import norm
 
 from analysis import Measure, Review
-from tests.scoreboard.cells import SIZES, Case, Make, is_claim, is_naive_claim
+from tests.scoreboard.cells import SIZES, Case, Make, is_claim, is_naive_claim, reviewed
 from tests.scoreboard.families import (
     CONTINUOUS,
     HARDER,
@@ -188,6 +188,43 @@ def _outside_facts(case: Case, answer: Review) -> Iterable[str]:
         yield from ["expected"] * round(1000 * carried_on.expected_by_luck)
 
 
+SO_FAR = 7
+LONGEST = 400
+"""A forecast beyond so many days is no number: nobody waits for it."""
+
+
+def forecasts() -> list[Cell]:
+    """F: a week after a move of 1.5 standard deviations, days still needed to see one of that size."""
+    cells = []
+    for m in (14, 28):
+        for family in (CONTINUOUS[0], CONTINUOUS[1], CONTINUOUS[3], CONTINUOUS[4], CONTINUOUS[6], HARDER[1]):
+            measure = Measure("x", **family.measure)  # type: ignore[arg-type]
+
+            def make(rng: np.random.Generator, family: Family = family, m: int = m, measure=measure) -> Case:  # type: ignore[no-untyped-def]
+                values = family.log(rng, m, LONGEST, 1.5)
+                return Case(values[: m + SO_FAR], m, measure, worth=1.5, later=values[m + SO_FAR :])
+
+            cells.append(Cell("F", family.name, f"{m},{SO_FAR}", make, _forecast_facts))
+    return cells
+
+
+def _forecast_facts(case: Case, answer: Review) -> Iterable[str]:
+    needed = answer.answer.still_needed
+    assert needed is not None
+    assert case.later is not None
+    if needed.days is None or needed.days > LONGEST - SO_FAR:
+        return
+    yield "number"
+    if needed.high is not None:
+        yield "number and end"
+    # So many logged days from now on.
+    logged = np.cumsum(~np.isnan(case.later))
+    days = int(np.searchsorted(logged, needed.days)) + 1 if needed.days else 0
+    then = reviewed(replace(case, values=np.r_[case.values, case.later[:days]]))
+    if is_claim(then) and then.answer.direction == "more":
+        yield "right then"
+
+
 def faded() -> list[Cell]:
     """G: moved for three weeks and then back, against a move that stays."""
     cells = []
@@ -266,6 +303,7 @@ TABLES: Mapping[str, Callable[[], list[Cell]]] = {
     "B": moved,
     "CD": ranges,
     "E": luck,
+    "F": forecasts,
     "G": faded,
     "T": traps,
 }

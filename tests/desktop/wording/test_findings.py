@@ -9,7 +9,7 @@ from datetime import date, timedelta
 import pytest
 
 from analysis import Change, Log, Measure, Review, review
-from analysis.answer import Carried, Slope
+from analysis.answer import Carried, Slope, StillNeeded
 from desktop.wording.cautions import CAUTION
 from desktop.wording.days import MONTHS
 from desktop.wording.findings import NO_CAUSE, findings_of, outside_sentence, speech_of, worded
@@ -73,10 +73,27 @@ def test_a_log_that_cannot_tell_says_how_large_a_move_it_rules_out():
 
 
 def test_the_amount_worth_it_is_told_in_days_still_needed():
-    one = review(log_of(LOW + LOW[::-1], **MINUTES), [Change(day(14))], worth=6)
-    needed = one.answer.still_needed.days
+    one = review(log_of(LOW + LOW[::-1], **MINUTES), [Change(day(14))], worth=8)
+    needed = one.answer.still_needed
     assert sections(one)["What would settle it?"] == (
-        f"About {needed} days more would most often show a move of 6 minutes a day.",
+        f"About {needed.days} days more ({needed.high} at most) would most often show a move of 8 minutes a day.",
+    )
+
+
+def test_days_still_needed_that_may_be_many_more_say_so():
+    one = review(log_of(LOW + LOW[::-1], **MINUTES), [Change(day(14))], worth=6)
+    open_ended = replace(one, answer=replace(one.answer, still_needed=StillNeeded(12, 4, None, 6.0)))
+    with_range = replace(one, answer=replace(one.answer, still_needed=StillNeeded(12, 4, 30, 6.0)))
+    assert findings_of(with_range).lines()[-1].startswith("About 12 days more (4 to 30) would")
+    said = findings_of(open_ended).lines()[-1]
+    assert said.startswith("About 12 days more, or many more than that, would most often show")
+
+
+def test_an_amount_too_small_for_the_baseline_is_told_as_such():
+    one = review(log_of(LOW + LOW[::-1], **MINUTES), [Change(day(14))], worth=2)
+    assert one.answer.still_needed.days is None
+    assert findings_of(one).lines()[-1] == (
+        "With this baseline even very many days after are not enough to see a move of 2 minutes a day."
     )
 
 
