@@ -416,10 +416,7 @@ class _Teller:
         if needed is not None and answer.sureness not in CLAIMS:
             amount = f"{speech.with_unit(needed.for_amount)}{speech.rate()}"
             if needed.days is None:
-                return (
-                    f"With this baseline even very many {speech.many} after are not enough "
-                    f"to see a move of {amount}."
-                )
+                return f"With this baseline, no number of {speech.many} after can show a move of {amount}."
             if needed.days:
                 return f"{self._days_more(needed)} would most often show a move of {amount}."
             return f"There are enough {speech.many} to see a move of {amount}; this log does not show one."

@@ -93,7 +93,7 @@ def test_an_amount_too_small_for_the_baseline_is_told_as_such():
     one = review(log_of(LOW + LOW[::-1], **MINUTES), [Change(day(14))], worth=2)
     assert one.answer.still_needed.days is None
     assert findings_of(one).lines()[-1] == (
-        "With this baseline even very many days after are not enough to see a move of 2 minutes a day."
+        "With this baseline, no number of days after can show a move of 2 minutes a day."
     )
 
 
