@@ -3,6 +3,7 @@
 from analysis.answer import Review
 from analysis.errors import AnalysisError
 from analysis.log import Change, Log, Measure, Span
-from analysis.pipeline import review
+from analysis.many_logs import review_many
+from analysis.pipeline import chance_of, review
 
-__all__ = ["AnalysisError", "Change", "Log", "Measure", "Review", "Span", "review"]
+__all__ = ["AnalysisError", "Change", "Log", "Measure", "Review", "Span", "chance_of", "review", "review_many"]

@@ -278,6 +278,7 @@ class Review:
         findings, caution: in plain words, filled in by the wording.
         rows: what became of the rows of the table, where one was read.
         points: one observation a period, for the chart; not part of the JSON.
+        worth_a_look: among many logs, whether this one is; None when reviewed alone. Not part of the JSON.
     """
 
     measure: Measure
@@ -290,6 +291,7 @@ class Review:
     findings: tuple[str, ...] = ()
     caution: str = ""
     rows: Rows = Rows()
+    worth_a_look: bool | None = None
 
     def to_json(self) -> dict[str, object]:
         """The answer as plain lists, dicts, numbers and texts; every key of the contract is there."""

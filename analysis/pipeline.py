@@ -54,6 +54,8 @@ def review(
     baseline: tuple[date, date] | None = None,
     today: date | None = None,
     worth: float | None = None,
+    look_day: date | None = None,
+    others: Sequence[float] = (),
 ) -> Review:
     """Answer whether a log moved, by how much and since when.
 
@@ -63,6 +65,8 @@ def review(
         baseline: first and last day to judge against; the days up to the first change when left out.
         today: the day after which nothing is used; the last day of the log when left out.
         worth: the smallest move that would be worth it, in the measure's unit.
+        look_day: the day agreed on to judge; before it the answer is an early look.
+        others: the chance by luck (see ``chance_of``) of every other measure looked at for the same change.
 
     Raises:
         AnalysisError: the baseline ends before it begins, or reaches into a change.
@@ -81,7 +85,17 @@ def review(
     comparisons = [asked.compared(place, 0) for place in range(1, len(stretches))]
     befores = [asked.compared(place, place - 1) for place in range(2, len(stretches))]
     last = comparisons[-1] if comparisons else None
-    doubts = doubts_of(Seen(log, in_force, stretches, last.sides if last else None, last.level if last else None))
+    seen = Seen(
+        log,
+        in_force,
+        stretches,
+        last.sides if last else None,
+        last.level if last else None,
+        end,
+        look_day.toordinal() if look_day is not None else None,
+        tuple(others),
+    )
+    doubts = doubts_of(seen)
     answer = last.answer if last else Answer(slope=_slope_of_one(points, edges[0]))
     if any(doubt.alters for doubt in doubts):
         answer = _capped(answer)
@@ -95,6 +109,24 @@ def review(
         switches=_switches([comparisons[0], *befores]) if several else None,
         comparisons=tuple(_listed(comparisons, befores)) if several else (),
     )
+
+
+def chance_of(
+    log: Log,
+    changes: Sequence[Change] = (),
+    baseline: tuple[date, date] | None = None,
+    today: date | None = None,
+) -> float | None:
+    """How often luck alone parts the last stretch from the baseline so far; arguments as for ``review``.
+
+    Returns:
+        None where there is nothing to compare, or too little for an answer.
+
+    Raises:
+        AnalysisError: as ``review``.
+    """
+    answer = review(log, changes, baseline, today).answer
+    return None if answer.luck is None or answer.sureness == "too early" else answer.luck.p
 
 
 class _Asked:

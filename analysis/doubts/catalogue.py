@@ -18,6 +18,7 @@ from analysis.doubts.keeping import (
     round_numbers,
     weekdays_only,
 )
+from analysis.doubts.looking import early_look, several_measures
 from analysis.doubts.marks import close_change, device_mark, several_changes
 from analysis.doubts.measuring import day_to_day, few_days, no_low_day, no_spread
 from analysis.doubts.seen import Seen
@@ -35,6 +36,8 @@ CATALOGUE: tuple[Callable[[Seen], Doubt | None], ...] = (
     missing_more,
     late_entries,
     weekdays_only,
+    early_look,
+    several_measures,
     close_change,
     several_changes,
     equal_in_row,

@@ -26,6 +26,9 @@ class Seen:
         stretches: the baseline first; at least one.
         sides: the baseline and the last stretch; None where either holds no observation.
         level: their comparison; None where there is none.
+        today: the last day that is looked at.
+        look_day: the day agreed on to judge, or None.
+        others: the chance by luck of every other measure looked at for this change.
     """
 
     log: Log
@@ -33,6 +36,9 @@ class Seen:
     stretches: Sequence[Stretch]
     sides: Sides | None
     level: Level | None
+    today: int
+    look_day: int | None = None
+    others: tuple[float, ...] = ()
 
     @property
     def measure(self) -> Measure:

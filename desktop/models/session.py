@@ -2,7 +2,8 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass
 from datetime import date, datetime
 from functools import partial
 
@@ -18,6 +19,7 @@ from desktop.journal.journal import Journal
 from desktop.journal.records import Measure
 from desktop.journal.row_change import Step, StepKind
 from desktop.models.background import Background
+from desktop.models.other_measures import Asked, OtherMeasures, ask
 from desktop.storage.store import Store
 
 _AT_ONCE = 1_000
@@ -63,6 +65,7 @@ class Session(QObject):
         last = store.steps(1)
         self.saved_at = last[-1].at if last else ""
         self._blocked: Exception | None = None
+        self._others = OtherMeasures()
         self._generation = 0
         self._closed = False
         columns = self.journal.columns()
@@ -136,6 +139,7 @@ class Session(QObject):
         self._history = UndoHistory(self._store.steps(STEPS_KEPT))
         self._steps = self._store.last_step_number
         self._unsaved, self._blocked = [], None
+        self._others.forget(())
         self._settle_measure()
         self.edited.emit(())
         self.make_review()
@@ -162,11 +166,21 @@ class Session(QObject):
             self._receive_review(self._generation, None)
             return
         log = self.journal.log_of(measure.id, self.period)
-        job = partial(_review, log, self.journal.analysis_changes(measure.id), self.today, measure.worth)
-        if len(log) <= _AT_ONCE:
-            self._receive_review(self._generation, job())
+        beside = self._others.beside(self.journal, measure)
+        unknown = self._others.unknown(self.journal, beside)
+        question = _Question(
+            log,
+            self.journal.analysis_changes(measure.id),
+            self.today,
+            measure.worth,
+            measure.look_day,
+            self._others.known(beside),
+            unknown,
+        )
+        if len(log) + sum(len(other) for _, other, _ in unknown) <= _AT_ONCE:
+            self._receive_answer(self._generation, question.answer())
             return
-        self._reviewer.run(job, partial(self._receive_review, self._generation), _raise)
+        self._reviewer.run(question.answer, partial(self._receive_answer, self._generation), _raise)
 
     def wait_until_written(self) -> None:
         """Return when the writer has nothing left to do; for closing and for tests."""
@@ -181,6 +195,7 @@ class Session(QObject):
 
     def _make(self, edit: Edit, kind: StepKind, of: int | None) -> None:
         self.journal.apply(edit.changes)
+        self._others.forget(edit.changes)
         self._steps += 1
         at = self.now().isoformat(timespec="seconds")
         self._history.record(Step(self._steps, at, kind, edit.act, of, edit.changes))
@@ -219,14 +234,46 @@ class Session(QObject):
             if self.measure is not None:
                 self.measure_chosen.emit(self.measure)
 
+    def _receive_answer(self, generation: int, answer: tuple[Review, Chances]) -> None:
+        review, learnt = answer
+        if generation == self._generation:
+            self._others.learn(learnt)
+        self._receive_review(generation, review)
+
     def _receive_review(self, generation: int, review: Review | None) -> None:
         if generation == self._generation and not self._closed:
             self.review = review
             self.reviewed.emit(review)
 
 
-def _review(log: Log, changes: list[analysis.Change], today: date, worth: float | None) -> Review:
-    return analysis.review(log, changes, today=today, worth=worth)
+Chances = dict[int, float | None]
+
+
+@dataclass(frozen=True)
+class _Question:
+    """A review to be made, whole in itself so that it can be made off the screen's thread."""
+
+    log: Log
+    changes: Sequence[analysis.Change]
+    today: date
+    worth: float | None
+    look_day: date | None
+    others: tuple[float, ...]
+    unknown: Sequence[Asked]
+
+    def answer(self) -> tuple[Review, Chances]:
+        """The review, and the chances of other measures that were asked for it."""
+        learnt = ask(self.unknown, self.today)
+        others = (*self.others, *(chance for chance in learnt.values() if chance is not None))
+        review = analysis.review(
+            self.log,
+            self.changes,
+            today=self.today,
+            worth=self.worth,
+            look_day=self.look_day,
+            others=others,
+        )
+        return review, learnt
 
 
 def _raise(error: Exception) -> None:

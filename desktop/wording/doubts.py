@@ -127,6 +127,18 @@ def _season(fields: Fields, _speech: Speech) -> str:
     )
 
 
+def _early_look(fields: Fields, speech: Speech) -> str:
+    days = int(fields["days"])
+    return (
+        f"You agreed to judge in {days} {'day' if days == 1 else 'days'}. "
+        "This is an early look, and luck shows more in those."
+    )
+
+
+def _several_measures(fields: Fields, speech: Speech) -> str:
+    return f"{int(fields['measures'])} measures were looked at. In one of several, luck finds a move more easily."
+
+
 def _round_numbers(fields: Fields, speech: Speech) -> str:
     step = int(fields["step"])
     ends = "0" if step == 10 else "0 or 5"
@@ -163,6 +175,12 @@ SENTENCES: dict[str, tuple[Told, str, str]] = {
         "Without those days the answer is the same.",
         "A step of this size can come from that alone.",
     ),
+    "early_look": (
+        _early_look,
+        "By the stricter rule for early looks the answer is the same.",
+        "By the stricter rule for early looks the answer is not sure yet.",
+    ),
+    "several_measures": (_several_measures, "", "Counted together, the answer is not sure."),
     "close_change": (_close_change, "", ""),
     "several_changes": (_several_changes, "", ""),
     "equal_in_row": (_equal_in_row, _SAME, _OTHER),

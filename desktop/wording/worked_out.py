@@ -18,6 +18,10 @@ RULES = (
     "Since when: the split into two levels that fits best, and those that fit nearly as well.",
     "Weekends: where they differ from weekdays by more than luck, the difference is taken off first.",
     "Logs with many zeros: judged by how many days there was some, and by how much on those days.",
+    "Early looks: before the agreed day the limit for a claim is stricter, by the share of days that are in (O'Brien "
+    "and Fleming 1979). Several measures for one change: their chances are counted together (Holm 1979).",
+    "Days still needed: in 80 of 100 logs a move of that size would be claimed by then (Noether 1987); the range "
+    "holds in about two of three.",
     "A doubt alters the answer when it is computed again without the doubtful days, or with the other explanation "
     "in, and is no longer sure. Then the answer is at most leaning.",
     "The five words. Too early: fewer than 7 before or 4 after. Leaning: a gap this big turns up by luck in fewer "

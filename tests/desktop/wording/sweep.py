@@ -10,7 +10,7 @@ import numpy as np
 
 from analysis import Change, Log, Measure, Review, review
 from analysis.log import Span
-from tests.builders import FIRST_DAY, day, number, reviewed
+from tests.builders import FIRST_DAY, day, log_of, number, reviewed
 
 UNITS = {"amount": "minutes", "count": "steps", "reading": "mmHg", "score": "points", "yes/no": ""}
 MEASURES = [
@@ -122,6 +122,10 @@ def _carried_over() -> Review:
     return reviewed([round(value + (place >= 30) * 1.6, 1) for place, value in enumerate(row)], 30)
 
 
+def _looked_at(**how: object) -> Review:
+    return review(log_of(LOW + [value + 6 for value in LOW], unit="minutes"), [Change(day(14), "stairs")], **how)
+
+
 DOUBTED = {
     "few_days": lambda: reviewed(LOW[:5] + HIGH[:2], 5, unit="minutes"),
     "no_spread": lambda: reviewed([5] * 14 + [6] * 14, 14, unit="minutes"),
@@ -137,6 +141,8 @@ DOUBTED = {
     ),
     "late_entries": lambda: _with_kinds(LOW + HIGH, dict.fromkeys(range(3, 10), "late")),
     "weekdays_only": _on_weekdays_before,
+    "early_look": lambda: _looked_at(look_day=day(40)),
+    "several_measures": lambda: _looked_at(others=(0.3, 0.6, 0.04)),
     "close_change": lambda: _two_changes(14, 18),
     "several_changes": lambda: _two_changes(14, 14),
     "equal_in_row": lambda: reviewed(LOW + [30] * 6 + HIGH, 14, unit="minutes"),
