@@ -40,9 +40,9 @@ def _run(options: argparse.Namespace) -> int:
     from PySide6.QtGui import QIcon
     from PySide6.QtWidgets import QApplication
 
+    from desktop.faces import load_faces
     from desktop.resource_files import resource
     from desktop.screens.main_window import MainWindow
-    from desktop.screens.theme import load_faces
 
     app = QApplication(sys.argv[:1])
     app.setApplicationName("dayfence")

@@ -23,6 +23,9 @@ LANE_LINES = 1.9
 BELOW_LINES = 3.6
 """Height of the part below the plot: ticks, days, the bracket."""
 
+BELOW_LINES_BARE = 2.0
+"""The same without the days, where another chart stands under this one."""
+
 _TICK_STRIP = 0.7
 _LEAST_JOINED = 7
 """Days nearer to one another than this part of a letter are not joined: the lines would hide the days."""
@@ -134,13 +137,17 @@ def paint_value_axis(painter: QPainter, rect: QRectF, frame: Frame, picture: Pic
     for value, text in _value_ticks(frame, style):
         box = QRectF(rect.left(), frame.y(value) - height / 2, rect.width() - style.size * 0.5, height)
         painter.drawText(box, right, text)
-    painter.setFont(style.face(italic=True, part=0.92))
+    italic = style.face(italic=True, part=0.92)
+    painter.setFont(italic)
     painter.translate(rect.left() + height * 0.6, frame.rect.center().y())
     painter.rotate(-90)
     length = frame.rect.height()
     box = QRectF(-length / 2, -height / 2, length, height)
     sides = (Qt.AlignmentFlag.AlignLeft, Qt.AlignmentFlag.AlignHCenter, Qt.AlignmentFlag.AlignRight)
+    low, unit, high = (QFontMetricsF(italic).horizontalAdvance(f" {words} ") for words in picture.axis_words)
     for side, words in zip(sides, picture.axis_words, strict=True):
+        if words == picture.axis_words[1] and unit + 2 * max(low, high) > length:
+            continue  # A short axis names its ends; the unit is said above it.
         painter.drawText(box, side | Qt.AlignmentFlag.AlignVCenter, words)
     painter.restore()
 
@@ -172,7 +179,9 @@ def end_labels_width(labels: Iterable[EndLabel], style: Style) -> float:
     return max((metrics.horizontalAdvance(label.text) for label in labels), default=0.0) + style.size
 
 
-def paint_below(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture, style: Style) -> None:
+def paint_below(
+    painter: QPainter, rect: QRectF, frame: Frame, picture: Picture, style: Style, *, with_days: bool = True
+) -> None:
     """Under the plot: a tick for days blank, ill, away or late, the days, and where the new level began."""
     painter.save()
     painter.setRenderHint(QPainter.RenderHint.Antialiasing)
@@ -184,6 +193,15 @@ def paint_below(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture,
         if frame.rect.left() <= at <= frame.rect.right():
             length = strip * (0.5 if tick.kind == "late" else 1.0)
             painter.drawLine(QLineF(at, rect.top(), at, rect.top() + length))
+    below = rect.top() + strip
+    if with_days:
+        below += _days_axis(painter, rect, below, frame, style)
+    _bracket(painter, below, frame, picture, style)
+    painter.restore()
+
+
+def _days_axis(painter: QPainter, rect: QRectF, top: float, frame: Frame, style: Style) -> float:
+    """The days in words, none over another; returns their height."""
     face = style.face(part=0.92)
     metrics = QFontMetricsF(face)
     painter.setFont(face)
@@ -196,9 +214,8 @@ def paint_below(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture,
         if left < free_from:
             continue
         free_from = left + width + metrics.averageCharWidth()
-        painter.drawText(QRectF(left, rect.top() + strip, width + 2, line), Qt.AlignmentFlag.AlignLeft, text)
-    _bracket(painter, rect.top() + strip + line, frame, picture, style)
-    painter.restore()
+        painter.drawText(QRectF(left, top, width + 2, line), Qt.AlignmentFlag.AlignLeft, text)
+    return line
 
 
 def _bracket(painter: QPainter, top: float, frame: Frame, picture: Picture, style: Style) -> None:

@@ -5,16 +5,14 @@ from __future__ import annotations
 from typing import Literal
 
 from PySide6.QtCore import Qt
-from PySide6.QtGui import QColor, QFont, QFontDatabase, QGuiApplication, QPalette
+from PySide6.QtGui import QColor, QFont, QGuiApplication, QPalette
 from PySide6.QtWidgets import QApplication, QStyleFactory
 
 from desktop.chart.look import DARK, LIGHT, Look
-from desktop.resource_files import resource
+from desktop.faces import FACE
 
 ThemeName = Literal["light", "dark", "system"]
 
-FACE = "Atkinson Hyperlegible"
-_FACES = ("400Regular", "400Regular_Italic", "700Bold")
 PLAIN_SIZE = 15
 """Height of plain text in pixels at 100 %."""
 
@@ -37,12 +35,6 @@ _PALETTES: dict[str, dict[str, str]] = {
 
 CAUTION_INK = {"light": ("#f6efd9", "#4f3d00"), "dark": ("#37300f", "#f2e6bd")}
 """Paper and ink of the caution: 4.5 to 1 and more in both."""
-
-
-def load_faces() -> None:
-    """Make the face that comes with the program known to Qt, so that no machine lacks one."""
-    for name in _FACES:
-        QFontDatabase.addApplicationFont(str(resource("fonts", f"AtkinsonHyperlegible_{name}.ttf")))
 
 
 def is_dark(theme: ThemeName) -> bool:

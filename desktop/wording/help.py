@@ -9,8 +9,10 @@ Ctrl+M: mark a change. Ctrl+D: set the day aside with a reason.
 Ctrl+T: go to today. Ctrl+G: go to a day. Ctrl+Z, Ctrl+Shift+Z: undo, redo.
 On the chart: Left and Right read out a day, + and − zoom, Ctrl with arrows moves, Home shows all."""
 
+NAME_AND_VERSION = "Dayfence 0.1"
+
 ABOUT = f"""\
-Dayfence 0.1
+{NAME_AND_VERSION}
 
 {CAUTION}
 

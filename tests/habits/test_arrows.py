@@ -29,6 +29,7 @@ ALLOWED: dict[str, set[str]] = {
     "desktop.errors": set(),
     "desktop.resource_files": set(),
     "desktop.display": {"PySide6"},
+    "desktop.faces": {"desktop.resource_files", "PySide6"},
     "desktop.journal": {"analysis"},
     "desktop.storage": {"desktop.errors", "desktop.journal", "sqlite3"},
     "desktop.exchange": {"desktop.errors", "desktop.journal", "pandas"},
@@ -49,9 +50,27 @@ ALLOWED: dict[str, set[str]] = {
         "pyqtgraph",
         "numpy",
     },
+    "desktop.page.content": {"analysis", "desktop.chart.picture", "desktop.journal", "desktop.wording", "numpy"},
+    "desktop.page": {
+        "desktop.chart",
+        "desktop.chart.picture",
+        "desktop.faces",
+        "desktop.page.content",
+        "desktop.wording",
+        "PySide6",
+    },
     # The screens hand edits to the session, files to the importer and the store, errors to the wording.
-    "desktop.screens": BELOW_THE_WINDOW | {"desktop.chart", "desktop.chart.picture", "desktop.models", "PySide6"},
-    "desktop.app": {"desktop.display", "desktop.resource_files", "desktop.screens", "PySide6"},
+    "desktop.screens": BELOW_THE_WINDOW
+    | {
+        "desktop.chart",
+        "desktop.chart.picture",
+        "desktop.faces",
+        "desktop.models",
+        "desktop.page",
+        "desktop.page.content",
+        "PySide6",
+    },
+    "desktop.app": {"desktop.display", "desktop.faces", "desktop.resource_files", "desktop.screens", "PySide6"},
     "desktop.__main__": {"desktop.app", "desktop.command"},
 }
 """For each part, the other parts and the libraries it may import; the standard library but sqlite3 is free."""

@@ -13,8 +13,8 @@ from PySide6.QtCore import Qt, QTimer
 from PySide6.QtTest import QTest
 from PySide6.QtWidgets import QAbstractItemDelegate, QApplication, QLineEdit
 
+from desktop.faces import load_faces
 from desktop.screens.main_window import MainWindow
-from desktop.screens.theme import load_faces
 
 
 class Person:

@@ -1,0 +1,97 @@
+"""A whole chart in one rectangle: the plot with its axes, lane and names, by the painter's own parts."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+
+from PySide6.QtCore import QRectF
+from PySide6.QtGui import QPainter
+
+from desktop.chart.painter import (
+    BELOW_LINES,
+    BELOW_LINES_BARE,
+    LANE_LINES,
+    Frame,
+    Style,
+    end_labels_width,
+    paint_below,
+    paint_end_labels,
+    paint_lane,
+    paint_plot,
+    paint_value_axis,
+    value_axis_width,
+)
+from desktop.chart.picture import Picture
+
+LEAST_PLOT = 6.5
+"""The least height of the plot itself, in lines of text."""
+
+
+@dataclass(frozen=True)
+class Parts:
+    """What stands around the plot; of charts under one another each part is needed once.
+
+    Attributes:
+        lane: the names of the stretches above it.
+        days: the days below it.
+    """
+
+    lane: bool = True
+    days: bool = True
+
+    @property
+    def lines(self) -> float:
+        """The height of these parts, in lines of text."""
+        return LANE_LINES * self.lane + (BELOW_LINES if self.days else BELOW_LINES_BARE)
+
+
+WHOLE = Parts()
+
+
+def least_height(style: Style, parts: Parts = WHOLE) -> float:
+    """The height under which a chart cannot be read."""
+    return style.size * (LEAST_PLOT + parts.lines)
+
+
+def side_widths(picture: Picture, style: Style, height: float, parts: Parts = WHOLE) -> tuple[float, float]:
+    """The room for the values at the left and for the levels' names at the right of a chart of this height."""
+    plot = QRectF(0.0, 0.0, 1.0, height - style.size * parts.lines)
+    frame = Frame(plot, picture.x0, picture.x1, picture.y0, picture.y1)
+    return value_axis_width(frame, style), max(end_labels_width(picture.end_labels, style), style.size)
+
+
+def paint_chart(
+    painter: QPainter,
+    rect: QRectF,
+    picture: Picture,
+    style: Style,
+    *,
+    parts: Parts = WHOLE,
+    sides: tuple[float, float] | None = None,
+    days: tuple[float, float] | None = None,
+) -> None:
+    """Paint a whole chart.
+
+    Args:
+        painter: at any scale.
+        rect: what the chart fills.
+        picture: what to draw.
+        style: inks and type.
+        parts: what stands around the plot.
+        sides: room at the left and right; what the chart itself needs when left out. Charts under one another
+            are given the same, so that their days stand under one another too.
+        days: the days from edge to edge; the picture's own when left out.
+    """
+    left, right = sides or side_widths(picture, style, rect.height(), parts)
+    top = style.size * LANE_LINES if parts.lane else 0.0
+    height = rect.height() - style.size * parts.lines
+    plot = QRectF(rect.left() + left, rect.top() + top, rect.width() - left - right, height)
+    x0, x1 = days or (picture.x0, picture.x1)
+    frame = Frame(plot, x0, x1, picture.y0, picture.y1)
+    if parts.lane:
+        paint_lane(painter, QRectF(plot.left(), rect.top(), plot.width(), top), frame, picture, style)
+    paint_value_axis(painter, QRectF(rect.left(), plot.top(), left, height), frame, picture, style)
+    paint_plot(painter, frame, picture, style)
+    paint_end_labels(painter, QRectF(plot.right(), plot.top(), right, height), frame, picture, style)
+    below = QRectF(plot.left(), plot.bottom(), plot.width(), rect.bottom() - plot.bottom())
+    paint_below(painter, below, frame, picture, style, with_days=parts.days)

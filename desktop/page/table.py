@@ -1,0 +1,111 @@
+"""The page's table set into words: a row for each stretch, or in large print a column for each."""
+
+from __future__ import annotations
+
+from collections.abc import Sequence
+
+from PySide6.QtCore import QLineF
+
+from desktop.page.content import PageContent, Row
+from desktop.page.words import LINE, Face, Words, set_words, width_of
+from desktop.wording.page import HEADS
+
+_LEAST_GAP, _MOST_GAP = 9.0, 30.0
+_SHARED = ("dates", "logged", "readings")
+"""Said once for two measures on the same days."""
+
+Cells = list[list[str]]
+
+
+def wide_table(
+    content: PageContent, rows: Sequence[Row], size: int, width: float
+) -> tuple[list[Words], list[QLineF], float]:
+    """A row for each stretch.
+
+    Args:
+        content: for the columns.
+        rows: those that are shown.
+        size: of the letters.
+        width: of the table.
+
+    Returns:
+        Words and thin lines from (0, 0) on, and the height of the table.
+    """
+    heads = ["", *("" if name == "which" else HEADS[name] for name in content.columns)]
+    cells: Cells = [heads]
+    above: Row | None = None
+    for row in rows:
+        repeats = above is not None and above.head == row.head and above.cells["dates"] == row.cells["dates"]
+        line = ["" if repeats else row.head]
+        for name in content.columns:
+            said = row.cells.get(name, "")
+            same = above is not None and repeats and name in _SHARED and above.cells.get(name) == said
+            line.append("" if same else said)
+        cells.append(line)
+        above = row
+    return _set(cells, size, width, parted_from=[bool(line[0]) for line in cells])
+
+
+def tall_tables(
+    content: PageContent, rows: Sequence[Row], size: int, width: float
+) -> list[tuple[str, list[Words], list[QLineF], float]]:
+    """A column for each stretch, one table a measure; with the measure's short name, if there are two."""
+    tables = []
+    for which in dict.fromkeys(row.cells["which"] for row in rows):
+        shown = [row for row in rows if row.cells["which"] == which]
+        cells: Cells = [["", *(row.head for row in shown)]]
+        for name in content.columns:
+            if name != "which":
+                cells.append([HEADS[name], *(row.cells.get(name, "") for row in shown)])
+        tables.append((which, *_set(cells, size, width, parted_from=[True] * len(cells))))
+    return tables
+
+
+def _set(
+    cells: Cells, size: int, width: float, parted_from: Sequence[bool]
+) -> tuple[list[Words], list[QLineF], float]:
+    bold, plain = Face(size, bold=True), Face(size)
+
+    def face(row: int, column: int) -> Face:
+        return bold if row == 0 or column == 0 else plain
+
+    widths, gap = _widths(cells, size, width)
+    words: list[Words] = []
+    rules: list[QLineF] = []
+    top = 0.0
+    for row, line in enumerate(cells):
+        if row and parted_from[row]:
+            rules.append(QLineF(0.0, top + 1.5, width, top + 1.5))
+            top += 3.0
+        x, height = 0.0, size * LINE
+        for column, text in enumerate(line):
+            if text:
+                placed, tall = set_words([(text, face(row, column))], widths[column] + 0.01)
+                words += [one.moved(x, top) for one in placed]
+                height = max(height, tall)
+            x += widths[column] + gap
+        top += height
+    return words, rules, top
+
+
+def _widths(cells: Cells, size: int, width: float) -> tuple[list[float], float]:
+    """The width of each column, and the gap between two: what the longest cells need, if there is room."""
+    bold, plain = Face(size, bold=True), Face(size)
+    wanted, least = [], []
+    for column in range(len(cells[0])):
+        texts = [
+            (line[column], bold if not row or not column else plain)
+            for row, line in enumerate(cells)
+            if line[column]
+        ]
+        wanted.append(max((width_of(text, face) for text, face in texts), default=0.0))
+        least.append(max((width_of(word, face) for text, face in texts for word in text.split(" ")), default=0.0))
+    gaps = len(wanted) - 1
+    room = width - sum(wanted)
+    if room >= gaps * _LEAST_GAP:
+        return wanted, min(room / max(gaps, 1), _MOST_GAP)
+    room = width - gaps * _LEAST_GAP
+    spare, short = room - sum(least), sum(wanted) - sum(least)
+    if spare <= 0:
+        return [one * room / sum(least) for one in least], _LEAST_GAP
+    return [low + (high - low) * spare / short for low, high in zip(least, wanted, strict=True)], _LEAST_GAP
