@@ -23,7 +23,7 @@ from desktop.chart.painter import (
 )
 from desktop.chart.picture import Picture
 
-LEAST_PLOT = 6.5
+LEAST_PLOT = 5.5
 """The least height of the plot itself, in lines of text."""
 
 

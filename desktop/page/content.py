@@ -28,7 +28,7 @@ from desktop.wording.page import (
     change_line,
     doubt_lines,
     fact_parts,
-    foot_lines,
+    foot_line,
     last_head,
     short_answer_lines,
     short_dates,
@@ -59,10 +59,12 @@ class Row:
     Attributes:
         head: which days.
         cells: by the name of the column in ``HEADS``.
+        gives_way: whether it may be left out where room is short.
     """
 
     head: str
     cells: dict[str, str]
+    gives_way: bool = False
 
 
 @dataclass(frozen=True)
@@ -111,7 +113,7 @@ class PageContent:
     charts: tuple[ChartWords, ...]
     doubts: tuple[str, ...]
     always: tuple[str, ...]
-    foot: tuple[str, ...]
+    foot: str
 
 
 def subjects_of(journal: Journal, measure: int, period: Period | None, today: date) -> list[Subject]:
@@ -152,7 +154,7 @@ def content_of(
     hidden = max(0, len(reviews[0].stretches) - 1 - MOST_AFTER)
     notes = [*dict.fromkeys(change_line(one, hidden) for one in reviews)]
     if is_pair:
-        notes.append(averaging_line(subjects[0].log, reviews[0]))
+        notes = [" ".join([*notes, averaging_line(subjects[0].log, reviews[0])]).strip()]
     return PageContent(
         title=f"{names[0]} and {reviews[-1].measure.title.lower()}" if is_pair else _title(reviews[0]),
         unit=unit_words(reviews[0]),
@@ -175,7 +177,7 @@ def content_of(
         ),
         doubts=doubt_lines(reviews),
         always=always_lines(reviews),
-        foot=foot_lines(reviews[0]),
+        foot=foot_line(reviews[0]),
     )
 
 
@@ -286,18 +288,21 @@ class _Rows:
                 continue
             if stretch is after[-1] and stretch.change is not None and stretch.first > stretch.change:
                 settling = self._inside(stretch.change, stretch.first - 1)
-                rows += [self._row(ROW_HEADS["settling"], settling)] if settling.any() else []
+                rows += [self._extra(ROW_HEADS["settling"], settling)] if settling.any() else []
             rows.append(self._of_stretch(after_head(place, len(after)), stretch))
         last = self._inside(stretches[-1].first, stretches[-1].last)
         if last.sum() > LATELY:
             lately = np.zeros(len(self.points), dtype=bool)
             lately[np.flatnonzero(last)[-LATELY:]] = True
-            rows.append(self._row(last_head(LATELY, self.points.period), lately))
+            rows.append(self._extra(last_head(LATELY, self.points.period), lately))
         return rows
 
     def _inside(self, first: int, last: int) -> NDArray[np.bool_]:
         inside: NDArray[np.bool_] = (self.points.first >= first) & (self.points.first <= last)
         return inside
+
+    def _extra(self, head: str, inside: NDArray[np.bool_]) -> Row:
+        return replace(self._row(head, inside), gives_way=True)
 
     def _of_stretch(self, head: str, stretch: Stretch) -> Row:
         return self._row(head, self._inside(stretch.first, stretch.last), stretch)

@@ -2,6 +2,8 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
+
 from PySide6.QtCore import QBuffer, QIODevice, QMarginsF, QPointF, QRectF, QSize
 from PySide6.QtGui import QImage, QPageLayout, QPageSize, QPainter, QPdfWriter
 from PySide6.QtSvg import QSvgGenerator
@@ -9,7 +11,7 @@ from PySide6.QtSvg import QSvgGenerator
 from desktop.chart.look import LIGHT
 from desktop.chart.painter import Style
 from desktop.chart.whole import paint_chart, side_widths
-from desktop.page.content import PageContent
+from desktop.page.content import ChartWords, PageContent
 from desktop.page.layout import Page
 from desktop.page.painter import paint_sheet
 from desktop.page.words import Face, font_of, plain_font, set_words
@@ -47,19 +49,20 @@ def pdf_of(page: Page) -> bytes:
     return _taken(buffer)
 
 
-def svg_of(content: PageContent) -> bytes:
-    """The charts alone, drawn; with their sentences for those who do not see them."""
+def chart_svg(content: PageContent, place: int | None = None) -> bytes:
+    """The charts alone, drawn, or the one at ``place``; with their sentences for those who do not see them."""
+    charts = content.charts if place is None else content.charts[place : place + 1]
     buffer = _opened()
     generator = QSvgGenerator()
     generator.setOutputDevice(buffer)
     generator.setResolution(72)
-    size = _charts_size(content)
+    size = _charts_size(charts)
     generator.setSize(size)
     generator.setViewBox(QRectF(0, 0, size.width(), size.height()))
     generator.setTitle(content.title)
-    generator.setDescription(" ".join(chart.picture.told for chart in content.charts))
+    generator.setDescription(_told(charts))
     with QPainter(generator) as painter:
-        _paint_charts(painter, content)
+        _paint_charts(painter, content, charts)
     return _taken(buffer)
 
 
@@ -72,33 +75,38 @@ def png_of(content: PageContent) -> bytes:
 
 def chart_image(content: PageContent) -> QImage:
     """The charts alone in pixels, on white."""
-    size = _charts_size(content)
+    size = _charts_size(content.charts)
     image = QImage(size * _PIXELS_A_POINT, QImage.Format.Format_RGB32)
     image.setDevicePixelRatio(_PIXELS_A_POINT)
     image.fill(LIGHT.colour("paper"))
-    image.setText("Description", " ".join(chart.picture.told for chart in content.charts))
+    image.setText("Description", _told(content.charts))
     with QPainter(image) as painter:
-        _paint_charts(painter, content)
+        _paint_charts(painter, content, content.charts)
     return image
 
 
-def _charts_size(content: PageContent) -> QSize:
-    return QSize(CHART_WIDTH, CHART_HEIGHT * len(content.charts))
+def _told(charts: Sequence[ChartWords]) -> str:
+    return " ".join(chart.picture.told for chart in charts)
 
 
-def _paint_charts(painter: QPainter, content: PageContent) -> None:
+def _charts_size(charts: Sequence[ChartWords]) -> QSize:
+    return QSize(CHART_WIDTH, CHART_HEIGHT * len(charts))
+
+
+def _paint_charts(painter: QPainter, content: PageContent, charts: Sequence[ChartWords]) -> None:
+    """Each chart under its title, days under days."""
     style = Style(LIGHT, plain_font(), float(_STYLE_SIZE))
     whole = f"{content.title}, {content.unit}" if content.unit else content.title
     pictures = [chart.picture for chart in content.charts]
     days = (min(one.x0 for one in pictures), max(one.x1 for one in pictures))
     wide = [side_widths(one, style, CHART_HEIGHT - 4 * _EDGE) for one in pictures]
     sides = (max(left for left, _ in wide), max(right for _, right in wide))
-    for place, chart in enumerate(content.charts):
+    for place, chart in enumerate(charts):
         rect = QRectF(0, place * CHART_HEIGHT, CHART_WIDTH, CHART_HEIGHT).adjusted(_EDGE, _EDGE, -_EDGE, -_EDGE)
         words, height = set_words([(chart.title or whole, _HEAD)], rect.width())
+        painter.setPen(LIGHT.colour("ink"))
         for one in words:
             painter.setFont(font_of(one.face))
-            painter.setPen(style.look.colour("ink"))
             painter.drawText(rect.topLeft() + QPointF(one.x, one.y), one.text)
         below = rect.adjusted(0, height + _EDGE / 2, 0, 0)
         paint_chart(painter, below, chart.picture, style, sides=sides, days=days)

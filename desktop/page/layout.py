@@ -10,15 +10,15 @@ from collections.abc import Callable, Sequence
 from dataclasses import dataclass, replace
 from typing import Literal
 
-from PySide6.QtCore import QLineF, QPointF, QRectF
+from PySide6.QtCore import QLineF, QRectF
 
 from desktop.chart.look import LIGHT
 from desktop.chart.painter import Style
 from desktop.chart.picture import Picture
 from desktop.chart.whole import WHOLE, Parts, least_height, side_widths
-from desktop.page.content import PageContent
+from desktop.page.content import PageContent, Row
 from desktop.page.table import tall_tables, wide_table
-from desktop.page.words import LINE, Face, Run, Words, plain_font, set_words
+from desktop.page.words import LINE, Face, Run, Words, plain_font, set_words, width_of
 from desktop.wording.page import AGREED, QUESTION, TRUST, more_in_the_app
 
 PaperName = Literal["a4", "letter"]
@@ -26,7 +26,7 @@ PAPERS: dict[PaperName, tuple[float, float]] = {"a4": (595.276, 841.89), "letter
 """Width and height in points."""
 
 MARGIN = 42.0
-_HEAD_MARGIN, _FOOT_MARGIN = 34.0, 32.0
+_HEAD_MARGIN, _FOOT_MARGIN = 31.0, 27.0
 _WRITING_LINES = 3
 _LEAST_GAP, _AIR, _MOST_AIR = 0.5, 0.35, 1.1
 """Room between boxes, in letters: what there must be, what comes before larger charts, what comes after them."""
@@ -112,7 +112,7 @@ class _Shown:
 
     doubts: int
     lines: int
-    rows: int
+    rows: tuple[Row, ...]
 
 
 def lay_out(content: PageContent, paper: PaperName = "a4", *, large_print: bool = False) -> Page:
@@ -158,12 +158,16 @@ class _Layout:
         return self._spread(boxes, charts=charts)
 
     def _attempts(self) -> list[_Shown]:
+        """What is shown, from everything to the least: the first that fits is taken."""
         doubts = len(self.content.doubts)
         lines = max((len(one.lines) for one in self.content.answers), default=0)
-        rows = len(self.content.rows)
-        fewer_doubts = [_Shown(place, lines, rows) for place in range(doubts, 0, -1)]
-        fewer_lines = [_Shown(0, place, rows) for place in range(lines, -1, -1)]
-        return fewer_doubts + fewer_lines + [_Shown(0, 0, place) for place in range(rows - 1, -1, -1)]
+        rows = self.content.rows
+        kept = tuple(row for row in rows if not row.gives_way)
+        ends = tuple(row for row in kept if row.head in (kept[0].head, kept[-1].head))
+        tried = [_Shown(place, lines, rows) for place in range(doubts, 0, -1)]
+        tried += [_Shown(min(doubts, 1), lines, rows), _Shown(min(doubts, 1), lines, kept), _Shown(0, lines, kept)]
+        tried += [_Shown(0, place, kept) for place in range(lines - 1, -1, -1)]
+        return [*tried, _Shown(0, 0, ends)]
 
     def _needed(self, boxes: Sequence[Box]) -> float:
         return sum(box.rect.height() for box in boxes) + self._gap(_LEAST_GAP) * (len(boxes) - 1)
@@ -254,8 +258,11 @@ class _Layout:
     def _answers(self, shown: _Shown) -> list[Box]:
         boxes = []
         is_one = len(self.content.answers) == 1
-        size = self.sizes.headline if is_one else self.sizes.headline_of_two
+        largest = self.sizes.headline if is_one else self.sizes.headline_of_two
         for place, answer in enumerate(self.content.answers):
+            size = self._fitting(
+                f"{answer.title}: {answer.headline}" if answer.title else answer.headline, largest
+            )
             headline: list[Run] = [(answer.headline, Face(size, bold=True))]
             if answer.title:
                 headline.insert(0, (f"{answer.title}:", Face(size)))
@@ -263,8 +270,14 @@ class _Layout:
             boxes.append(self._text(f"answer {place + 1}", [headline, *lines], between=self.sizes.body * 0.18))
         return boxes
 
+    def _fitting(self, headline: str, largest: int) -> int:
+        """The size at which a headline has one line, if one a little smaller does; else that smaller size."""
+        sizes = range(largest, largest - 3, -1)
+        one_line = (size for size in sizes if width_of(headline, Face(size, bold=True)) <= self.width)
+        return next(one_line, sizes[-1])
+
     def _tables(self, shown: _Shown) -> list[Box]:
-        rows = self.content.rows[: shown.rows]
+        rows = shown.rows
         if not rows:
             return []
         if self.sizes is not LARGE:
@@ -318,15 +331,18 @@ class _Layout:
         return Box("trust", QRectF(0, 0, self.width, top), tuple(words))
 
     def _agreed(self) -> Box:
-        words, head = set_words([(AGREED, self.bold)], self.width)
-        step = self.sizes.body * 1.8
-        lines = [
-            QLineF(QPointF(0, head + step * (place + 1) - 4), QPointF(self.width, head + step * (place + 1) - 4))
+        words, _ = set_words([(AGREED, self.bold)], self.width)
+        step = self.sizes.body * 2
+        begin = words[0].rect.right() + self.sizes.body * 0.6
+        height = step * (_WRITING_LINES - 1) + words[0].rect.bottom()
+        lines = tuple(
+            QLineF(
+                0.0 if place else begin, words[0].y + 2 + step * place, self.width, words[0].y + 2 + step * place
+            )
             for place in range(_WRITING_LINES)
-        ]
-        rect = QRectF(0, 0, self.width, head + step * _WRITING_LINES)
-        return Box("agreed", rect, tuple(words), writing=tuple(lines))
+        )
+        return Box("agreed", QRectF(0, 0, self.width, height), tuple(words), writing=lines)
 
     def _foot(self) -> Box:
         small = Face(self.sizes.foot, quiet=True)
-        return self._text("foot", [[(line, small)] for line in self.content.foot])
+        return self._text("foot", [[(self.content.foot, small)]])

@@ -20,6 +20,8 @@ from desktop.wording.numbers import chance_in_100, count
 QUESTION = "My question today"
 TRUST = "Before trusting it"
 AGREED = "Agreed today"
+TABLE = "The numbers"
+WHICH_DAYS = "Which days"
 HEADS = {
     "dates": "Days",
     "logged": "Logged",
@@ -177,7 +179,7 @@ def change_line(review: Review, hidden: int = 0) -> str:
         for place, one in enumerate(after, start=1)
     ]
     shown = told[hidden:]
-    head = "Changes marked" if len(after) > 1 else "Change marked"
+    head = "Changes" if len(after) > 1 else "Change"
     earlier = f" {count(hidden, 'earlier change')} {'is' if hidden == 1 else 'are'} in the app." if hidden else ""
     return f"{head}: {'; '.join(shown)}.{earlier}"
 
@@ -187,32 +189,33 @@ def averaging_line(log: Log, review: Review) -> str:
     counted = {int(day) for day, kind in zip(log.days, log.kinds, strict=True) if kind in COUNTED_KINDS}
     if not counted or not review.stretches:
         return ""
-    rule = _COMBINED[log.measure.combine_rule]
     left_out = sum(day < review.stretches[0].first for day in counted)
     first = (
-        f"The first {count(left_out, 'day')} of the log {'is' if left_out == 1 else 'are'} left out."
-        if left_out
-        else "The first day of the log is in the numbers."
+        "day 1 included"
+        if not left_out
+        else "day 1 left out"
+        if left_out == 1
+        else f"days 1 to {left_out} left out"
     )
-    return f"Each {log.measure.period} counts once: the {rule} of its readings. {first}"
+    return f"Each {log.measure.period}: the {_COMBINED[log.measure.combine_rule]} of its readings, {first}."
 
 
-def foot_lines(review: Review) -> tuple[str, ...]:
-    """The rule in one line, the version, and the caution."""
-    rule = "Middle = median. Middle half = from the lower to the upper fourth."
+def foot_line(review: Review) -> str:
+    """The rule, the version, and the caution."""
+    rule = "Middle = median; middle half = between the fourths"
     baseline = review.stretches[0] if review.stretches else None
     if baseline is not None and baseline.lower_fence is not None:
-        held = speech_of(review).periods(baseline.observations)
-        carried = "; dashed where they are carried on" if len(review.stretches) > 1 else ""
-        whose = f"{held} before" if len(review.stretches) > 1 else held
-        rule += f" Fences = 1.5 fourth spreads beyond the fourths of the {whose}{carried}."
+        is_carried = len(review.stretches) > 1
+        held = speech_of(review).periods(baseline.observations) + (" before" if is_carried else "")
+        carried = ", dashed where carried on" if is_carried else ""
+        rule += f"; fences = 1.5 fourth spreads beyond them, from the {held}{carried}"
     settling = [one for one in review.stretches if one.change is not None and one.first > one.change]
     if settling:
         longest = max(one.first - (one.change or one.first) for one in settling)
-        rule += f" Settling-in days, up to {longest} after a change, are in no other row."
+        rule += f". The first {count(longest, 'day')} after a change {'is' if longest == 1 else 'are'} settling in"
     if review.measure.missed == "zero":
-        rule += " A missed day counts as zero."
-    return rule, f"{NAME_AND_VERSION}. A record to talk over. {CAUTION}"
+        rule += ". A missed day counts as zero"
+    return f"{rule}. {NAME_AND_VERSION}, a record to talk over. {CAUTION}"
 
 
 def _for_others(sentences: Iterable[str]) -> tuple[str, ...]:
