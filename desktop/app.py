@@ -23,7 +23,7 @@ def main(arguments: Sequence[str]) -> int:
     parser = argparse.ArgumentParser(
         prog="dayfence",
         description="Keep a daily log, mark a change, and see whether it moved.",
-        epilog="Without a window: dayfence review FILE (see dayfence review --help).",
+        epilog="Without a window: dayfence review FILE and dayfence page FILE -o page.pdf (each has its --help).",
     )
     parser.add_argument("journal", nargs="?", type=Path, help="a journal to open in place of your own")
     parser.add_argument("--sample", action="store_true", help="open the sample journal of invented logs")

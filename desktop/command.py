@@ -9,8 +9,8 @@ import json
 import os
 import sys
 import textwrap
-from collections.abc import Sequence
-from dataclasses import replace
+from collections.abc import Callable, Sequence
+from dataclasses import dataclass, replace
 from datetime import date
 from pathlib import Path
 from typing import NoReturn, get_args
@@ -20,23 +20,53 @@ from analysis.answer import Rows, SetAsideRow
 from analysis.log import PERIODS, Aim, Combine, MeasureKind, Missed
 from desktop.errors import DayfenceError, ExchangeError
 from desktop.exchange.bring_in import Reading, choose_column, read_file
+from desktop.journal import records
+from desktop.journal.journal import Journal
 from desktop.wording.findings import findings_of, worded
 from desktop.wording.numbers import count
 from desktop.wording.problems import problem_sentence
 
 _JOURNAL_MAGIC = b"SQLite format 3\x00"
 _WIDTH = 78
+_NO_JOURNAL = "0" * 32
+
+DAYS_EPILOG = "DAY, FIRST, LAST: YYYY, YYYY-MM or YYYY-MM-DD."
 
 
-class _RefusedError(Exception):
+class RefusedError(Exception):
     """One sentence for stderr, and exit 2."""
 
 
-class _Parser(argparse.ArgumentParser):
+@dataclass(frozen=True)
+class Asked:
+    """A log as the options name it, before it is reviewed.
+
+    Attributes:
+        log: what is asked about.
+        changes: those of the journal, then those of the options.
+        rows: what became of the rows it was read from.
+        journal: the journal it is of; of a table, one made for it.
+        measure: its id there.
+    """
+
+    log: Log
+    changes: list[Change]
+    rows: Rows
+    journal: Journal
+    measure: int
+
+    def reviewed(self, options: argparse.Namespace) -> Review:
+        """The answer for this log."""
+        answer = review(self.log, self.changes, options.baseline, options.today, options.worth)
+        return replace(answer, rows=self.rows)
+
+
+class CommandParser(argparse.ArgumentParser):
     """Says what is wrong with an argument in one sentence instead of a usage text."""
 
     def error(self, message: str) -> NoReturn:
-        raise _RefusedError(f"{message[0].upper()}{message[1:]}. See dayfence {self.prog.split()[-1]} --help.")
+        """Called by argparse."""
+        raise RefusedError(f"{message[0].upper()}{message[1:]}. See dayfence {self.prog.split()[-1]} --help.")
 
 
 def main(arguments: Sequence[str]) -> int:
@@ -48,13 +78,23 @@ def main(arguments: Sequence[str]) -> int:
     Returns:
         0 with an answer, 2 with one sentence on stderr.
     """
+    return or_refused(lambda: _answer(arguments[1:]))
+
+
+def or_refused(command: Callable[[], int]) -> int:
+    """The exit code of a command; 2 with one sentence on stderr where it is refused."""
     try:
-        options = _review_parser().parse_args(arguments[1:])
-        answer = worded(_review(options))
-    except _RefusedError as refused:
+        return command()
+    except RefusedError as refused:
         return _refuse(str(refused))
     except (DayfenceError, AnalysisError) as error:
         return _refuse(problem_sentence(error, in_command=True))
+
+
+def _answer(arguments: Sequence[str]) -> int:
+    options = _review_parser().parse_args(arguments)
+    (asked,) = asked_of(options)
+    answer = worded(asked.reviewed(options))
     return _print(_as_json(answer) if options.json else _as_text(answer))
 
 
@@ -79,11 +119,18 @@ def _refuse(sentence: str) -> int:
 
 
 def _review_parser() -> argparse.ArgumentParser:
-    parser = _Parser(
+    parser = CommandParser(
         prog="dayfence review",
         description="Say whether a log moved, by how much, since when, and what else could explain it.",
-        epilog="DAY, FIRST, LAST: YYYY, YYYY-MM or YYYY-MM-DD.",
+        epilog=DAYS_EPILOG,
     )
+    add_log_options(parser)
+    parser.add_argument("--json", action="store_true", help="print the answer as JSON")
+    return parser
+
+
+def add_log_options(parser: argparse.ArgumentParser) -> None:
+    """The options that say which log is asked about, and how it is to be read."""
     parser.add_argument("file", metavar="FILE|JOURNAL", type=Path, help="a table of days and values, or a journal")
     parser.add_argument("--measure", metavar="COLUMN", help="the column, or the measure of a journal")
     parser.add_argument("--kind", choices=get_args(MeasureKind), help="what sort of number it is")
@@ -109,18 +156,21 @@ def _review_parser() -> argparse.ArgumentParser:
     parser.add_argument("--day-column", metavar="COLUMN", help="the column that holds the days")
     parser.add_argument("--century", type=int, choices=(1900, 2000), help="what two-digit years are added to")
     parser.add_argument("--decimal", choices=(".", ","), help="the decimal mark")
-    parser.add_argument("--json", action="store_true", help="print the answer as JSON")
-    return parser
 
 
-def _review(options: argparse.Namespace) -> Review:
-    if _is_journal(options.file):
-        log, changes, rows = _from_journal(options)
-    else:
-        log, changes, rows = _from_table(options)
+def asked_of(options: argparse.Namespace, *, with_pair: bool = False) -> list[Asked]:
+    """The log that the options name.
+
+    Args:
+        options: those of :func:`add_log_options`.
+        with_pair: whether the measure that is written down together with it is asked about too.
+
+    Raises:
+        DayfenceError: the file cannot be read, or not without an answer from the person.
+    """
+    read = _from_journal if _is_journal(options.file) else _from_table
     added = [Change(day, label, options.settle) for day, label in options.change]
-    answer = review(log, [*changes, *added], options.baseline, options.today, options.worth)
-    return replace(answer, rows=rows)
+    return [replace(one, changes=[*one.changes, *added]) for one in read(options, with_pair)]
 
 
 def _is_journal(path: Path) -> bool:
@@ -131,7 +181,7 @@ def _is_journal(path: Path) -> bool:
         return False  # The importer says what is wrong with the file.
 
 
-def _from_table(options: argparse.Namespace) -> tuple[Log, list[Change], Rows]:
+def _from_table(options: argparse.Namespace, with_pair: bool) -> list[Asked]:
     reading = read_file(
         options.file,
         day_order=options.day_order,
@@ -140,13 +190,31 @@ def _from_table(options: argparse.Namespace) -> tuple[Log, list[Change], Rows]:
         columns=None if options.measure is None else [options.measure],
         century=options.century,
     )
-    reading = choose_column(reading, options.measure)
+    is_pair = len(reading.columns) == 2 and len({column.pair for column in reading.columns} - {""}) == 1
+    names = [column.name for column in reading.columns] if with_pair and is_pair else [options.measure]
+    chosen = [choose_column(reading, name) for name in names]
+    kept: list[records.Record] = [records.Person(_NO_JOURNAL)]
+    for number, one in enumerate(chosen, start=1):
+        column = one.columns[0]
+        kept.append(records.Measure(number, number, column.name, column.unit))
+        kept += [
+            records.Entry(number, value.day, value.slot, value.value, original=value.original, source="table")
+            for value in column.values
+        ]
+    journal = Journal.of(kept)
+    return [
+        Asked(_log_of(options, one), [], _rows(one), journal, number) for number, one in enumerate(chosen, start=1)
+    ]
+
+
+def _log_of(options: argparse.Namespace, reading: Reading) -> Log:
+    """The log of the one column of a reading."""
     column = reading.columns[0]
     # Rows of months or years alone are a monthly or yearly series.
     measure = _measure(options, Measure(column.name, column.unit, period=reading.period))
     values = [(value.day, value.value, value.slot) for value in column.values]
     blanks = [(day, None, "") for _, day in column.blanks]
-    return Log.from_pairs([*values, *blanks], measure), [], _rows(reading)
+    return Log.from_pairs([*values, *blanks], measure)
 
 
 def _rows(reading: Reading) -> Rows:
@@ -154,7 +222,7 @@ def _rows(reading: Reading) -> Rows:
     return Rows(len(reading.fates), len(reading.fates) - len(aside), aside)
 
 
-def _from_journal(options: argparse.Namespace) -> tuple[Log, list[Change], Rows]:
+def _from_journal(options: argparse.Namespace, with_pair: bool) -> list[Asked]:
     from desktop.storage.store import Store  # sqlite3 only where a journal is read
 
     store = Store.open(options.file)
@@ -166,15 +234,19 @@ def _from_journal(options: argparse.Namespace) -> tuple[Log, list[Change], Rows]
     titles = [measure.title for measure in columns]
     if not columns:
         raise ExchangeError("no value column", columns=titles)
-    if options.measure is None and len(columns) > 1:
-        raise ExchangeError("which value column", choices=titles)
     named = [one for one in columns if options.measure in (None, one.title)]
     if not named:
         raise ExchangeError("unknown column", name=options.measure, choices=titles)
-    chosen = named[0]
-    log = journal.log_of(chosen.id)
-    log = replace(log, measure=_measure(options, log.measure))
-    return log, journal.analysis_changes(chosen.id), Rows(len(log), len(log))
+    together = journal.together(named[0].id) if with_pair else [named[0].id]
+    if options.measure is None and len(columns) > len(together):
+        raise ExchangeError("which value column", choices=titles)
+    asked = []
+    for measure in together:
+        log = journal.log_of(measure)
+        log = replace(log, measure=_measure(options, log.measure))
+        rows = Rows(len(log), len(log))
+        asked.append(Asked(log, journal.analysis_changes(measure), rows, journal, measure))
+    return asked
 
 
 def _measure(options: argparse.Namespace, found: Measure) -> Measure:

@@ -73,12 +73,21 @@ def missing_for_window(environment: Mapping[str, str] | None = None) -> str | No
     return None
 
 
-def _library_sentence(message: str) -> str:
+def missing_for_drawing() -> str | None:
+    """One sentence on what this machine lacks to draw without a window, or None when nothing is lacking."""
+    try:
+        from PySide6 import QtSvg  # noqa: F401 - it brings everything that drawing needs
+    except ImportError as error:
+        return _library_sentence(str(error), "Drawing")
+    return None
+
+
+def _library_sentence(message: str, what: str = "The window") -> str:
     found = re.search(r"(lib[\w.+-]+?\.so(?:\.\d+)*)", message)
     library = found.group(1) if found else "a library"
     package = _PACKAGES.get(library)
     install = f"Install it with: apt-get install {package}" if package else "Install it with your package manager"
-    return f"The window needs {library}, which this machine lacks. {install}. {_ELSE}"
+    return f"{what} needs {library}, which this machine lacks. {install}. {_ELSE}"
 
 
 def _has_wayland(variables: Mapping[str, str]) -> bool:

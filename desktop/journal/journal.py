@@ -99,6 +99,16 @@ class Journal:
         shown = [measure for measure in self.measures.values() if not measure.archived]
         return sorted(shown, key=lambda measure: (measure.position, measure.id))
 
+    def together(self, measure: int) -> list[int]:
+        """The ids of the two measures written down together with this one among them, or its own alone.
+
+        Raises:
+            KeyError: no such measure.
+        """
+        word = self.measures[measure].pair
+        pair = [one.id for one in self.columns() if word and one.pair == word]
+        return pair if len(pair) == 2 and measure in pair else [measure]
+
     def entry(self, measure: int, day: date, slot: str = "") -> Entry | None:
         """What is written down for a measure on a day, or None."""
         return self.entries.get(measure, {}).get((day, slot))

@@ -9,11 +9,10 @@ from datetime import date
 import numpy as np
 from numpy.typing import NDArray
 
-import analysis
 from analysis import Log, Review
 from analysis.answer import Stretch
 from analysis.batch.fourths import fourths
-from analysis.log import COUNTED_KINDS, Period
+from analysis.log import COUNTED_KINDS
 from desktop.chart.picture import Picture, empty_picture, picture_of
 from desktop.journal.journal import Journal
 from desktop.wording.days import full_day
@@ -21,6 +20,7 @@ from desktop.wording.findings import findings_of, speech_of
 from desktop.wording.page import (
     HEADS,
     ROW_HEADS,
+    UNNAMED,
     after_head,
     always_lines,
     answer_lines,
@@ -32,7 +32,10 @@ from desktop.wording.page import (
     last_head,
     short_answer_lines,
     short_dates,
+    short_names,
     shortened,
+    title_of_two,
+    title_with_unit,
     unit_words,
 )
 
@@ -116,24 +119,6 @@ class PageContent:
     foot: str
 
 
-def subjects_of(journal: Journal, measure: int, period: Period | None, today: date) -> list[Subject]:
-    """A measure with its review, and the one it is written down together with, where there is one."""
-    subjects = []
-    for one in together(journal, measure):
-        log = journal.log_of(one, period)
-        worth = journal.measures[one].worth
-        answer = analysis.review(log, journal.analysis_changes(one), today=today, worth=worth)
-        subjects.append(Subject(one, log, answer))
-    return subjects
-
-
-def together(journal: Journal, measure: int) -> list[int]:
-    """The ids of the measures that share a page: the pair, as upper and lower pressure, or the one alone."""
-    word = journal.measures[measure].pair
-    pair = [one.id for one in journal.columns() if word and one.pair == word]
-    return pair if len(pair) == 2 and measure in pair else [measure]
-
-
 def content_of(
     journal: Journal, subjects: Sequence[Subject], printed: date, question: str | None = None
 ) -> PageContent:
@@ -148,7 +133,8 @@ def content_of(
     subjects = [_bounded(one) for one in subjects]
     reviews = [one.review for one in subjects]
     is_pair = len(subjects) > 1
-    names = _short_names([one.measure.title for one in reviews])
+    titles = [_title(one) for one in reviews]
+    names = short_names(titles) if is_pair else [""]
     rows = [row for one, name in zip(subjects, names, strict=True) for row in _Rows(one, name).rows()]
     asked = journal.person.question if question is None else question
     hidden = max(0, len(reviews[0].stretches) - 1 - MOST_AFTER)
@@ -156,7 +142,7 @@ def content_of(
     if is_pair:
         notes = [" ".join([*notes, averaging_line(subjects[0].log, reviews[0])]).strip()]
     return PageContent(
-        title=f"{names[0]} and {reviews[-1].measure.title.lower()}" if is_pair else _title(reviews[0]),
+        title=title_of_two(titles) if is_pair else titles[0],
         unit=unit_words(reviews[0]),
         facts=_facts(journal, subjects[0], printed),
         question=shortened(asked, _LONGEST_QUESTION),
@@ -170,10 +156,7 @@ def content_of(
         rows=tuple(_ordered(rows, len(subjects))),
         notes=tuple(note for note in notes if note),
         charts=tuple(
-            ChartWords(
-                f"{_title(one.review)}, {unit_words(one.review)}" if is_pair else "", _picture(one, journal)
-            )
-            for one in subjects
+            ChartWords(title_with_unit(one.review) if is_pair else "", _picture(one, journal)) for one in subjects
         ),
         doubts=doubt_lines(reviews),
         always=always_lines(reviews),
@@ -182,7 +165,7 @@ def content_of(
 
 
 def _title(review: Review) -> str:
-    return review.measure.title or "Log"
+    return review.measure.title or UNNAMED
 
 
 def _picture(subject: Subject, journal: Journal) -> Picture:
@@ -231,14 +214,6 @@ def _facts(journal: Journal, subject: Subject, printed: date) -> tuple[str, ...]
     )
     name = shortened(journal.person.name, _LONGEST_TITLE)
     return (*dated, *([name] if name else []), f"printed {full_day(printed)}")
-
-
-def _short_names(titles: Sequence[str]) -> list[str]:
-    """Two titles without the words they end with alike: ``Upper`` and ``Lower`` pressure."""
-    words = [title.split() for title in titles]
-    while len(words) > 1 and all(len(one) > 1 for one in words) and len({one[-1].lower() for one in words}) == 1:
-        words = [one[:-1] for one in words]
-    return [" ".join(one) for one in words]
 
 
 def _columns(rows: Sequence[Row]) -> tuple[str, ...]:
@@ -319,7 +294,7 @@ class _Rows:
             "dates": short_dates(first, last, points.period, with_year=self.with_year),
             "logged": f"{logged} of {int(inside.sum())}",
             "readings": str(readings),
-            "which": self.name if self.name != self.review.measure.title else "",
+            "which": self.name,
         }
         if not len(values):
             return Row(head, cells)

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
+from pathlib import Path
 
 from PySide6.QtCore import QBuffer, QIODevice, QMarginsF, QPointF, QRectF, QSize
 from PySide6.QtGui import QImage, QPageLayout, QPageSize, QPainter, QPdfWriter
@@ -83,6 +84,21 @@ def chart_image(content: PageContent) -> QImage:
     with QPainter(image) as painter:
         _paint_charts(painter, content, content.charts)
     return image
+
+
+def write_file(path: Path, data: bytes) -> None:
+    """Write a file whole: what was there under its name stays until all of it is on the disk.
+
+    Raises:
+        OSError: it cannot be written there.
+    """
+    part = path.with_name(f".{path.name}.part")
+    try:
+        part.write_bytes(data)
+        part.replace(path)
+    except OSError:
+        part.unlink(missing_ok=True)
+        raise
 
 
 def _told(charts: Sequence[ChartWords]) -> str:

@@ -10,7 +10,7 @@ from desktop.page.content import PageContent, Row
 from desktop.page.words import LINE, Face, Words, set_words, width_of
 from desktop.wording.page import HEADS
 
-_LEAST_GAP, _MOST_GAP = 9.0, 30.0
+_LEAST_GAP, _MOST_GAP = 8.0, 30.0
 _SHARED = ("dates", "logged", "readings")
 """Said once for two measures on the same days."""
 
@@ -89,23 +89,35 @@ def _set(
 
 
 def _widths(cells: Cells, size: int, width: float) -> tuple[list[float], float]:
-    """The width of each column, and the gap between two: what the longest cells need, if there is room."""
-    bold, plain = Face(size, bold=True), Face(size)
-    wanted, least = [], []
-    for column in range(len(cells[0])):
-        texts = [
-            (line[column], bold if not row or not column else plain)
-            for row, line in enumerate(cells)
-            if line[column]
-        ]
-        wanted.append(max((width_of(text, face) for text, face in texts), default=0.0))
-        least.append(max((width_of(word, face) for text, face in texts for word in text.split(" ")), default=0.0))
-    gaps = len(wanted) - 1
-    room = width - sum(wanted)
-    if room >= gaps * _LEAST_GAP:
-        return wanted, min(room / max(gaps, 1), _MOST_GAP)
+    """The width of each column, and the gap between two.
+
+    Where there is no room for every cell on one line, the heads are parted first, then the other cells.
+    """
+    gaps = len(cells[0]) - 1
     room = width - gaps * _LEAST_GAP
-    spare, short = room - sum(least), sum(wanted) - sum(least)
-    if spare <= 0:
-        return [one * room / sum(least) for one in least], _LEAST_GAP
-    return [low + (high - low) * spare / short for low, high in zip(least, wanted, strict=True)], _LEAST_GAP
+    whole = _needed(cells, size, parted_rows=0)
+    if sum(whole) <= room:
+        return whole, min((width - sum(whole)) / max(gaps, 1), _MOST_GAP)
+    wider = whole
+    for parted_rows in (1, len(cells)):
+        narrow = _needed(cells, size, parted_rows=parted_rows)
+        spare = room - sum(narrow)
+        if spare >= 0:
+            part = spare / (sum(wider) - sum(narrow))
+            return [low + (high - low) * part for low, high in zip(narrow, wider, strict=True)], _LEAST_GAP
+        wider = narrow
+    return [one * room / sum(wider) for one in wider], _LEAST_GAP
+
+
+def _needed(cells: Cells, size: int, parted_rows: int) -> list[float]:
+    """The width each column needs when the cells of the first rows may be parted at their spaces."""
+    bold, plain = Face(size, bold=True), Face(size)
+    needed = []
+    for column in range(len(cells[0])):
+        widest = 0.0
+        for row, line in enumerate(cells):
+            face = bold if not row or not column else plain
+            pieces = line[column].split(" ") if row < parted_rows else [line[column]]
+            widest = max([widest, *(width_of(piece.replace("\u00a0", " "), face) for piece in pieces)])
+        needed.append(widest)
+    return needed

@@ -20,6 +20,7 @@ from desktop.wording.numbers import chance_in_100, count
 QUESTION = "My question today"
 TRUST = "Before trusting it"
 AGREED = "Agreed today"
+UNNAMED = "Log"
 TABLE = "The numbers"
 WHICH_DAYS = "Which days"
 HEADS = {
@@ -64,6 +65,28 @@ def unit_words(review: Review) -> str:
     speech = speech_of(review)
     unit = review.measure.unit
     return f"{unit}{speech.rate()}" if unit else ""
+
+
+def title_with_unit(review: Review) -> str:
+    """``Upper pressure, mmHg``."""
+    return ", ".join(part for part in (review.measure.title or UNNAMED, unit_words(review)) if part)
+
+
+def short_names(titles: Sequence[str]) -> list[str]:
+    """Titles without the words they begin or end with alike: ``Upper`` and ``Lower`` of two pressures."""
+    words = [title.split() for title in titles]
+    for place, rest in ((-1, slice(None, -1)), (0, slice(1, None))):
+        while all(len(one) > 1 for one in words) and len({one[place].lower() for one in words}) == 1:
+            words = [one[rest] for one in words]
+    return [" ".join(one) for one in words]
+
+
+def title_of_two(titles: Sequence[str]) -> str:
+    """``Upper and lower pressure``."""
+    first, second = short_names(titles)
+    if second != titles[1] and titles[1].startswith(second):
+        return f"{first} and {titles[1][0].lower()}{titles[1][1:]}"
+    return f"{titles[0]} and {second}"
 
 
 def answer_lines(review: Review) -> tuple[str, ...]:
@@ -216,6 +239,16 @@ def foot_line(review: Review) -> str:
     if review.measure.missed == "zero":
         rule += ". A missed day counts as zero"
     return f"{rule}. {NAME_AND_VERSION}, a record to talk over. {CAUTION}"
+
+
+def there_already(path: object) -> str:
+    """Why a file is not written on the command line."""
+    return f"{path} is there already. Choose another name, or write over it with --force."
+
+
+def cannot_be_written(path: object, reason: str) -> str:
+    """Why a file could not be written."""
+    return f"{path} cannot be written: {reason or 'the disk did not take it'}. Choose another place."
 
 
 def _for_others(sentences: Iterable[str]) -> tuple[str, ...]:
