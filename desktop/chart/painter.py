@@ -11,11 +11,12 @@ from dataclasses import dataclass
 import numpy as np
 from numpy.typing import NDArray
 from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
-from PySide6.QtGui import QBrush, QColor, QFont, QFontMetricsF, QPainter, QPen, QPolygonF
+from PySide6.QtGui import QBrush, QFont, QFontMetricsF, QPainter, QPen, QPolygonF
 
-from desktop.chart.look import Look
-from desktop.chart.picture import SHAPES, EndLabel, LanePart, Line, Picture, Side
+from desktop.chart.picture import SHAPES, EndLabel, LanePart, Line, Picture
+from desktop.chart.style import Style
 from desktop.chart.ticks import day_ticks, value_ticks
+from desktop.chart.values import Places, paint_values
 
 LANE_LINES = 1.9
 """Height of the lane, in lines of text."""
@@ -29,6 +30,7 @@ BELOW_LINES_BARE = 2.0
 _TICK_STRIP = 0.7
 _LEAST_JOINED = 7
 """Days nearer to one another than this part of a letter are not joined: the lines would hide the days."""
+_LEAST_RIMMED = 1.8
 _DASHES = {
     "fence": Qt.PenStyle.SolidLine,
     "carried fence": Qt.PenStyle.DashLine,
@@ -58,33 +60,6 @@ class Frame:
     def day_width(self) -> float:
         """The width of one day."""
         return self.rect.width() / (self.x1 - self.x0)
-
-
-@dataclass(frozen=True)
-class Style:
-    """Inks and type.
-
-    Attributes:
-        look: the inks.
-        font: the plain face.
-        size: height of its letters, in the painter's unit.
-    """
-
-    look: Look
-    font: QFont
-    size: float
-
-    def face(self, *, bold: bool = False, italic: bool = False, part: float = 1.0) -> QFont:
-        """The face, bold or italic, at a part of its size."""
-        face = QFont(self.font)
-        face.setPixelSize(max(6, round(self.size * part)))
-        face.setBold(bold)
-        face.setItalic(italic)
-        return face
-
-    def side(self, side: Side, alpha: int = 255) -> QColor:
-        """The ink of the baseline or of the days after."""
-        return self.look.colour(side, alpha)
 
 
 def paint_plot(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:
@@ -305,7 +280,7 @@ def _days(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> No
         chosen = seen & (marks.shape == place)
         if chosen.any():
             _shapes(painter, name, x[chosen], y[chosen], marks.is_zero[chosen], radius, style)
-    _value_labels(painter, frame, picture, x, y, radius, style)
+    paint_values(painter, frame.rect, picture, Places(x, y, radius), style)
 
 
 def _joins(
@@ -343,7 +318,9 @@ def _shapes(
         match name:
             case "before":
                 colour = look.colour("before")
-                painter.setPen(QPen(colour, thin) if zero else QPen(look.colour("paper"), thin * 0.5))
+                # A rim of paper parts marks that touch; of a very small one it would leave nothing.
+                is_rimmed = not zero and radius > _LEAST_RIMMED
+                painter.setPen(QPen(look.colour("paper"), thin * 0.5) if is_rimmed else QPen(colour, thin))
                 painter.setBrush(paper if zero else QBrush(colour))
                 painter.drawEllipse(QPointF(at_x, at_y), radius, radius)
             case "after":
@@ -367,44 +344,11 @@ def _shapes(
 def _triangle(painter: QPainter, x: float, y: float, size: float, *, up: bool, hollow: bool, style: Style) -> None:
     tip = -size if up else size
     ink = style.look.colour("ink")
-    painter.setPen(QPen(ink if hollow else style.look.colour("paper"), max(size * 0.2, 0.6)))
+    is_rimmed = not hollow and size > _LEAST_RIMMED
+    painter.setPen(QPen(style.look.colour("paper") if is_rimmed else ink, max(size * 0.2, 0.6)))
     painter.setBrush(QBrush(style.look.colour("paper") if hollow else ink))
     base = y - tip * 0.75
     painter.drawPolygon(QPolygonF([QPointF(x, y + tip), QPointF(x - size, base), QPointF(x + size, base)]))
-
-
-def _value_labels(
-    painter: QPainter,
-    frame: Frame,
-    picture: Picture,
-    x: NDArray[np.float64],
-    y: NDArray[np.float64],
-    radius: float,
-    style: Style,
-) -> None:
-    """The values of days outside the fences; one that would touch another is left to its mark."""
-    face = style.face(bold=True, part=0.92)
-    metrics = QFontMetricsF(face)
-    painter.setFont(face)
-    painter.setPen(style.look.colour("ink"))
-    taken: list[QRectF] = []
-    # The farthest days first: where room is short, they keep their numbers.
-    middle = float(np.median(y))
-    for place in sorted(picture.marks.labels, key=lambda at: -abs(float(y[at]) - middle)):
-        text = picture.marks.labels[place]
-        width, height = metrics.horizontalAdvance(text) + 2, metrics.height() * 0.85
-        is_above = SHAPES[int(picture.marks.shape[place])] == "above"
-        offset = -(radius * 1.9 + height) if is_above else radius * 1.9
-        box = QRectF(float(x[place]) - width / 2, float(y[place]) + offset, width, height)
-        if box.top() < frame.rect.top():
-            box.moveTop(float(y[place]) + radius * 1.9)
-        if box.bottom() > frame.rect.bottom():
-            box.moveTop(float(y[place]) - radius * 1.9 - height)
-        box.moveLeft(min(max(box.left(), frame.rect.left()), frame.rect.right() - width))
-        if any(box.intersects(other) for other in taken):
-            continue
-        taken.append(box)
-        painter.drawText(box, Qt.AlignmentFlag.AlignCenter | Qt.TextFlag.TextDontClip, text)
 
 
 def _edge_words(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:

@@ -15,7 +15,6 @@ from desktop.chart.painter import (
     BELOW_LINES,
     LANE_LINES,
     Frame,
-    Style,
     end_labels_width,
     paint_below,
     paint_end_labels,
@@ -25,6 +24,7 @@ from desktop.chart.painter import (
     value_axis_width,
 )
 from desktop.chart.picture import Picture
+from desktop.chart.style import Style
 
 _FEWEST_DAYS_SHOWN = 5
 _ZOOM = 1.5

@@ -12,7 +12,6 @@ from desktop.chart.painter import (
     BELOW_LINES_BARE,
     LANE_LINES,
     Frame,
-    Style,
     end_labels_width,
     paint_below,
     paint_end_labels,
@@ -22,6 +21,7 @@ from desktop.chart.painter import (
     value_axis_width,
 )
 from desktop.chart.picture import Picture
+from desktop.chart.style import Style
 
 LEAST_PLOT = 5.5
 """The least height of the plot itself, in lines of text."""

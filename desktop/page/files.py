@@ -10,7 +10,7 @@ from PySide6.QtGui import QImage, QPageLayout, QPageSize, QPainter, QPdfWriter
 from PySide6.QtSvg import QSvgGenerator
 
 from desktop.chart.look import LIGHT
-from desktop.chart.painter import Style
+from desktop.chart.style import Style
 from desktop.chart.whole import paint_chart, side_widths
 from desktop.page.content import ChartWords, PageContent
 from desktop.page.layout import Page

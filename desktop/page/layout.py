@@ -13,8 +13,8 @@ from typing import Literal
 from PySide6.QtCore import QLineF, QRectF
 
 from desktop.chart.look import LIGHT
-from desktop.chart.painter import Style
 from desktop.chart.picture import Picture
+from desktop.chart.style import Style
 from desktop.chart.whole import WHOLE, Parts, least_height, side_widths
 from desktop.page.content import PageContent, Row
 from desktop.page.table import tall_tables, wide_table
@@ -28,6 +28,9 @@ PAPERS: dict[PaperName, tuple[float, float]] = {"a4": (595.276, 841.89), "letter
 MARGIN = 42.0
 _HEAD_MARGIN, _FOOT_MARGIN = 31.0, 27.0
 _WRITING_LINES = 3
+_CHART_MORE = 0.1
+"""What charts take beyond their part of the sheet where nothing else needs it."""
+
 _LEAST_GAP, _AIR, _MOST_AIR = 0.5, 0.35, 1.1
 """Room between boxes, in letters: what there must be, what comes before larger charts, what comes after them."""
 
@@ -137,25 +140,25 @@ class _Layout:
 
     def page(self, *, two_sheets: bool) -> Page:
         if two_sheets:
-            sheets = [self._sheet(self._first, charts=False), self._sheet(self._second, charts=True)]
+            sheets = [self._sheet(self._first), self._sheet(self._second)]
         else:
-            sheets = [self._sheet(lambda shown: [*self._first(shown), *self._second(shown)], charts=True)]
+            sheets = [self._sheet(lambda shown: [*self._first(shown), *self._second(shown)])]
         return Page(self.paper, self.content.title, tuple(sheets))
 
     def _first(self, shown: _Shown) -> list[Box]:
-        return [self._title(), self._question(), *self._answers(shown), *self._tables(shown), *self._notes()]
+        return [self._title(), self._question(), *self._answers(shown), *self._tables(shown)]
 
     def _second(self, shown: _Shown) -> list[Box]:
-        return [*self._charts(), self._trust(shown), self._agreed(), self._foot()]
+        return [*self._notes(), *self._charts(), *self._trust(shown), self._agreed(), self._foot()]
 
-    def _sheet(self, boxes_of: Callable[[_Shown], list[Box]], *, charts: bool) -> tuple[Box, ...]:
+    def _sheet(self, boxes_of: Callable[[_Shown], list[Box]]) -> tuple[Box, ...]:
         """The boxes of one sheet with as much as it has room for."""
         boxes: list[Box] = []
         for shown in self._attempts():
             boxes = boxes_of(shown)
             if self._needed(boxes) <= self.height:
                 break
-        return self._spread(boxes, charts=charts)
+        return self._spread(boxes)
 
     def _attempts(self) -> list[_Shown]:
         """What is shown, from everything to the least: the first that fits is taken."""
@@ -175,7 +178,7 @@ class _Layout:
     def _gap(self, part: float) -> float:
         return self.sizes.body * part
 
-    def _spread(self, boxes: list[Box], *, charts: bool) -> tuple[Box, ...]:
+    def _spread(self, boxes: list[Box]) -> tuple[Box, ...]:
         """Give what room is left to the charts, then to the gaps; the foot stands at the foot."""
         left = self.height - self._needed(boxes)
         gaps = max(len(boxes) - 1, 1)
@@ -183,11 +186,15 @@ class _Layout:
         left -= wider * gaps
         many = sum(box.chart is not None for box in boxes)
         grown = 0.0
-        if charts and many:
+        if many:
             least = sum(box.rect.height() for box in boxes if box.chart is not None)
             grown = max(0.0, min(left, PAPERS[self.paper][1] * self.sizes.chart_part - least))
             left -= grown
-        gap = self._gap(_LEAST_GAP) + wider + min(left / gaps, self._gap(_MOST_AIR))
+        airy = min(left / gaps, self._gap(_MOST_AIR))
+        left -= airy * gaps
+        if many:
+            grown += min(left, PAPERS[self.paper][1] * _CHART_MORE)
+        gap = self._gap(_LEAST_GAP) + wider + airy
         placed: list[Box] = []
         top = _HEAD_MARGIN
         for box in boxes:
@@ -313,14 +320,14 @@ class _Layout:
             boxes.append(Box(f"chart {place}", rect, tuple(words), chart=drawn))
         return boxes
 
-    def _trust(self, shown: _Shown) -> Box:
+    def _trust(self, shown: _Shown) -> list[Box]:
         said = list(self.content.doubts[: shown.doubts])
         left = len(self.content.doubts) - len(said)
         if left:
             said.append(more_in_the_app(left))
         said += self.content.always
         if not said:
-            return self._text("trust", [])
+            return []
         indent = self.sizes.body
         words, top = set_words([(TRUST, self.bold)], self.width)
         for line in said:
@@ -328,7 +335,7 @@ class _Layout:
             words += [Words(indent * 0.3, placed[0].y + top, "·", self.bold)]
             words += [one.moved(indent, top) for one in placed]
             top += height
-        return Box("trust", QRectF(0, 0, self.width, top), tuple(words))
+        return [Box("trust", QRectF(0, 0, self.width, top), tuple(words))]
 
     def _agreed(self) -> Box:
         words, _ = set_words([(AGREED, self.bold)], self.width)

@@ -10,7 +10,7 @@ from desktop.page.content import PageContent, Row
 from desktop.page.words import LINE, Face, Words, set_words, width_of
 from desktop.wording.page import HEADS
 
-_LEAST_GAP, _MOST_GAP = 8.0, 30.0
+_LEAST_GAP, _MOST_GAP = 7.5, 30.0
 _SHARED = ("dates", "logged", "readings")
 """Said once for two measures on the same days."""
 
@@ -64,28 +64,47 @@ def tall_tables(
 def _set(
     cells: Cells, size: int, width: float, parted_from: Sequence[bool]
 ) -> tuple[list[Words], list[QLineF], float]:
+    """Set the cells; one with nothing under it, up to the next parting line, may use the lines below."""
     bold, plain = Face(size, bold=True), Face(size)
-
-    def face(row: int, column: int) -> Face:
-        return bold if row == 0 or column == 0 else plain
-
     widths, gap = _widths(cells, size, width)
-    words: list[Words] = []
-    rules: list[QLineF] = []
-    top = 0.0
+    lefts = [sum(widths[:column]) + gap * column for column in range(len(widths))]
+    heights = [size * LINE] * len(cells)
+    placed: list[tuple[int, int, list[Words]]] = []
+    spanning: list[tuple[int, int, float]] = []
     for row, line in enumerate(cells):
+        for column, text in enumerate(line):
+            if not text:
+                continue
+            face = plain if row and column else bold
+            words, tall = set_words([(text, face)], widths[column] + 0.01)
+            placed.append((row, column, words))
+            last = row
+            while last + 1 < len(cells) and not parted_from[last + 1] and not cells[last + 1][column]:
+                last += 1
+            if last == row:
+                heights[row] = max(heights[row], tall)
+            else:
+                spanning.append((row, last, tall))
+    for row, last, tall in spanning:
+        heights[last] += max(0.0, tall - sum(heights[row : last + 1]))
+    tops, rules = _parted(heights, width, parted_from)
+    words = [one.moved(lefts[column], tops[row]) for row, column, cell in placed for one in cell]
+    return words, rules, tops[-1]
+
+
+def _parted(
+    heights: Sequence[float], width: float, parted_from: Sequence[bool]
+) -> tuple[list[float], list[QLineF]]:
+    """The top of each row and the end of the last, with a thin line above the rows that begin a part."""
+    tops, rules = [], []
+    top = 0.0
+    for row, height in enumerate(heights):
         if row and parted_from[row]:
             rules.append(QLineF(0.0, top + 1.5, width, top + 1.5))
             top += 3.0
-        x, height = 0.0, size * LINE
-        for column, text in enumerate(line):
-            if text:
-                placed, tall = set_words([(text, face(row, column))], widths[column] + 0.01)
-                words += [one.moved(x, top) for one in placed]
-                height = max(height, tall)
-            x += widths[column] + gap
+        tops.append(top)
         top += height
-    return words, rules, top
+    return [*tops, top], rules
 
 
 def _widths(cells: Cells, size: int, width: float) -> tuple[list[float], float]:
@@ -98,15 +117,13 @@ def _widths(cells: Cells, size: int, width: float) -> tuple[list[float], float]:
     whole = _needed(cells, size, parted_rows=0)
     if sum(whole) <= room:
         return whole, min((width - sum(whole)) / max(gaps, 1), _MOST_GAP)
-    wider = whole
-    for parted_rows in (1, len(cells)):
-        narrow = _needed(cells, size, parted_rows=parted_rows)
-        spare = room - sum(narrow)
-        if spare >= 0:
-            part = spare / (sum(wider) - sum(narrow))
-            return [low + (high - low) * part for low, high in zip(narrow, wider, strict=True)], _LEAST_GAP
-        wider = narrow
-    return [one * room / sum(wider) for one in wider], _LEAST_GAP
+    widths, least = _needed(cells, size, parted_rows=1), _needed(cells, size, parted_rows=len(cells))
+    # As few columns as will do are parted: those that give most.
+    for column in sorted(range(len(widths)), key=lambda one: least[one] - widths[one]):
+        if sum(widths) <= room:
+            break
+        widths[column] = max(least[column], widths[column] - (sum(widths) - room))
+    return ([one * room / sum(widths) for one in widths] if sum(widths) > room else widths), _LEAST_GAP
 
 
 def _needed(cells: Cells, size: int, parted_rows: int) -> list[float]:

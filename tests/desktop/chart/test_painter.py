@@ -10,7 +10,6 @@ from PySide6.QtGui import QColor, QFont, QImage, QPainter
 from desktop.chart.look import DARK, GREY, LIGHT, Look
 from desktop.chart.painter import (
     Frame,
-    Style,
     end_labels_width,
     paint_below,
     paint_end_labels,
@@ -20,6 +19,7 @@ from desktop.chart.painter import (
     value_axis_width,
 )
 from desktop.chart.picture import Picture, empty_picture
+from desktop.chart.style import Style
 from desktop.journal.records import Span
 from desktop.screens.theme import CAUTION_INK
 from tests.builders import day, number
