@@ -201,6 +201,13 @@ class Switches:
 
 
 @dataclass(frozen=True)
+class Season:
+    """Whether the usual place of each month in the year is taken off every number of the review."""
+
+    taken_off: bool
+
+
+@dataclass(frozen=True)
 class StillNeeded:
     """Further logged days that would show a move of ``for_amount`` in 80 of 100 logs.
 
@@ -251,7 +258,7 @@ class Answer:
     goal: Goal | None = None
     carry_over: float | None = None
     weekday_rhythm: WeekdayRhythm | None = None
-    season: None = None
+    season: Season | None = None
     bound: float | None = None
     still_needed: StillNeeded | None = None
 

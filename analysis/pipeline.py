@@ -17,6 +17,7 @@ from analysis.answer import (
     HowOften,
     Luck,
     Review,
+    Season,
     Shift,
     Since,
     Slope,
@@ -41,6 +42,7 @@ from analysis.questions.is_it_so_still import LATELY, still_state
 from analysis.questions.since_when import plausible_splits
 from analysis.questions.steadier import spread_change
 from analysis.series.carry_over import carry_over, widening
+from analysis.series.season import without_season
 from analysis.series.slope import common_slope
 from analysis.sides import Level, Sides, chance_of_shares, compare
 from analysis.stretches import Edge, check_baseline, edges_of, merged, outside, stretch_of
@@ -80,6 +82,9 @@ def review(
     if begin is None or end is None or not points.known.any():
         return Review(log.measure, (), Answer(), points)
     edges = edges_of(marked, baseline, begin, end)
+    season = without_season(points, edges[0][1], edges[0][2])
+    if season is not None:
+        points = season[0]
     stretches = tuple(stretch_of(points, edge, is_after=place > 0) for place, edge in enumerate(edges))
     asked = _Asked(log.measure, points, stretches, edges, worth)
     comparisons = [asked.compared(place, 0) for place in range(1, len(stretches))]
@@ -99,6 +104,8 @@ def review(
     answer = last.answer if last else Answer(slope=_slope_of_one(points, edges[0]))
     if any(doubt.alters for doubt in doubts):
         answer = _capped(answer)
+    if season is not None:
+        answer = replace(answer, season=Season(season[1]))
     several = len(stretches) > 2
     return Review(
         log.measure,

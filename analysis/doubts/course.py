@@ -27,7 +27,7 @@ _LOW_FIRST_WEEK_BELOW = 0.05
 def slope_before(seen: Seen) -> Doubt | None:
     """A steady slope through both stretches, the way of the shift: the change may only lie on it.
 
-    Computed again with the slope taken off. The amount is said a week for daily logs.
+    Computed again with the slope taken off.
     """
     if seen.level is None:
         return None
@@ -43,8 +43,7 @@ def slope_before(seen: Seen) -> Doubt | None:
     apart = float(np.mean(sides.after_at) - np.mean(sides.before_at))
     if abs(slope.a_period) * apart < _PART_OF_SHIFT * abs(seen.level.estimate):
         return None
-    a_week = slope.a_period * WEEK if seen.measure.period == "day" else slope.a_period
-    return Doubt("slope_before", (("slope", a_week),), seen.turns_on(level_rows, _price_of_slope(sides)))
+    return Doubt("slope_before", (("slope", slope.a_period),), seen.turns_on(level_rows, _price_of_slope(sides)))
 
 
 def _price_of_slope(sides: Sides) -> float:

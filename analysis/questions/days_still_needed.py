@@ -19,10 +19,10 @@ _Z80 = 0.8416212335729143
 _LONGEST = 365
 """More days than these are no plan: no number is enough."""
 
-_USUAL_CARRY_OVER = 0.15
-_USUAL_WEIGHT = 42
+_USUAL_CARRY_OVER = 0.25
+_USUAL_WEIGHT = 20
 """A short log's carry-over is little more than chance. It is drawn towards the usual one, which counts as much as
-this many days: the ratio of its own variance (about 1.7 / N) to that from one log to the next (0.2²)."""
+this many days: the ratio of its own variance (about 1.7 / N) to that from one person's log to the next (0.3²)."""
 
 
 @dataclass(frozen=True)

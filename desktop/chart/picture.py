@@ -21,8 +21,9 @@ from analysis.questions.did_it_move import CLAIMS
 from desktop.journal.journal import Journal
 from desktop.journal.records import Measure
 from desktop.wording.days import DayWords, long_day
-from desktop.wording.findings import day_words_of, findings_of, speech_of
+from desktop.wording.findings import findings_of
 from desktop.wording.numbers import Speech, count
+from desktop.wording.telling import day_words_of, speech_of
 
 Side = Literal["before", "after"]
 Shape = Literal["before", "after", "uncounted", "above", "below", "set aside"]
@@ -396,7 +397,9 @@ class _Composer:
 
     def _axis_words(self) -> tuple[str, str, str]:
         measure = self.review.measure
-        return self.speech.way(-1), measure.unit or measure.title, self.speech.way(1)
+        season = self.review.answer.season
+        taken_off = ", time of year taken off" if season is not None and season.taken_off else ""
+        return self.speech.way(-1), (measure.unit or measure.title) + taken_off, self.speech.way(1)
 
     def _spoken(self, start: int, value: float, shape: int) -> str:
         where = {"above": "above the upper fence", "below": "below the lower fence"}.get(SHAPES[shape], "")

@@ -16,7 +16,7 @@ from analysis.log import COUNTED_KINDS
 from desktop.chart.picture import Picture, empty_picture, picture_of
 from desktop.journal.journal import Journal
 from desktop.wording.days import full_day
-from desktop.wording.findings import findings_of, speech_of
+from desktop.wording.findings import findings_of
 from desktop.wording.page import (
     HEADS,
     ROW_HEADS,
@@ -38,12 +38,16 @@ from desktop.wording.page import (
     title_with_unit,
     unit_words,
 )
+from desktop.wording.telling import speech_of
 
 LATELY = 14
 MOST_AFTER = 4
 """Stretches after the baseline that the table has room for; earlier ones are told by number."""
 
-_LONGEST_QUESTION, _LONGEST_TITLE, _LONGEST_LABEL, _LONGEST_UNIT = 240, 60, 60, 20
+LONGEST_QUESTION = 240
+"""Letters of the question that the page has room for."""
+
+_LONGEST_TITLE, _LONGEST_LABEL, _LONGEST_UNIT = 60, 60, 20
 
 
 @dataclass(frozen=True)
@@ -145,7 +149,7 @@ def content_of(
         title=title_of_two(titles) if is_pair else titles[0],
         unit=unit_words(reviews[0]),
         facts=_facts(journal, subjects[0], printed),
-        question=shortened(asked, _LONGEST_QUESTION),
+        question=shortened(asked, LONGEST_QUESTION),
         answers=tuple(
             AnswerWords(_title(one), findings_of(one).headline, short_answer_lines(one))
             if is_pair
@@ -156,7 +160,8 @@ def content_of(
         rows=tuple(_ordered(rows, len(subjects))),
         notes=tuple(note for note in notes if note),
         charts=tuple(
-            ChartWords(title_with_unit(one.review) if is_pair else "", _picture(one, journal)) for one in subjects
+            ChartWords(title_with_unit(one.review) if is_pair else "", _picture(one, journal, printed))
+            for one in subjects
         ),
         doubts=doubt_lines(reviews),
         always=always_lines(reviews),
@@ -168,14 +173,10 @@ def _title(review: Review) -> str:
     return review.measure.title or UNNAMED
 
 
-def _picture(subject: Subject, journal: Journal) -> Picture:
+def _picture(subject: Subject, journal: Journal, printed: date) -> Picture:
     if subject.review.stretches:
         return picture_of(subject.review, journal, subject.measure)
-    return empty_picture(journal.measures[subject.measure], _last_day(subject))
-
-
-def _last_day(subject: Subject) -> date:
-    return date.fromordinal(int(subject.log.days[-1])) if len(subject.log) else date(2000, 1, 28)
+    return empty_picture(journal.measures[subject.measure], printed)
 
 
 def _bounded(subject: Subject) -> Subject:

@@ -59,9 +59,8 @@ def _no_low_day(_fields: Fields, speech: Speech) -> str:
 
 
 def _slope_before(fields: Fields, speech: Speech) -> str:
-    slope = float(fields["slope"])
-    pace = "week" if speech.one == "day" else speech.one
-    return f"It was moving all along, by about {speech.sized(slope)} a {pace}, before the change and after it."
+    pace = speech.pace(float(fields["slope"]))
+    return f"It was moving all along, by about {pace}, before the change and after it."
 
 
 def _worst_spell(fields: Fields, speech: Speech) -> str:
@@ -127,7 +126,7 @@ def _season(fields: Fields, _speech: Speech) -> str:
     )
 
 
-def _early_look(fields: Fields, speech: Speech) -> str:
+def _early_look(fields: Fields, _speech: Speech) -> str:
     days = int(fields["days"])
     return (
         f"You agreed to judge in {days} {'day' if days == 1 else 'days'}. "
@@ -135,7 +134,7 @@ def _early_look(fields: Fields, speech: Speech) -> str:
     )
 
 
-def _several_measures(fields: Fields, speech: Speech) -> str:
+def _several_measures(fields: Fields, _speech: Speech) -> str:
     return f"{int(fields['measures'])} measures were looked at. In one of several, luck finds a move more easily."
 
 

@@ -13,9 +13,11 @@ from desktop.journal.records import Entry, Source
 from desktop.wording.cautions import CAUTION
 from desktop.wording.days import MONTHS, full_day
 from desktop.wording.doubts import doubt_sentence
-from desktop.wording.findings import NO_CAUSE, day_words_of, findings_of, speech_of
+from desktop.wording.findings import findings_of
 from desktop.wording.help import NAME_AND_VERSION
+from desktop.wording.moved import NO_CAUSE
 from desktop.wording.numbers import chance_in_100, count
+from desktop.wording.telling import day_words_of, speech_of
 
 QUESTION = "My question today"
 TRUST = "Before trusting it"
@@ -36,6 +38,9 @@ HEADS = {
 }
 """The columns of the table, in their order."""
 
+PAPER_WORDS = {"a4": "A4", "letter": "Letter"}
+NO_MEASURE_YET = "There is no measure in this journal yet: start one with Log, Add a measure."
+CHART_COPIED = "The chart is copied as a picture."
 ROW_HEADS = {"all": "All days", "before": "Before", "settling": "Settling in", "after": "After"}
 
 _COMBINED: dict[Combine, str] = {
@@ -241,6 +246,11 @@ def foot_line(review: Review) -> str:
     return f"{rule}. {NAME_AND_VERSION}, a record to talk over. {CAUTION}"
 
 
+def written(path: object) -> str:
+    """What the window says when a file is there."""
+    return f"Saved: {path}"
+
+
 def there_already(path: object) -> str:
     """Why a file is not written on the command line."""
     return f"{path} is there already. Choose another name, or write over it with --force."
@@ -278,9 +288,10 @@ def _source(entries: Sequence[Entry]) -> str:
     ways = {one.source for one in held}
     if not ways:
         return ""
-    late = sum(one.kind == "late" for one in held)
+    days, late_days = {one.day for one in held}, {one.day for one in held if one.kind == "late"}
+    late = len(late_days)
     if ways == {"typed"}:
-        return f"written down at the time on {len(held) - late} of {count(len(held), 'day')}"
+        return f"written down at the time on {len(days) - late} of {count(len(days), 'day')}"
     words: dict[Source, str] = {"typed": "typed", "table": "from a table", "sample": "an invented sample"}
     told = " and ".join(word for way, word in words.items() if way in ways)
     return f"{told}, {late} typed days afterwards" if late else told

@@ -3,8 +3,8 @@
 from __future__ import annotations
 
 from analysis.answer import Review, Stretch
-from desktop.wording.findings import day_words_of, speech_of
 from desktop.wording.numbers import Speech, plain
+from desktop.wording.telling import day_words_of, speech_of
 
 RULES = (
     "Fourths: sort the values; a fourth is as deep from its end as half of one more than the whole depth of "
@@ -18,8 +18,8 @@ RULES = (
     "Since when: the split into two levels that fits best, and those that fit nearly as well.",
     "Weekends: where they differ from weekdays by more than luck, the difference is taken off first.",
     "Logs with many zeros: judged by how many days there was some, and by how much on those days.",
-    "Early looks: before the agreed day the limit for a claim is stricter, by the share of days that are in (O'Brien "
-    "and Fleming 1979). Several measures for one change: their chances are counted together (Holm 1979).",
+    "Early looks: before the agreed day the limit for a claim is stricter, by the share of days that are in "
+    "(O'Brien and Fleming 1979). Several measures for one change: their chances are counted together (Holm 1979).",
     "Days still needed: in 80 of 100 logs a move of that size would be claimed by then (Noether 1987); the range "
     "holds in about two of three.",
     "A doubt alters the answer when it is computed again without the doubtful days, or with the other explanation "

@@ -9,7 +9,8 @@ from analysis import Change, review
 from analysis.batch.fences import FEWEST_TO_DRAW
 from desktop.chart.picture import empty_picture, picture_of
 from desktop.journal.records import Measure, Span
-from desktop.wording.findings import findings_of, speech_of
+from desktop.wording.findings import findings_of
+from desktop.wording.telling import speech_of
 from tests.builders import day, number
 from tests.desktop.chart.pictures import HIGH, LOW, drawn, journal_of, lines, reviewed, shapes
 

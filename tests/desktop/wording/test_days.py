@@ -7,7 +7,7 @@ from hypothesis import given
 from hypothesis import strategies as st
 
 from desktop.wording.days import MONTHS, WEEKDAYS, DayWords, full_day, long_day, short_day
-from desktop.wording.findings import day_words_of
+from desktop.wording.telling import day_words_of
 from tests.builders import day, number, reviewed
 
 DAY = date(2026, 3, 3)

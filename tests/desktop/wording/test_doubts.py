@@ -5,7 +5,8 @@ import pytest
 from analysis.answer import Doubt
 from analysis.doubts.catalogue import CATALOGUE, MOST_SHOWN
 from desktop.wording.doubts import SENTENCES, doubt_sentence
-from desktop.wording.findings import findings_of, speech_of, worded
+from desktop.wording.findings import findings_of, worded
+from desktop.wording.telling import speech_of
 from tests.desktop.wording.sweep import DOUBTED, sweep
 
 NAMES = [look.__name__ for look in CATALOGUE]

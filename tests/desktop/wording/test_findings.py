@@ -12,7 +12,9 @@ from analysis import Change, Log, Measure, Review, review
 from analysis.answer import Carried, Slope, StillNeeded
 from desktop.wording.cautions import CAUTION
 from desktop.wording.days import MONTHS
-from desktop.wording.findings import NO_CAUSE, findings_of, outside_sentence, speech_of, worded
+from desktop.wording.findings import findings_of, worded
+from desktop.wording.moved import NO_CAUSE, outside_sentence
+from desktop.wording.telling import speech_of
 from tests.builders import FIRST_DAY, day, log_of, reviewed
 from tests.desktop.wording.sweep import sweep
 
@@ -46,7 +48,7 @@ def test_a_clear_move_is_told_with_both_middles_and_its_range():
     assert "More, which is the way you wanted." in asked["By how much?"]
     assert "That fits the day you marked, 17 March." in asked["Since when?"][0]
     assert NO_CAUSE in asked["What else could explain it?"]
-    assert "What would settle it?" not in asked
+    assert asked["What would settle it?"] == ("You have your answer. More days would show if it lasts.",)
 
 
 def test_a_clear_move_of_few_days_is_fairly_sure():
@@ -308,7 +310,8 @@ def allowed(one: Review) -> set[str]:
     """Every number a sentence may show: those of the review, rounded as it says them, and what they add up to."""
     shown, speech = one.to_json(), speech_of(one)
     values = numbers_in(shown) + [float(value) for _, value in _fields(one)]
-    values += [7 * slope for slope in numbers_in(shown["slope"])] + list(RULES)
+    slopes = numbers_in(shown["slope"]) + [float(value) for name, value in _fields(one) if name == "slope"]
+    values += [times * slope for slope in slopes for times in (1, 7, 12, 30.44, 52.18, 365.25)] + list(RULES)
     values += [float(value) for value in one.points.values[one.points.known]]
     if one.stretches:
         first, last = one.stretches[0], one.stretches[-1]

@@ -1,0 +1,289 @@
+"""A comparison in plain words: did it move, by how much, since when, what would settle it."""
+
+from __future__ import annotations
+
+import numpy as np
+
+from analysis.answer import Carried, HowMuch, HowOften, Review, Shift, Since, StillNeeded
+from analysis.questions.did_it_move import CLAIMS, FEWEST_AFTER, FEWEST_BEFORE
+from desktop.wording.numbers import Speech, chance_in_100
+from desktop.wording.telling import Findings, Section, Teller
+
+NO_CAUSE = (
+    "This compares before with after. It cannot tell what caused a difference: "
+    "other things may have changed at the same time."
+)
+
+
+def outside_sentence(carried: Carried, days: int, speech: Speech) -> str:
+    """How many periods are outside the carried fences, and how many would be by luck alone."""
+    low, high = len(carried.below), len(carried.above)
+    outside = low + high
+    if days == 1:
+        where = (
+            "is outside the old fences, " + ("high" if high else "low") if outside else "is inside the old fences"
+        )
+        return f"The one {speech.one} since {where}."
+    if not outside:
+        seen = f"None of the {speech.periods(days)} since is outside the old fences."
+    else:
+        sides = "all high" if not low else "all low" if not high else f"{high} high and {low} low"
+        if outside == 1:
+            sides = "high" if high else "low"
+        verb = "is" if outside == 1 else "are"
+        seen = f"{outside} of the {speech.periods(days)} since {verb} outside the old fences, {sides}."
+    return f"{seen} {_luck_alone(carried.expected_by_luck)}"
+
+
+def _luck_alone(expected: float) -> str:
+    if expected < 0.5:
+        return "By luck alone there would most often be none."
+    return f"About {int(expected + 0.5)} would be by luck alone."
+
+
+def _is_told_by_amount(often: HowOften, much: HowMuch) -> bool:
+    """Whether it is how much that moved, and not on how many days."""
+    return often.low <= 0 <= often.high and not much.low <= 0 <= much.high
+
+
+class MovedTeller(Teller):
+    """Tells the last stretch against the baseline."""
+
+    def __init__(self, review: Review) -> None:
+        super().__init__(review)
+        self.before, self.after, self.answer = review.stretches[0], review.stretches[-1], review.answer
+
+    def tell(self) -> Findings:
+        """The headline, the four questions, the doubts, and what would settle it."""
+        after, answer = self.after, self.answer
+        sections = [Section("Did it move?", tuple(self._did_it_move()))]
+        if answer.shift is not None:
+            sections.append(Section("By how much?", tuple(self._by_how_much())))
+        if answer.carried is not None and after.observations:
+            day_by_day = outside_sentence(answer.carried, after.observations, self.speech)
+            if self._is_slope:
+                day_by_day = f"It moves steadily, so {self.speech.many} outside the old fences say nothing here."
+            sections.append(Section(f"{self.speech.one.capitalize()} by {self.speech.one}", (day_by_day,)))
+        if answer.sureness in (*CLAIMS, "leaning") and not self._is_slope:
+            since = (self._since(answer.since),) if answer.since is not None else ()
+            sections.append(Section("Since when?", (*since, *self._still())))
+        elif not self._is_slope and answer.still is not None and answer.still.state in ("faded", "come late"):
+            sections.append(Section("Is it so still?", tuple(self._still())))
+        sections += self.doubts()
+        if answer.sureness != "too early":
+            sections[-1] = Section(sections[-1].title, (*sections[-1].sentences, NO_CAUSE))
+        settle = self._settle()
+        if settle:
+            sections.append(Section("What would settle it?", (settle,)))
+        return Findings(self._headline(), tuple(sections))
+
+    def _headline(self) -> str:
+        match self.answer.sureness:
+            case "too early":
+                return "Too early to say if it moved."
+            case "cannot tell":
+                return "This log cannot tell if it moved."
+            case "leaning" if self._is_slope:
+                return f"It was moving all along, by about {self._slope_told()}."
+            case "leaning":
+                return f"It may have moved: {self._levels()}"
+            case _:
+                return f"It moved: {self._levels()}"
+
+    @property
+    def _is_slope(self) -> bool:
+        """Whether a steady slope explains what looks like a move at the change."""
+        return any(doubt.name == "slope_before" and doubt.alters for doubt in self.review.doubts)
+
+    def _slope_told(self) -> str:
+        slope = next(dict(doubt.fields)["slope"] for doubt in self.review.doubts if doubt.name == "slope_before")
+        return self.speech.pace(float(slope))
+
+    def _levels(self) -> str:
+        """Before and since in one breath, in the terms that mean most for this log."""
+        speech, before, after, answer = self.speech, self.before, self.after, self.answer
+        if answer.how_often is not None:
+            much = answer.how_much
+            if much is not None and _is_told_by_amount(answer.how_often, much):
+                is_much = f"{speech.with_unit(much.after)} on a {speech.one} with some"
+                return f"{is_much}, {speech.number(much.before)} before."
+            return f"on {self._often(answer.how_often)}"
+        assert before.median is not None
+        assert after.median is not None
+        was_middle, is_middle = speech.number(before.median), speech.with_unit(after.median)
+        if speech.number(after.median) == was_middle and answer.shift is not None:
+            return self._beyond_old_middle(before.median)
+        return f"{is_middle} on a middle {speech.one}, {was_middle} before."
+
+    def _often(self, often: HowOften) -> str:
+        (done, of), (was, was_of) = often.after, often.before
+        return f"{done} of {of} {self.speech.many} there was some, on {was} of {was_of} before."
+
+    def _beyond_old_middle(self, old: float) -> str:
+        """Where the two middles are alike: how many periods lie beyond the old one, whatever is wanted."""
+        points, after, answer = self.review.points, self.after, self.answer
+        values = points.values[(points.first >= after.first) & (points.first <= after.last) & points.known]
+        is_more = answer.direction == "more"
+        beyond = int(np.sum(values > old) if is_more else np.sum(values < old))
+        verb = "is" if beyond == 1 else "are"
+        return (
+            f"{beyond} of {len(values)} {self.speech.many} since {verb} {'above' if is_more else 'below'} "
+            f"the old middle of {self.speech.with_unit(old)}."
+        )
+
+    def _did_it_move(self) -> list[str]:
+        speech, before, after, answer = self.speech, self.before, self.after, self.answer
+        if answer.sureness == "too early":
+            return [
+                f"There {'is' if before.observations == 1 else 'are'} {speech.periods(before.observations)} "
+                f"with a value before the change and {after.observations} after. An answer needs "
+                f"{FEWEST_BEFORE} before and {FEWEST_AFTER} after; 14 before is better."
+            ]
+        assert answer.luck is not None
+        luck = (
+            f"If nothing had changed, a gap this big would turn up by luck in "
+            f"{chance_in_100(answer.luck.p)} logs like this one."
+        )
+        reason = f"{before.observations} {speech.many} before, {after.observations} after."
+        word = str(answer.sureness)
+        rhythm = answer.weekday_rhythm
+        like_days = ["Weekends differ from weekdays here; that is taken off."] if rhythm and rhythm.used else []
+        return [f"{word[0].upper()}{word[1:]}: {reason} {luck}", *like_days, *self.season(), *self._switches()]
+
+    def _by_how_much(self) -> list[str]:
+        speech, before, after, answer = self.speech, self.before, self.after, self.answer
+        shift = answer.shift
+        assert shift is not None
+        told = []
+        if answer.how_often is not None:
+            if answer.how_much is not None and _is_told_by_amount(answer.how_often, answer.how_much):
+                told.append(f"On {self._often(answer.how_often)}")
+            elif answer.how_much is not None:
+                told.append(
+                    f"On those {speech.many} the middle was {speech.number(answer.how_much.before)} before "
+                    f"and is {speech.with_unit(answer.how_much.after)} since."
+                )
+        elif answer.sureness not in CLAIMS and before.median is not None and after.median is not None:
+            told.append(
+                f"A middle {speech.one} was {speech.with_unit(before.median)} before and is "
+                f"{speech.number(after.median)} since."
+            )
+        if shift.low == shift.high == 0:
+            told.append(f"{speech.one.capitalize()} for {speech.one} there is no difference to see.")
+        else:
+            told.append(f"The difference {self._how_likely(shift)} {speech.between(shift.low, shift.high)}.")
+        told += self._better_days()
+        if answer.spread_change is not None and answer.spread_change.word != "alike":
+            told.append(f"The {speech.many} are {answer.spread_change.word} than before.")
+        if answer.goal is not None:
+            told.append(
+                f"Inside the range you set on {answer.goal.after[0]} of {answer.goal.after[1]} {speech.many}, "
+                f"{answer.goal.before[0]} of {answer.goal.before[1]} before."
+            )
+        wanted = self.review.measure.aim
+        if wanted in ("more", "less") and answer.direction in ("more", "less"):
+            way = speech.way(1 if answer.direction == "more" else -1).capitalize()
+            told.append(f"{way}, which is {'' if wanted == answer.direction else 'not '}the way you wanted.")
+        return told
+
+    def _how_likely(self, shift: Shift) -> str:
+        if self.answer.sureness == "too early":
+            return "could be"
+        if shift.low < 0 < shift.high:
+            return "may be"
+        is_one_number = self.speech.number(shift.low) == self.speech.number(shift.high)
+        return "is" if is_one_number else "is probably"
+
+    def _better_days(self) -> list[str]:
+        shift, aim = self.answer.shift, self.review.measure.aim
+        assert shift is not None
+        if isinstance(aim, tuple) or self.before.median is None or self.answer.how_often is not None:
+            return []
+        wants_less = aim == "less" or (aim == "none" and shift.estimate < 0)
+        verb = "was" if shift.better_days == 1 else "were"
+        return [
+            f"{shift.better_days} of {shift.days} {self.speech.many} {verb} "
+            f"{'below' if wants_less else 'above'} the old middle."
+        ]
+
+    def _since(self, since: Since) -> str:
+        name = self.days.name
+        if since.first == since.last:
+            told = f"Since {name(since.likely)}."
+        else:
+            told = (
+                f"Most likely since {name(since.likely)}; any start from {name(since.first)} to "
+                f"{name(since.last)} fits about as well."
+            )
+        if self.after.change is None:
+            return told
+        marked = self.days.day(self.after.change)
+        if since.before_change:
+            return f"{told} That is before the day you marked, {marked}."
+        if since.first > self.after.change:
+            return f"{told} That is after the day you marked, {marked}."
+        return f"{told} That fits the day you marked, {marked}."
+
+    def _still(self) -> list[str]:
+        """What became of the move; nothing where that says no more than the answer."""
+        still, speech = self.answer.still, self.speech
+        if still is None or still.last_14 is None:
+            return []
+        lately = f"The middle of the last 14 {speech.many} is {speech.with_unit(still.last_14)}."
+        match still.state:
+            case "faded":
+                return [f"It moved at first and has gone back since. {lately}"]
+            case "growing":
+                return [f"It is still moving the same way. {lately}"]
+            case "come late":
+                return [f"It came late: the first {speech.many} after the change were as before. {lately}"]
+            case "still so":
+                return [f"It is so still. {lately}"]
+        return []
+
+    def _switches(self) -> list[str]:
+        switches = self.review.switches
+        if switches is None:
+            return []
+        times = f"{switches.moved} of {switches.of} times"
+        return [f"{switches.of} changes are marked; it moved with them, to and fro, {times}."]
+
+    def _settle(self) -> str | None:
+        speech, before, after, answer = self.speech, self.before, self.after, self.answer
+        if answer.sureness == "too early":
+            short_before = max(0, FEWEST_BEFORE - before.observations)
+            short_after = max(0, FEWEST_AFTER - after.observations)
+            if short_before:
+                return (
+                    f"The days before the change are too few, by {short_before}, and cannot be added later. "
+                    "If you wrote down earlier days somewhere, add them."
+                )
+            return f"{speech.periods(short_after)} more after the change."
+        needed = answer.still_needed
+        if answer.sureness in CLAIMS:
+            return f"You have your answer. More {speech.many} would show if it lasts."
+        if any(doubt.alters for doubt in self.review.doubts):
+            return f"More {speech.many} alone will not settle it: the first point above stands in the way."
+        if needed is not None:
+            amount = f"{speech.with_unit(needed.for_amount)}{speech.rate()}"
+            if needed.days is None:
+                return f"With this baseline, no number of {speech.many} after can show a move of {amount}."
+            if needed.days:
+                return f"{self._days_more(needed)} would most often show a move of {amount}."
+            return f"There are enough {speech.many} to see a move of {amount}; this log does not show one."
+        if answer.sureness == "cannot tell" and answer.bound:
+            return (
+                f"If it changed at all, it was by less than {speech.with_unit(answer.bound)}{speech.rate()}. "
+                "More days would narrow this."
+            )
+        return None
+
+    def _days_more(self, needed: StillNeeded) -> str:
+        """The days still needed with their range, where few days leave it wide."""
+        assert needed.days is not None
+        told = f"About {self.speech.periods(needed.days)} more"
+        if needed.high is None:
+            return f"{told}, or many more than that,"
+        if needed.low is None or needed.high <= needed.low + 1:
+            return told
+        return f"{told} ({needed.low} to {needed.high})" if needed.low else f"{told} ({needed.high} at most)"

@@ -1,0 +1,68 @@
+"""What every finding is made of: sections of sentences, and how one review's numbers and days are said."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass
+from datetime import date
+
+import numpy as np
+
+from analysis.answer import Review
+from desktop.wording.days import DayWords
+from desktop.wording.doubts import doubt_sentence
+from desktop.wording.numbers import Speech, decimals_for
+
+
+@dataclass(frozen=True)
+class Section:
+    """One question and what the log says to it."""
+
+    title: str
+    sentences: tuple[str, ...]
+
+
+@dataclass(frozen=True)
+class Findings:
+    """An answer as it is read: the headline in the largest type, then the sections."""
+
+    headline: str
+    sections: tuple[Section, ...]
+
+    def lines(self) -> tuple[str, ...]:
+        """Headline and every sentence, in reading order."""
+        return (self.headline, *(one for section in self.sections for one in section.sentences))
+
+
+def speech_of(review: Review) -> Speech:
+    """How the review's numbers are said: with the digits its own values have."""
+    values = review.points.values
+    return Speech(review.measure, decimals_for(values[~np.isnan(values)].tolist()))
+
+
+def day_words_of(review: Review) -> DayWords:
+    """How the review's periods are named: with their year where it spans more than one."""
+    years = {date.fromordinal(day).year for stretch in review.stretches for day in (stretch.first, stretch.last)}
+    return DayWords(review.measure.period, with_year=len(years) > 1)
+
+
+class Teller:
+    """Tells one review; holds what every sentence needs."""
+
+    def __init__(self, review: Review) -> None:
+        self.review = review
+        self.speech = speech_of(review)
+        self.days = day_words_of(review)
+
+    def season(self) -> list[str]:
+        """What is said where the time of year is in no number."""
+        season = self.review.answer.season
+        if season is None or not season.taken_off:
+            return []
+        return ["The time of year is taken off: each month is held against its own usual level."]
+
+    def doubts(self) -> list[Section]:
+        """The doubts, worst first; a log without a change and without doubts has no such section."""
+        told = tuple(doubt_sentence(doubt, self.speech) for doubt in self.review.doubts)
+        if not told and len(self.review.stretches) == 1:
+            return []
+        return [Section("What else could explain it?", told)]

@@ -1,0 +1,1 @@
+"""How fast and how large, as ratios of two things measured in one run; nothing here is a test."""
