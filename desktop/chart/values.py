@@ -38,13 +38,13 @@ def paint_values(painter: QPainter, plot: QRectF, picture: Picture, places: Plac
         width, height = metrics.horizontalAdvance(text) + 2, metrics.height() * 0.85
         above, below = _beside(place, width, height, plot, places)
         is_high = SHAPES[int(picture.marks.shape[place])] == "above"
-        for box in (above, below) if is_high else (below, above):
-            if plot.contains(box) and not any(box.intersects(other) for other in taken):
-                if _covers_a_mark(box, place, places):
-                    continue
-                taken.append(box)
-                painter.drawText(box, Qt.AlignmentFlag.AlignCenter | Qt.TextFlag.TextDontClip, text)
-                break
+        box = above if is_high else below
+        if not plot.contains(box):
+            box = below if is_high else above
+        if any(box.intersects(other) for other in taken) or _covers_a_mark(box, place, places):
+            continue
+        taken.append(box)
+        painter.drawText(box, Qt.AlignmentFlag.AlignCenter | Qt.TextFlag.TextDontClip, text)
 
 
 def _beside(place: int, width: float, height: float, plot: QRectF, places: Places) -> tuple[QRectF, QRectF]:

@@ -29,3 +29,14 @@ def ask_table(parent: QWidget) -> Path | None:
     kinds = "Tables (*.csv *.tsv *.txt);;All files (*)"
     name, _ = QFileDialog.getOpenFileName(parent, "Bring in a table", str(Path.home()), kinds)
     return Path(name) if name else None
+
+
+def ask_output(parent: QWidget, title: str, name: str, *endings: str) -> Path | None:
+    """Where a file is to be written, one of these kinds; the first ending is added where none was typed."""
+    kinds = ";;".join(f"{ending[1:].upper()} (*{ending})" for ending in endings)
+    chosen, picked = QFileDialog.getSaveFileName(parent, title, str(Path.home() / f"{name}{endings[0]}"), kinds)
+    if not chosen:
+        return None
+    if Path(chosen).suffix.lower() in endings:
+        return Path(chosen)
+    return Path(chosen + next((ending for ending in endings if f"*{ending}" in picked), endings[0]))

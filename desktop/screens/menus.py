@@ -12,6 +12,7 @@ from PySide6.QtWidgets import QMenu
 from analysis.log import PERIODS
 from desktop.screens.chart_pane import PERIOD_WORDS
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
+from desktop.screens.page_dialog import copy_chart, show_page
 from desktop.wording.acts import act_phrase
 from desktop.wording.days import full_day
 
@@ -26,6 +27,8 @@ class Menus:
 
     def __init__(self, window: MainWindow) -> None:
         self._window = window
+        self._reading: list[QAction] = []
+        self._writing: list[QAction] = []
         bar = window.menuBar()
         file, edit, log, view, help_menu = map(bar.addMenu, ("&File", "&Edit", "&Log", "&View", "&Help"))
         self._fill_file(file)
@@ -59,6 +62,7 @@ class Menus:
         _add(file, "Open the &sample journal", window.open_sample)
         file.addSeparator()
         _add(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")
+        self._reading.append(_add(file, "The &page…", partial(show_page, window), Keys.Print))
         file.addSeparator()
         _add(file, "&Quit", window.close, Keys.Quit)
 
@@ -67,8 +71,11 @@ class Menus:
         self._undo = _add(edit, "&Undo", window.undo, Keys.Undo)
         self._redo = _add(edit, "&Redo", window.redo, "Ctrl+Shift+Z")
         edit.addSeparator()
-        self._reading = [_add(edit, "&Copy days", window.workspace.days.copy)]
-        self._writing = [_add(edit, "&Paste days", window.workspace.days.paste)]
+        self._reading += [
+            _add(edit, "&Copy days", window.workspace.days.copy),
+            _add(edit, "Copy chart as p&icture", partial(copy_chart, window)),
+        ]
+        self._writing.append(_add(edit, "&Paste days", window.workspace.days.paste))
 
     def _fill_log(self, log: QMenu) -> None:
         window = self._window
