@@ -251,7 +251,8 @@ def _bands(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> N
 
 
 def _levels(painter: QPainter, frame: Frame, lines: Iterable[Line], style: Style) -> None:
-    for line in lines:
+    # The medians come last: a fence at the same value must not hide one.
+    for line in sorted(lines, key=lambda one: one.role == "median"):
         if line.role == "median":
             pen = QPen(style.side(line.side), style.size / 4.2)
             pen.setCapStyle(Qt.PenCapStyle.FlatCap)

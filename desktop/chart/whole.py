@@ -26,6 +26,8 @@ from desktop.chart.style import Style
 LEAST_PLOT = 5.5
 """The least height of the plot itself, in lines of text."""
 
+_OVERHANG = 0.5
+
 
 @dataclass(frozen=True)
 class Parts:
@@ -42,7 +44,12 @@ class Parts:
     @property
     def lines(self) -> float:
         """The height of these parts, in lines of text."""
-        return LANE_LINES * self.lane + (BELOW_LINES if self.days else BELOW_LINES_BARE)
+        return self.lines_above + (BELOW_LINES if self.days else BELOW_LINES_BARE)
+
+    @property
+    def lines_above(self) -> float:
+        """The height of what stands above the plot; without the lane, of what hangs over its edge."""
+        return LANE_LINES if self.lane else _OVERHANG
 
 
 WHOLE = Parts()
@@ -83,7 +90,7 @@ def paint_chart(
         days: the days from edge to edge; the picture's own when left out.
     """
     left, right = sides or side_widths(picture, style, rect.height(), parts)
-    top = style.size * LANE_LINES if parts.lane else 0.0
+    top = style.size * parts.lines_above
     height = rect.height() - style.size * parts.lines
     plot = QRectF(rect.left() + left, rect.top() + top, rect.width() - left - right, height)
     x0, x1 = days or (picture.x0, picture.x1)

@@ -9,7 +9,7 @@ from pathlib import Path
 import pytest
 
 from desktop import display
-from desktop.display import missing_for_window
+from desktop.display import missing_for_drawing, missing_for_window
 
 ROOT = Path(__file__).parents[2]
 WITHOUT_A_WINDOW = "For the answer without a window: dayfence review FILE."
@@ -61,6 +61,14 @@ def test_a_library_that_qt_itself_needs_is_told_too(monkeypatch):
     monkeypatch.setitem(sys.modules, "PySide6", None)
     said = missing_for_window({"DISPLAY": ":1"})
     assert said.startswith("The window needs ")
+    assert said.endswith(WITHOUT_A_WINDOW)
+
+
+def test_what_drawing_needs_is_told_in_the_same_way(monkeypatch):
+    assert missing_for_drawing() is None
+    monkeypatch.setitem(sys.modules, "PySide6", None)
+    said = missing_for_drawing()
+    assert said.startswith("Drawing needs ")
     assert said.endswith(WITHOUT_A_WINDOW)
 
 
