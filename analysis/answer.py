@@ -160,6 +160,23 @@ class Goal:
 
 
 @dataclass(frozen=True)
+class AtLevel:
+    """Days at a level or beyond it, out of days, before and after; the difference of shares with its range.
+
+    Attributes:
+        level: in the measure's unit.
+        beyond: which side of the level counts, the level itself included.
+    """
+
+    level: float
+    beyond: Literal["or more", "or less"]
+    before: tuple[int, int]
+    after: tuple[int, int]
+    low: float
+    high: float
+
+
+@dataclass(frozen=True)
 class Still:
     """What became of the move, and the median of the last 14 periods."""
 
@@ -256,6 +273,7 @@ class Answer:
     how_often: HowOften | None = None
     how_much: HowMuch | None = None
     goal: Goal | None = None
+    at_level: AtLevel | None = None
     carry_over: float | None = None
     weekday_rhythm: WeekdayRhythm | None = None
     season: Season | None = None
@@ -284,6 +302,7 @@ class Review:
         comparisons: every stretch after the baseline, when there is more than one.
         findings, caution: in plain words, filled in by the wording.
         rows: what became of the rows of the table, where one was read.
+        today: day number of the last day looked at; None for a log without any value. Not part of the JSON.
         points: one observation a period, for the chart; not part of the JSON.
         worth_a_look: among many logs, whether this one is; None when reviewed alone. Not part of the JSON.
     """
@@ -293,6 +312,7 @@ class Review:
     answer: Answer
     points: Points
     doubts: tuple[Doubt, ...] = ()
+    today: int | None = None
     switches: Switches | None = None
     comparisons: tuple[Comparison, ...] = ()
     findings: tuple[str, ...] = ()

@@ -36,6 +36,7 @@ from analysis.doubts.seen import Seen
 from analysis.log import Change, Log, Measure, Values
 from analysis.points import Points, first_logged_day, points_of
 from analysis.questions.by_how_much import difference_of_shares, share_range, shift
+from analysis.questions.days_at_level import days_at_level
 from analysis.questions.days_still_needed import forecast
 from analysis.questions.did_it_move import at_most
 from analysis.questions.is_it_so_still import LATELY, still_state
@@ -45,6 +46,7 @@ from analysis.series.carry_over import carry_over, widening
 from analysis.series.season import without_season
 from analysis.series.slope import common_slope
 from analysis.sides import Level, Sides, chance_of_shares, compare
+from analysis.slots import like_slots
 from analysis.stretches import Edge, check_baseline, edges_of, merged, outside, stretch_of
 
 FEWEST_FOR_HOW_MUCH = 3
@@ -82,6 +84,9 @@ def review(
     if begin is None or end is None or not points.known.any():
         return Review(log.measure, (), Answer(), points)
     edges = edges_of(marked, baseline, begin, end)
+    log, other_slots = like_slots(log, edges[0], edges[-1])
+    if other_slots is not None:
+        points = points_of(log, end)
     season = without_season(points, edges[0][1], edges[0][2])
     if season is not None:
         points = season[0]
@@ -99,6 +104,7 @@ def review(
         end,
         look_day.toordinal() if look_day is not None else None,
         tuple(others),
+        other_slots,
     )
     doubts = doubts_of(seen)
     answer = last.answer if last else Answer(slope=_slope_of_one(points, edges[0]))
@@ -113,6 +119,7 @@ def review(
         answer,
         points,
         doubts,
+        today=end,
         switches=_switches([comparisons[0], *befores]) if several else None,
         comparisons=tuple(_listed(comparisons, befores)) if several else (),
     )
@@ -258,6 +265,7 @@ def _answer(
         how_often=_how_often(sides, level.widened),
         how_much=_how_much(sides, level.widened),
         goal=_goal(sides, level.widened),
+        at_level=days_at_level(sides, level.estimate or level.share - 0.5, level.widened),
         carry_over=level.carry_over,
         weekday_rhythm=WeekdayRhythm(rhythm.p, rhythm.used) if rhythm else None,
         bound=max(abs(level.low), abs(level.high)) if level.sureness == "cannot tell" else None,

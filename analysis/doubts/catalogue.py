@@ -15,6 +15,8 @@ from analysis.doubts.keeping import (
     equal_in_row,
     late_entries,
     missing_more,
+    no_zero,
+    other_slots,
     round_numbers,
     weekdays_only,
 )
@@ -28,6 +30,7 @@ MOST_SHOWN = 5
 CATALOGUE: tuple[Callable[[Seen], Doubt | None], ...] = (
     few_days,
     no_spread,
+    other_slots,
     device_mark,
     slope_before,
     worst_spell,
@@ -43,6 +46,7 @@ CATALOGUE: tuple[Callable[[Seen], Doubt | None], ...] = (
     equal_in_row,
     season,
     day_to_day,
+    no_zero,
     blank_days,
     round_numbers,
     no_low_day,

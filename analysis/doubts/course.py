@@ -55,7 +55,10 @@ def _price_of_slope(sides: Sides) -> float:
 
 
 def worst_spell(seen: Seen) -> Doubt | None:
-    """The last week before the change was the baseline's lowest (or highest): some way back was due anyway."""
+    """The last week before the change was the baseline's lowest (or highest): some way back was due anyway.
+
+    Looked for on the side that the change was to lead away from, and on the side that it did lead away from.
+    """
     sides = seen.sides
     if sides is None or seen.measure.period != "day" or len(sides.known_before) < WEEKS_FOR_WORST_SPELL * WEEK:
         return None
@@ -64,14 +67,19 @@ def worst_spell(seen: Seen) -> Doubt | None:
     weeks = len(values) // WEEK
     # Whole weeks counted back from the change.
     means = values[len(values) - weeks * WEEK :].reshape(weeks, WEEK).mean(axis=1)
-    rose = seen.rose if seen.measure.aim not in ("more", "less") else seen.measure.aim == "more"
-    is_extreme = means[-1] < means[:-1].min() if rose else means[-1] > means[:-1].max()
-    if not is_extreme:
+    is_lowest, is_highest = means[-1] < means[:-1].min(), means[-1] > means[:-1].max()
+    leads_up = seen.rose or seen.measure.aim == "more"
+    leads_down = not seen.rose or seen.measure.aim == "less"
+    if not (is_lowest and leads_up) and not (is_highest and leads_down):
         return None
     spell = np.zeros(len(sides.before), dtype=bool)
     spell[known[-WEEK:]] = True
     nothing = np.zeros(len(sides.after), dtype=bool)
-    return Doubt("worst_spell", (("weeks", weeks),), seen.turns_on_days(spell, nothing))
+    return Doubt(
+        "worst_spell",
+        (("weeks", weeks), ("way", "lowest" if is_lowest else "highest")),
+        seen.turns_on_days(spell, nothing),
+    )
 
 
 def first_days(seen: Seen) -> Doubt | None:

@@ -2,17 +2,20 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
+
 import numpy as np
 
 from analysis.answer import Doubt
 from analysis.doubts.seen import Seen
 from analysis.series.weekday_rhythm import is_weekend
-from analysis.sides import chance_of_shares
+from analysis.sides import chance_of_shares, compare
 
 EQUAL_IN_ROW = 5
 VALUES_FOR_DIGITS = 20
 LATE_SHARE = 0.2
 MANY_BLANK = 1 / 3
+BLANK_WITHOUT_ZERO = 1 / 4
 _MORE_BLANK_BELOW = 0.06
 
 
@@ -36,7 +39,7 @@ def missing_more(seen: Seen) -> Doubt | None:
     assert high is not None
     filled = sides.after.copy()
     filled[np.flatnonzero(np.isnan(filled))[:too_many]] = low if seen.rose else high
-    rival = type(sides)(**{**vars(sides), "after": filled})
+    rival = replace(sides, after=filled)
     fields = (
         ("before", blank_before),
         ("before_of", len(sides.before)),
@@ -51,9 +54,45 @@ def blank_days(seen: Seen) -> Doubt | None:
     compared = {id(stretch): stretch for stretch in (seen.baseline, seen.stretches[-1])}.values()
     blank = sum(stretch.blank for stretch in compared)
     periods = blank + sum(stretch.observations for stretch in compared)
-    if not blank or blank < MANY_BLANK * periods:
+    if not blank or blank < MANY_BLANK * periods or _is_never_zero(seen):
         return None
     return Doubt("blank_days", (("blank", blank), ("periods", periods)), alters=False)
+
+
+def no_zero(seen: Seen) -> Doubt | None:
+    """An amount with many blank days and not one zero: are the blank days days without any?
+
+    Computed again with every blank day counted as zero.
+    """
+    sides = seen.sides
+    if sides is None or not _is_never_zero(seen):
+        return None
+    rival = replace(sides, before=np.nan_to_num(sides.before, nan=0.0), after=np.nan_to_num(sides.after, nan=0.0))
+    again = compare(rival)
+    blank = int(np.isnan(sides.before).sum() + np.isnan(sides.after).sum())
+    alters = seen.turns_on(rival) or (not seen.is_claim and again.is_claim)
+    return Doubt("no_zero", (("blank", blank), ("days", len(sides.before) + len(sides.after))), alters)
+
+
+def _is_never_zero(seen: Seen) -> bool:
+    """Whether no zero was ever written though a quarter of the days or more are blank."""
+    sides = seen.sides
+    if sides is None or seen.measure.kind not in ("amount", "count") or seen.measure.missed == "zero":
+        return False
+    values = np.concatenate([sides.before, sides.after])
+    blank = float(np.mean(np.isnan(values)))
+    return blank >= BLANK_WITHOUT_ZERO and bool(np.nanmin(values) > 0)
+
+
+def other_slots(seen: Seen) -> Doubt | None:
+    """Readings at a time of day that only one stretch has; those both have are compared.
+
+    With none in common the two cannot be compared: it always alters.
+    """
+    if seen.other_slots is None or seen.level is None:
+        return None
+    fields = (("left_out", " and ".join(seen.other_slots.left_out)), ("kept", " and ".join(seen.other_slots.kept)))
+    return Doubt("other_slots", fields, alters=not seen.other_slots.kept)
 
 
 def late_entries(seen: Seen) -> Doubt | None:

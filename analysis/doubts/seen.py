@@ -12,6 +12,7 @@ from numpy.typing import NDArray
 from analysis.answer import Stretch
 from analysis.log import Change, Log, Measure
 from analysis.sides import Level, Sides, compare
+from analysis.slots import OtherSlots
 
 _RANDOM_DRAWS = 9
 
@@ -28,6 +29,7 @@ class Seen:
         level: their comparison; None where there is none.
         today: the last day that is looked at.
         look_day: the day agreed on to judge, or None.
+        other_slots: times of day that one of the two stretches has alone, or None.
         others: the chance by luck of every other measure looked at for this change.
     """
 
@@ -39,6 +41,7 @@ class Seen:
     today: int
     look_day: int | None = None
     others: tuple[float, ...] = ()
+    other_slots: OtherSlots | None = None
 
     @property
     def measure(self) -> Measure:
@@ -83,8 +86,13 @@ class Seen:
             before: which periods of the baseline to leave out, shape (m,).
             after: which of the days after, shape (n,).
         """
-        if self.sides is None or not self.turns_on(self.sides.without(before, after)):
+        if self.sides is None:
             return False
+        rest = self.sides.without(before, after)
+        if not self.turns_on(rest):
+            return False
+        if not len(rest.known_before) or not len(rest.known_after):
+            return True
         # Seeded by the days left out: the same log gives the same answer.
         rng = np.random.default_rng([int(before.sum()), int(after.sum()), len(before), len(after)])
         lost = sum(

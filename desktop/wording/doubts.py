@@ -63,11 +63,9 @@ def _slope_before(fields: Fields, speech: Speech) -> str:
     return f"It was moving all along, by about {pace}, before the change and after it."
 
 
-def _worst_spell(fields: Fields, speech: Speech) -> str:
-    wanted = speech.measure.aim
-    kind = "lowest" if wanted == "more" else "highest" if wanted == "less" else "farthest out"
+def _worst_spell(fields: Fields, _speech: Speech) -> str:
     return (
-        f"The change came after the {kind} week of {int(fields['weeks'])}. "
+        f"The change came after the {fields['way']} week of {int(fields['weeks'])}. "
         "Some way back would likely have come anyway."
     )
 
@@ -85,6 +83,19 @@ def _missing_more(fields: Fields, speech: Speech) -> str:
         f"More {speech.many} are blank since the change: {int(fields['after'])} of {int(fields['after_of'])}, "
         f"{int(fields['before'])} of {int(fields['before_of'])} before."
     )
+
+
+def _no_zero(fields: Fields, speech: Speech) -> str:
+    return (
+        f"No zero was ever written, and {int(fields['blank'])} of {int(fields['days'])} {speech.many} are blank. "
+        f"Were those {speech.many} without any?"
+    )
+
+
+def _other_slots(fields: Fields, _speech: Speech) -> str:
+    if fields["kept"]:
+        return f"Only one side has readings for {fields['left_out']}, so those for {fields['kept']} are compared."
+    return f"One side has no readings for {fields['left_out']}."
 
 
 def _late_entries(fields: Fields, _speech: Speech) -> str:
@@ -163,6 +174,12 @@ SENTENCES: dict[str, tuple[Told, str, str]] = {
         "Even if those were on the other side, the answer is the same.",
         "If those were on the other side, the answer would not be sure.",
     ),
+    "no_zero": (
+        _no_zero,
+        "Counted as zeros, the answer is the same.",
+        "Counted as zeros, the answer is another one.",
+    ),
+    "other_slots": (_other_slots, "", "Such days cannot be held against each other."),
     "late_entries": (_late_entries, _SAME, _OTHER),
     "weekdays_only": (
         _weekdays_only,

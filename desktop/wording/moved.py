@@ -4,11 +4,19 @@ from __future__ import annotations
 
 import numpy as np
 
-from analysis.answer import Carried, HowMuch, HowOften, Review, Shift, Since, StillNeeded
+from analysis.answer import AtLevel, Carried, HowMuch, HowOften, Review, Shift, Since, StillNeeded
 from analysis.questions.did_it_move import CLAIMS, FEWEST_AFTER, FEWEST_BEFORE
 from desktop.wording.numbers import Speech, chance_in_100
 from desktop.wording.telling import Findings, Section, Teller
 
+STEADY_BELOW = 0.01
+"""A slope is told when luck alone makes it in fewer than 1 of 100 steady logs."""
+
+FEWEST_FOR_LEVELLED = 14
+_LEVELLED = 0.3
+"""A slope after of at most this part of the one before is none."""
+
+_MOSTLY = 0.8
 NO_CAUSE = (
     "This compares before with after. It cannot tell what caused a difference: "
     "other things may have changed at the same time."
@@ -111,6 +119,13 @@ class MovedTeller(Teller):
         assert before.median is not None
         assert after.median is not None
         was_middle, is_middle = speech.number(before.median), speech.with_unit(after.median)
+        if speech.number(after.median) == was_middle and answer.at_level is not None:
+            (was, was_of), (now, now_of) = answer.at_level.before, answer.at_level.after
+            verb, level = (
+                "is" if now == 1 else "are",
+                f"{speech.number(answer.at_level.level)} {answer.at_level.beyond}",
+            )
+            return f"{now} of {now_of} {speech.many} since {verb} at {level}, {was} of {was_of} before."
         if speech.number(after.median) == was_middle and answer.shift is not None:
             return self._beyond_old_middle(before.median)
         return f"{is_middle} on a middle {speech.one}, {was_middle} before."
@@ -133,6 +148,10 @@ class MovedTeller(Teller):
 
     def _did_it_move(self) -> list[str]:
         speech, before, after, answer = self.speech, self.before, self.after, self.answer
+        if answer.sureness == "too early" and not before.observations:
+            return [
+                f"There is no {speech.one} with a value before the change, so there is nothing to compare with."
+            ]
         if answer.sureness == "too early":
             return [
                 f"There {'is' if before.observations == 1 else 'are'} {speech.periods(before.observations)} "
@@ -148,7 +167,14 @@ class MovedTeller(Teller):
         word = str(answer.sureness)
         rhythm = answer.weekday_rhythm
         like_days = ["Weekends differ from weekdays here; that is taken off."] if rhythm and rhythm.used else []
-        return [f"{word[0].upper()}{word[1:]}: {reason} {luck}", *like_days, *self.season(), *self._switches()]
+        return [
+            f"{word[0].upper()}{word[1:]}: {reason} {luck}",
+            *like_days,
+            *self.season(),
+            *self._levelled_off(),
+            *self._switches(),
+            *self.up_to(),
+        ]
 
     def _by_how_much(self) -> list[str]:
         speech, before, after, answer = self.speech, self.before, self.after, self.answer
@@ -180,11 +206,35 @@ class MovedTeller(Teller):
                 f"Inside the range you set on {answer.goal.after[0]} of {answer.goal.after[1]} {speech.many}, "
                 f"{answer.goal.before[0]} of {answer.goal.before[1]} before."
             )
+            if answer.goal.before[0] >= _MOSTLY * answer.goal.before[1] and answer.sureness not in CLAIMS:
+                told.append("It was there on most of them before the change already.")
+        if answer.at_level is not None:
+            told.append(self._at_level(answer.at_level))
+        told += self._worth(shift)
         wanted = self.review.measure.aim
         if wanted in ("more", "less") and answer.direction in ("more", "less"):
             way = speech.way(1 if answer.direction == "more" else -1).capitalize()
             told.append(f"{way}, which is {'' if wanted == answer.direction else 'not '}the way you wanted.")
         return told
+
+    def _at_level(self, days: AtLevel) -> str:
+        level = f"{self.speech.number(days.level)} {days.beyond}"
+        (was, was_of), (now, now_of) = days.before, days.after
+        many = self.speech.many.capitalize()
+        return f"{many} at {level}: {was} of {was_of} before, {now} of {now_of} since."
+
+    def _worth(self, shift: Shift) -> list[str]:
+        """The size of a move held against the size that the person said is worth it."""
+        needed = self.answer.still_needed
+        if needed is None or self.answer.sureness not in CLAIMS:
+            return []
+        near, far = sorted((abs(shift.low), abs(shift.high)))
+        amount = f"the {self.speech.with_unit(needed.for_amount)} you said is worth it"
+        if far < needed.for_amount:
+            return [f"That is less than {amount}."]
+        if shift.low * shift.high > 0 and near >= needed.for_amount:
+            return [f"That is at least {amount}."]
+        return [f"That may be more or less than {amount}."]
 
     def _how_likely(self, shift: Shift) -> str:
         if self.answer.sureness == "too early":
@@ -198,6 +248,8 @@ class MovedTeller(Teller):
         shift, aim = self.answer.shift, self.review.measure.aim
         assert shift is not None
         if isinstance(aim, tuple) or self.before.median is None or self.answer.how_often is not None:
+            return []
+        if self.answer.at_level is not None and self.before.median == self.after.median:
             return []
         wants_less = aim == "less" or (aim == "none" and shift.estimate < 0)
         verb = "was" if shift.better_days == 1 else "were"
@@ -223,6 +275,15 @@ class MovedTeller(Teller):
         if since.first > self.after.change:
             return f"{told} That is after the day you marked, {marked}."
         return f"{told} That fits the day you marked, {marked}."
+
+    def _levelled_off(self) -> list[str]:
+        """A slope before the change that is not there since."""
+        slope = self.answer.slope
+        if slope is None or slope.before is None or slope.after is None or (slope.p_before or 1.0) >= STEADY_BELOW:
+            return []
+        if self.after.observations < FEWEST_FOR_LEVELLED or abs(slope.after) > _LEVELLED * abs(slope.before):
+            return []
+        return [f"Before the change it was moving by about {self.speech.pace(slope.before)}; it has levelled off."]
 
     def _still(self) -> list[str]:
         """What became of the move; nothing where that says no more than the answer."""

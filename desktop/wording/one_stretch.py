@@ -4,10 +4,8 @@ from __future__ import annotations
 
 from analysis.answer import Stretch
 from analysis.questions.did_it_move import FEWEST_BEFORE
+from desktop.wording.moved import STEADY_BELOW
 from desktop.wording.telling import Findings, Section, Teller
-
-STEADY_BELOW = 0.01
-"""A slope without a change is told when luck alone makes it in fewer than 1 of 100 steady logs."""
 
 _LISTED = 3
 """Days outside are named up to this many; beyond, the chart shows them."""
@@ -21,7 +19,7 @@ class OneStretchTeller(Teller):
         only, speech = self.review.stretches[0], self.speech
         slope = self.review.answer.slope
         steady = slope is not None and slope.before and (slope.p_before or 1.0) < STEADY_BELOW
-        told = [*self._level(only), *self.season()]
+        told = [*self._level(only), *self.season(), *self.up_to()]
         if slope is not None and slope.before and steady:
             told.append(f"It is moving steadily, by about {speech.pace(slope.before)}.")
         sections = [Section("The log so far", tuple(told))]

@@ -12,6 +12,9 @@ from desktop.wording.days import DayWords
 from desktop.wording.doubts import doubt_sentence
 from desktop.wording.numbers import Speech, decimals_for
 
+SILENT_DAYS = 7
+"""From so many days without an entry on, it is said how far the answer reaches."""
+
 
 @dataclass(frozen=True)
 class Section:
@@ -59,6 +62,17 @@ class Teller:
         if season is None or not season.taken_off:
             return []
         return ["The time of year is taken off: each month is held against its own usual level."]
+
+    def up_to(self) -> list[str]:
+        """Where logging stopped days ago, the last day that the answer tells of."""
+        points, today = self.review.points, self.review.today
+        known = points.known
+        if today is None or not known.any():
+            return []
+        last = int(points.last[known][-1])
+        if today - last < SILENT_DAYS:
+            return []
+        return [f"Nothing is logged after {self.days.day(last)}, so this tells of the time up to then."]
 
     def doubts(self) -> list[Section]:
         """The doubts, worst first; a log without a change and without doubts has no such section."""

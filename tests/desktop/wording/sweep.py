@@ -114,6 +114,12 @@ def _season_apart() -> Review:
     return review(Log.from_pairs(log), [Change(day(200), "stairs")], (FIRST_DAY, date(2031, 5, 1)))
 
 
+def _evenings_stop() -> Review:
+    pairs = [(day(place), 120 + place % 5, "morning") for place in range(28)]
+    pairs += [(day(place), 131 + place % 7, "evening") for place in range(14)]
+    return review(Log.from_pairs(pairs), [Change(day(14), "stairs")])
+
+
 def _carried_over() -> Review:
     rng = np.random.default_rng(3)
     row = [0.0]
@@ -139,6 +145,10 @@ DOUBTED = {
     "missing_more": lambda: reviewed(
         [*LOW, 38, None, None, None, 35, None, None, 44, None, None, 39, None, 41], 14
     ),
+    "no_zero": lambda: reviewed(
+        [value if place % 2 else None for place, value in enumerate(LOW * 2 + HIGH)], 28, kind="amount"
+    ),
+    "other_slots": _evenings_stop,
     "late_entries": lambda: _with_kinds(LOW + HIGH, dict.fromkeys(range(3, 10), "late")),
     "weekdays_only": _on_weekdays_before,
     "early_look": lambda: _looked_at(look_day=day(40)),
