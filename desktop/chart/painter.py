@@ -31,6 +31,9 @@ _TICK_STRIP = 0.7
 _LEAST_JOINED = 7
 """Days nearer to one another than this part of a letter are not joined: the lines would hide the days."""
 _LEAST_RIMMED = 1.8
+_FIRST_NAME = 0.6
+"""The part of the room that a change's name takes where named days begin on the same day."""
+
 _DASHES = {
     "fence": Qt.PenStyle.SolidLine,
     "carried fence": Qt.PenStyle.DashLine,
@@ -85,19 +88,25 @@ def paint_lane(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture, 
     painter.setClipRect(rect)
     painter.fillRect(rect, style.look.colour("lane"))
     spans = [part for part in picture.lane if part.kind == "span"]
+    named: list[tuple[float, float]] = []
     for part in picture.lane:
         if part.kind in ("stretch", "change"):
             room = _lane_room(part, spans, frame)
             bold = part.kind == "change"
             painter.setPen(style.look.colour("ink" if bold else "quiet"))
-            _fitted(painter, rect, frame, part.x0, room, part.text, style.face(bold=bold))
+            left = frame.x(part.x0)
+            named.append((left, _fitted(painter, rect, frame, left, room, part.text, style.face(bold=bold))))
             if bold:
                 painter.setPen(QPen(style.look.colour("ink"), style.size / 9))
                 painter.drawLine(QLineF(frame.x(part.x0), rect.top(), frame.x(part.x0), rect.bottom()))
         elif part.kind == "span":
             _hatched(painter, frame, part, rect, style)
             painter.setPen(style.look.colour("quiet"))
-            _fitted(painter, rect, frame, part.x0, frame.x(part.x1), part.text, style.face(italic=True, part=0.9))
+            # Days that begin under another name have theirs behind it.
+            begin = max([frame.x(part.x0), *(right for left, right in named if left <= frame.x(part.x0) < right)])
+            changes = (one.x0 for one in picture.lane if one.kind == "change" and one.x0 > part.x0)
+            end = frame.x(min([part.x1, *changes]))
+            _fitted(painter, rect, frame, begin, end, part.text, style.face(italic=True, part=0.9))
     painter.restore()
 
 
@@ -233,7 +242,7 @@ def _spans(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> N
         if part.kind == "settling in":
             foot = QRectF(frame.rect.left(), frame.rect.bottom() - 1.4 * line, frame.rect.width(), line)
             painter.setPen(style.look.colour("quiet"))
-            _fitted(painter, foot, frame, part.x0, frame.x(part.x1), part.text, face)
+            _fitted(painter, foot, frame, frame.x(part.x0), frame.x(part.x1), part.text, face)
 
 
 def _hatched(painter: QPainter, frame: Frame, part: LanePart, rect: QRectF, style: Style) -> None:
@@ -367,19 +376,30 @@ def _edge_words(painter: QPainter, frame: Frame, picture: Picture, style: Style)
 
 def _lane_room(part: LanePart, spans: Iterable[LanePart], frame: Frame) -> float:
     """Where the words of a lane part must end: at its edge, or at the named days inside it."""
-    inside = [span.x0 for span in spans if part.x0 < span.x0 < part.x1]
-    return frame.x(min([part.x1, *inside]))
+    ends = [part.x1]
+    for span in spans:
+        if part.x0 < span.x0 < part.x1:
+            ends.append(span.x0)
+        elif span.x0 == part.x0:
+            # Both begin here and share the room.
+            ends.append(part.x0 + _FIRST_NAME * (min(part.x1, span.x1) - part.x0))
+    return frame.x(min(ends))
 
 
-def _fitted(painter: QPainter, rect: QRectF, frame: Frame, x0: float, end: float, text: str, face: QFont) -> None:
-    begin = max(frame.x(x0), frame.rect.left())
-    pad = QFontMetricsF(face).averageCharWidth()
+def _fitted(
+    painter: QPainter, rect: QRectF, frame: Frame, begin: float, end: float, text: str, face: QFont
+) -> float:
+    """Write what fits between two places across, and return where it ends."""
+    begin = max(begin, frame.rect.left())
+    metrics = QFontMetricsF(face)
+    pad = metrics.averageCharWidth()
     box = QRectF(begin + pad, rect.top(), end - begin - 1.2 * pad, rect.height())
     if box.width() < 3 * pad:
-        return
+        return begin
     painter.setFont(face)
-    words = QFontMetricsF(face).elidedText(text, Qt.TextElideMode.ElideRight, box.width())
+    words = metrics.elidedText(text, Qt.TextElideMode.ElideRight, box.width())
     painter.drawText(box, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, words)
+    return box.left() + metrics.horizontalAdvance(words)
 
 
 def _parted(middles: list[float], height: float, rect: QRectF) -> list[float]:

@@ -205,14 +205,7 @@ def _bounded(subject: Subject) -> Subject:
 
 
 def _facts(journal: Journal, subject: Subject, printed: date) -> tuple[str, ...]:
-    points = subject.review.points
-    entries = list(journal.entries.get(subject.measure, {}).values())
-    known = np.flatnonzero(points.known)
-    dated = (
-        fact_parts(subject.log, entries, int(points.first[known[0]]), int(points.last[known[-1]]))
-        if len(known)
-        else ()
-    )
+    dated = fact_parts(subject.review, list(journal.entries.get(subject.measure, {}).values()))
     name = shortened(journal.person.name, _LONGEST_TITLE)
     return (*dated, *([name] if name else []), f"printed {full_day(printed)}")
 

@@ -28,6 +28,7 @@ PAPERS: dict[PaperName, tuple[float, float]] = {"a4": (595.276, 841.89), "letter
 MARGIN = 42.0
 _HEAD_MARGIN, _FOOT_MARGIN = 31.0, 27.0
 _WRITING_LINES = 3
+_SHORT_FACT = 40
 _CHART_MORE = 0.1
 """What charts take beyond their part of the sheet where nothing else needs it."""
 
@@ -251,7 +252,9 @@ class _Layout:
         title: list[Run] = [(self.content.title + ("," if unit else ""), Face(size, bold=True))]
         if unit:
             title.append((unit, Face(size)))
-        return self._text("title", [title, [(" · ".join(self.content.facts), self.quiet)]])
+        # A short fact, such as a date, is not parted by the end of a line.
+        facts = (fact.replace(" ", "\u00a0") if len(fact) < _SHORT_FACT else fact for fact in self.content.facts)
+        return self._text("title", [title, [(" · ".join(facts), self.quiet)]])
 
     def _question(self) -> Box:
         pad = self.sizes.body * 0.8

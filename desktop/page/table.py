@@ -118,12 +118,16 @@ def _widths(cells: Cells, size: int, width: float) -> tuple[list[float], float]:
     if sum(whole) <= room:
         return whole, min((width - sum(whole)) / max(gaps, 1), _MOST_GAP)
     widths, least = _needed(cells, size, parted_rows=1), _needed(cells, size, parted_rows=len(cells))
-    # As few columns as will do are parted: those that give most.
+    # As few columns as will do are parted: those that give most. What room is left makes parted ones wider again.
     for column in sorted(range(len(widths)), key=lambda one: least[one] - widths[one]):
         if sum(widths) <= room:
             break
         widths[column] = max(least[column], widths[column] - (sum(widths) - room))
-    return ([one * room / sum(widths) for one in widths] if sum(widths) > room else widths), _LEAST_GAP
+    if sum(widths) > room:
+        return [one * room / sum(widths) for one in widths], _LEAST_GAP
+    for column in sorted(range(len(widths)), key=lambda one: whole[one] - widths[one]):
+        widths[column] += min(whole[column] - widths[column], room - sum(widths))
+    return widths, _LEAST_GAP
 
 
 def _needed(cells: Cells, size: int, parted_rows: int) -> list[float]:

@@ -26,7 +26,7 @@ UNNAMED = "Log"
 TABLE = "The numbers"
 WHICH_DAYS = "Which days"
 HEADS = {
-    "dates": "Days",
+    "dates": "When",
     "logged": "Logged",
     "readings": "Readings",
     "which": "Which",
@@ -156,20 +156,26 @@ def more_in_the_app(doubts: int) -> str:
     return f"And {doubts} more in the app."
 
 
-def fact_parts(log: Log, entries: Sequence[Entry], first: int, last: int) -> tuple[str, ...]:
-    """From when to when, how a point is made, and how the values came in."""
-    parts = [long_dates(first, last)]
-    measure = log.measure
+def fact_parts(review: Review, entries: Sequence[Entry]) -> tuple[str, ...]:
+    """From when to when, how a point is made, and how the values came in; nothing of a log without a value."""
+    measure, points = review.measure, review.points
+    if not points.known.any():
+        return ()
+    first, last = int(points.first[points.known][0]), int(points.last[points.known][-1])
+    parts = [long_dates(first, last, measure.period)]
     if measure.period != "day":
-        parts.append(f"one point a {measure.period}: the {_COMBINED[measure.combine_rule]}")
+        made = "" if points.whole else f": the {_COMBINED[measure.combine_rule]}"
+        parts.append(f"one point a {measure.period}{made}")
     if source := _source(entries):
         parts.append(source)
     return tuple(parts)
 
 
-def long_dates(first: int, last: int) -> str:
-    """``3 March to 29 April 2031``."""
+def long_dates(first: int, last: int, period: Period) -> str:
+    """``3 March to 29 April 2031``; ``1871 to 1970`` where a point is a year."""
     begin, end = date.fromordinal(first), date.fromordinal(last)
+    if period in ("month", "year"):
+        return short_dates(first, last, period, with_year=True).replace(" – ", " to ").replace("\u00a0", " ")
     if begin == end:
         return full_day(end)
     if begin.year != end.year:
@@ -264,7 +270,12 @@ def cannot_be_written(path: object, reason: str) -> str:
 def _for_others(sentences: Iterable[str]) -> tuple[str, ...]:
     """The sentences that do not speak to the person who keeps the log."""
     single = (one for text in sentences for one in re.split(r"(?<=[.?!]) (?=[A-Z“−\d])", text))
-    return tuple(one for one in single if not _TO_THE_PERSON.search(one))
+    # On screen the doubts stand above what would settle it; on the page they stand below.
+    return tuple(
+        one.replace("the first point above stands", "the first point below stands")
+        for one in single
+        if not _TO_THE_PERSON.search(one)
+    )
 
 
 def _since(answer: Answer, review: Review) -> tuple[str, ...]:

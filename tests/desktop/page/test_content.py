@@ -8,7 +8,7 @@ from datetime import date
 
 import pytest
 
-from desktop.journal.records import Entry, Measure
+from desktop.journal.records import Entry, Measure, Span
 from desktop.page.content import LONGEST_QUESTION, PageContent
 from desktop.wording.page import more_in_the_app, short_names, shortened, title_of_two
 from tests.builders import day
@@ -107,6 +107,16 @@ def test_weeks_say_how_they_are_made_and_still_count_readings():
     assert content.answers[0].headline.startswith("It moved")
 
 
+def test_years_are_told_as_years():
+    pairs = [(date(1871 + place, 1, 1), 1100.0 + 40 * (place % 5) - 250 * (place > 28)) for place in range(60)]
+    journal = journal_of([])
+    journal.measures[1] = Measure(1, 0, "Flow", "", period="year")
+    journal.entries[1] = {(at, ""): Entry(1, at, value=value, source="table") for at, value in pairs}
+    content = page_of(journal)
+    assert content.facts[:3] == ("1871 to 1930", "one point a year", "from a table")
+    assert content.rows[0].cells["dates"] == "1871 – 1930"
+
+
 def test_late_days_and_the_table_they_came_from_are_told():
     journal = journal_of(LOW + HIGH, change=14, kinds=dict.fromkeys((3, 4), "late"))
     assert "written down at the time on 26 of 28 days" in page_of(journal).facts
@@ -154,6 +164,14 @@ def test_words_are_plain_and_speak_to_everyone_in_the_room(name):
     assert [text for text in said[:-1] if re.search(r"\byour?\b|median", text, re.IGNORECASE)] == []
     told = [re.sub(r"\b(?:minutes?|mmHg)\b", "steps", text) for answer in content.answers for text in answer.lines]
     assert {text: round(grade(text), 1) for text in told if grade(text) > HARDEST} == {}
+
+
+def test_what_stands_in_the_way_is_below_on_the_page():
+    spans = [Span(1, day(14), day(30), "device", "new watch")]
+    content = page_of(journal_of(LOW + HIGH + HIGH, change=14, spans=spans))
+    said = " ".join(content.answers[0].lines)
+    assert "the first point below stands in the way" in said
+    assert "new watch" in content.doubts[0]
 
 
 def test_texts_are_kept_short_at_a_word():
