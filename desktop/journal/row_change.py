@@ -27,6 +27,8 @@ Act = Literal[
     "remove change",
     "mark span",
     "remove span",
+    "restore copy",
+    "put earlier back",
 ]
 """What the person did, as the history names it; the wording has a phrase for each."""
 

@@ -7,9 +7,7 @@ drop SQLite's lock on some systems, and a second process could then write in the
 from __future__ import annotations
 
 import contextlib
-import errno
 import os
-import secrets
 import sqlite3
 import stat
 import weakref
@@ -25,6 +23,7 @@ from desktop.storage.migrations import (
     schema_of,
     version_of,
 )
+from desktop.storage.new_files import making
 from desktop.storage.schema import APPLICATION_ID
 
 _BUSY_SECONDS = 3.0
@@ -69,16 +68,6 @@ _REASONS: tuple[tuple[str, str], ...] = (
     # Every statement is one the schema answers, so one that fails met other tables.
     ("SQLITE_ERROR", "damaged"),
 )
-
-_OS_REASONS: dict[int | None, str] = {
-    errno.ENOENT: "missing",
-    errno.ENOTDIR: "missing",
-    errno.EACCES: "read only",
-    errno.EPERM: "read only",
-    errno.EROFS: "read only",
-    errno.ENOSPC: "disk full",
-    errno.EDQUOT: "disk full",
-}
 
 
 class Database:
@@ -159,12 +148,20 @@ def storage_errors(path: Path) -> Iterator[None]:
         raise StorageError("damaged", path=str(path), detail="a text cannot be read") from error
 
 
-def open_database(path: Path, steps: Sequence[Migration] = MIGRATIONS) -> Database:
+def open_database(
+    path: Path,
+    steps: Sequence[Migration] = MIGRATIONS,
+    *,
+    to_read: bool = False,
+    before_migrating: Callable[[Path], object] | None = None,
+) -> Database:
     """Open a journal file, checked and brought to the newest version.
 
     Args:
         path: the file.
         steps: the migrations known, version 1 first.
+        to_read: nothing is to be written.
+        before_migrating: called with the file before it is brought to a newer version; what it raises stops that.
 
     Raises:
         StorageError: there is no file, it cannot be opened, is not a journal, is damaged, was made by a newer
@@ -174,15 +171,17 @@ def open_database(path: Path, steps: Sequence[Migration] = MIGRATIONS) -> Databa
     key = _identity(path)
     if key in _open_files:
         raise StorageError("open already", path=str(path))
-    _check_header(path, newest=len(steps))
-    read_only = not (os.access(path, os.W_OK) and os.access(path.parent, os.W_OK))
+    check_header(path, newest=len(steps))
+    read_only = to_read or not (os.access(path, os.W_OK) and os.access(path.parent, os.W_OK))
     with storage_errors(path):
-        connection = _connect(path, "ro" if read_only else "rw")
+        connection = connect(path, "ro" if read_only else "rw")
         try:
             _check_contents(connection, path, steps)
             if version_of(connection) < len(steps):
                 if read_only:
                     raise StorageError("read only", path=str(path))
+                if before_migrating is not None:
+                    before_migrating(path)
                 migrate(connection, steps)
                 _check_contents(connection, path, steps)
         except BaseException:
@@ -206,47 +205,24 @@ def create_file(path: Path, fill: Callable[[sqlite3.Connection], None]) -> None:
         StorageError: something is there already, or the file cannot be made.
     """
     path = path.absolute()
-    part = path.with_name(f".{path.name}.{secrets.token_hex(4)}.part")
-    try:
-        # SQLite alone would make a file that others on this computer can read.
-        os.close(os.open(part, os.O_CREAT | os.O_EXCL | os.O_WRONLY, 0o600))
-        try:
-            with storage_errors(path), contextlib.closing(_connect(part, "rw")) as connection:
-                migrate(connection)
-                connection.execute("BEGIN IMMEDIATE")
-                fill(connection)
-                connection.execute("COMMIT")
-            _take_place(part, path)
-        finally:
-            part.unlink(missing_ok=True)
-    except FileExistsError as error:
-        raise StorageError("cannot open", path=str(path), exists=True) from error
-    except OSError as error:
-        reason = _OS_REASONS.get(error.errno, "cannot open")
-        raise StorageError(reason, path=str(path), detail=error.strerror) from error
+    with making(path) as part, storage_errors(path), contextlib.closing(connect(part, "rw")) as connection:
+        migrate(connection)
+        connection.execute("BEGIN IMMEDIATE")
+        fill(connection)
+        connection.execute("COMMIT")
 
 
-def _take_place(part: Path, path: Path) -> None:
-    try:
-        # Unlike a renamed file a linked one never takes the place of another.
-        os.link(part, path)
-    except FileExistsError:
-        raise
-    except OSError:
-        # Not every file system has links.
-        if path.exists():
-            raise FileExistsError from None
-        part.rename(path)
-    # The name is on the disk only when the folder is; systems where a folder cannot be opened do it themselves.
-    with contextlib.suppress(OSError):
-        folder = os.open(path.parent, os.O_RDONLY)
-        try:
-            os.fsync(folder)
-        finally:
-            os.close(folder)
+def connect(path: Path, mode: str) -> sqlite3.Connection:
+    """A connection with every setting in force.
 
+    Args:
+        path: a file that is there.
+        mode: "ro" or "rw".
 
-def _connect(path: Path, mode: str) -> sqlite3.Connection:
+    Raises:
+        StorageError: a setting does not take.
+        sqlite3.Error: the file cannot be opened.
+    """
     connection = sqlite3.connect(
         f"{path.as_uri()}?mode={mode}",
         uri=True,
@@ -266,6 +242,11 @@ def _connect(path: Path, mode: str) -> sqlite3.Connection:
     return connection
 
 
+def connect_still(path: Path) -> sqlite3.Connection:
+    """A connection to a file that nobody writes to: no lock is taken, and no journal beside it is looked for."""
+    return sqlite3.connect(f"{path.absolute().as_uri()}?mode=ro&immutable=1", uri=True, isolation_level=None)
+
+
 def _identity(path: Path) -> tuple[int, int]:
     try:
         found = path.stat()
@@ -278,7 +259,12 @@ def _identity(path: Path) -> tuple[int, int]:
     return found.st_dev, found.st_ino
 
 
-def _check_header(path: Path, newest: int) -> None:
+def check_header(path: Path, newest: int) -> None:
+    """Refuse what is no journal, or one of a newer version, by its first bytes alone.
+
+    Raises:
+        StorageError: it is refused, or cannot be read.
+    """
     try:
         with path.open("rb") as file:
             header = file.read(_HEADER_BYTES)

@@ -2,58 +2,25 @@
 
 from __future__ import annotations
 
-import hashlib
-import json
 import sqlite3
 from collections.abc import Callable, Iterable, Sequence
 from dataclasses import dataclass
 from datetime import datetime
 from itertools import groupby
 from pathlib import Path
-from typing import NamedTuple
 
 from desktop.errors import StorageError
 from desktop.journal.journal import Journal
 from desktop.journal.records import Person, Record
 from desktop.journal.row_change import Act, RowChange, Step, StepKind, key_of
+from desktop.storage.backups import take_copy
+from desktop.storage.chain import HISTORY, HistoryRow, Position, check_whole, damaged, position
 from desktop.storage.database import Database, create_file, open_database
 from desktop.storage.rows import TABLES, Cell, Table, key_cells, key_text, table_of
 
 Clock = Callable[[], datetime]
 
-_HISTORY = '"seq", "step", "at", "kind", "act", "of", "tbl", "key", "before", "after", "chain"'
-_APPEND = f'INSERT INTO "history" ({_HISTORY}) VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)'
-
-
-class _HistoryRow(NamedTuple):
-    seq: int
-    step: int
-    at: str
-    kind: StepKind
-    act: Act
-    of: int | None
-    tbl: str
-    key: str
-    before: str | None
-    after: str | None
-
-    def chained(self, previous: bytes) -> bytes:
-        """The mark that ties this row to all rows before it."""
-        row = json.dumps(list(self), ensure_ascii=False, separators=(",", ":")).encode()
-        return hashlib.blake2b(previous + row, digest_size=16).digest()
-
-    def change(self) -> RowChange:
-        table = TABLES[self.tbl]
-        before, after = (None if text is None else table.from_json(text) for text in (self.before, self.after))
-        return RowChange(before, after)
-
-
-class _Position(NamedTuple):
-    """How far a history reaches."""
-
-    seq: int = 0
-    step: int = 0
-    chain: bytes = bytes(16)
+_APPEND = f'INSERT INTO "history" ({HISTORY}) VALUES (?, ?, ?, ?, ?, ?, ?, ?, ?, ?, ?)'
 
 
 @dataclass(frozen=True)
@@ -88,7 +55,7 @@ class Store:
         self._database = database
         self._clock = clock
         with database.reading() as connection:
-            self._last = _position(connection)
+            self._last = position(connection)
 
     @classmethod
     def create(cls, path: Path, records: Person | Iterable[Record], *, clock: Clock = datetime.now) -> Store:
@@ -110,24 +77,29 @@ class Store:
         step = Step(1, _text_of(clock()), "do", "start journal", None, changes)
 
         def fill(connection: sqlite3.Connection) -> None:
-            _append(connection, step, _Position(), path)
+            _append(connection, step, Position(), path)
 
         create_file(path, fill)
         return cls.open(path, clock=clock)
 
     @classmethod
-    def open(cls, path: Path, *, clock: Clock = datetime.now) -> Store:
+    def open(cls, path: Path, *, clock: Clock = datetime.now, to_read: bool = False) -> Store:
         """Open a journal; in a place that cannot be written it opens for reading.
+
+        A file of an older version is copied before it is brought to this one.
 
         Args:
             path: the file.
             clock: gives local time.
+            to_read: nothing is to be written.
 
         Raises:
             StorageError: there is no file, it cannot be opened, is not a journal, is damaged, was made by a
                 newer version, or is open already in this process.
         """
-        database = open_database(path)
+        database = open_database(
+            path, to_read=to_read, before_migrating=lambda old: take_copy(old, clock(), before_version=True)
+        )
         try:
             return cls(database, clock)
         except BaseException:
@@ -149,6 +121,11 @@ class Store:
         """Number of the last step seen or written."""
         return self._last.step
 
+    @property
+    def last_change_number(self) -> int:
+        """Number of the last row change seen or written."""
+        return self._last.seq
+
     def read(self) -> Journal:
         """The journal as it stands in the file; from here on this is the state writing goes on from.
 
@@ -156,12 +133,12 @@ class Store:
             StorageError: the file cannot be read.
         """
         with self._database.reading() as connection:
-            last = _position(connection)
+            last = position(connection)
             rows = [(table, row) for table in TABLES.values() for row in connection.execute(table.select)]
         try:
             journal = Journal.of(table.record(row) for table, row in rows)
         except (ValueError, TypeError) as error:
-            raise self._damaged("a row is not a record") from error
+            raise damaged(self.path, "a row is not a record") from error
         self._last = last
         return journal
 
@@ -186,7 +163,7 @@ class Store:
             raise ValueError("a step needs a change")
         step = Step(self._last.step + 1, _text_of(self._clock()), kind, act, of, tuple(changes))
         with self._database.writing() as connection:
-            if _position(connection) != self._last:
+            if position(connection) != self._last:
                 raise StorageError("stale", path=str(self.path))
             last = _append(connection, step, self._last, self.path)
         self._last = last
@@ -201,11 +178,11 @@ class Store:
         Raises:
             StorageError: the file cannot be read.
         """
-        rows: list[_HistoryRow] = []
+        rows: list[HistoryRow] = []
         with self._database.reading() as connection:
-            newest_first = connection.execute(f'SELECT {_HISTORY} FROM "history" ORDER BY "seq" DESC')
+            newest_first = connection.execute(f'SELECT {HISTORY} FROM "history" ORDER BY "seq" DESC')
             floor: int | None = None
-            for row in map(_row, newest_first):
+            for row in map(HistoryRow.of_cells, newest_first):
                 if floor is None:
                     floor = 0 if last is None else row.step - last
                 if row.step <= floor:
@@ -215,7 +192,7 @@ class Store:
         try:
             return [_step(list(group)) for _, group in groupby(reversed(rows), key=lambda row: row.step)]
         except (ValueError, TypeError) as error:
-            raise self._damaged("a row of the history is not a record") from error
+            raise damaged(self.path, "a row of the history is not a record") from error
 
     def history_of(self, key: tuple[str | int, ...]) -> list[Held]:
         """Everything a key has ever held, newest first.
@@ -228,13 +205,13 @@ class Store:
         """
         with self._database.reading() as connection:
             rows = connection.execute(
-                f'SELECT {_HISTORY} FROM "history" WHERE "tbl" = ? AND "key" = ? ORDER BY "seq" DESC',
+                f'SELECT {HISTORY} FROM "history" WHERE "tbl" = ? AND "key" = ? ORDER BY "seq" DESC',
                 (key[0], key_text(key)),
             ).fetchall()
         try:
-            return [Held(row.step, row.at, row.act, row.change().after) for row in map(_row, rows)]
+            return [Held(row.step, row.at, row.act, row.change().after) for row in map(HistoryRow.of_cells, rows)]
         except (ValueError, TypeError) as error:
-            raise self._damaged("a row of the history is not a record") from error
+            raise damaged(self.path, "a row of the history is not a record") from error
 
     def highest_ids(self) -> dict[str, int]:
         """The highest number each table has ever used as an id, tables that never held a record left out.
@@ -258,18 +235,7 @@ class Store:
             StorageError: the file is damaged or cannot be read.
         """
         with self._database.reading() as connection:
-            for check in ("integrity_check(1)", "foreign_key_check"):
-                found = connection.execute(f"PRAGMA {check}").fetchall()
-                if found not in ([], [("ok",)]):
-                    raise self._damaged(f"{check}: {found[0][0]}")
-            replayed = self._replay(connection)
-            rows = [(table, row) for table in TABLES.values() for row in connection.execute(table.select)]
-        try:
-            held = {(table.name, key_text(key_of(table.record(row)))): table.json(row) for table, row in rows}
-        except (ValueError, TypeError) as error:
-            raise self._damaged("a row is not a record") from error
-        if replayed != held:
-            raise self._damaged("the history does not give what the tables hold")
+            check_whole(connection, self.path)
 
     def close(self) -> None:
         """Let go of the file; closing twice does nothing."""
@@ -281,32 +247,8 @@ class Store:
     def __exit__(self, *_: object) -> None:
         self.close()
 
-    def _replay(self, connection: sqlite3.Connection) -> dict[tuple[str, str], str]:
-        """What the history makes of nothing, each record as its JSON, by table and key."""
-        held: dict[tuple[str, str], str] = {}
-        chain = _Position().chain
-        for cells in connection.execute(f'SELECT {_HISTORY} FROM "history" ORDER BY "seq"'):
-            row = _row(cells)
-            chain = row.chained(chain)
-            if cells[-1] != chain:
-                raise self._damaged("the chain of the history is broken", seq=row.seq)
-            key = (row.tbl, row.key)
-            if held.pop(key, None) != row.before:
-                raise self._damaged("a step starts from what was not there", seq=row.seq)
-            if row.after is not None:
-                held[key] = row.after
-        return held
 
-    def _damaged(self, detail: str, **fields: object) -> StorageError:
-        return StorageError("damaged", path=str(self.path), detail=detail, **fields)
-
-
-def _position(connection: sqlite3.Connection) -> _Position:
-    found = connection.execute('SELECT "seq", "step", "chain" FROM "history" ORDER BY "seq" DESC LIMIT 1')
-    return _Position(*(found.fetchone() or ()))
-
-
-def _append(connection: sqlite3.Connection, step: Step, last: _Position, path: Path) -> _Position:
+def _append(connection: sqlite3.Connection, step: Step, last: Position, path: Path) -> Position:
     """Make the changes of a step and note them, inside the caller's transaction."""
     for change in step.changes:
         table = table_of(change.record)
@@ -319,7 +261,7 @@ def _append(connection: sqlite3.Connection, step: Step, last: _Position, path: P
             # The key says where; the value stays out of what may end up in a report.
             raise StorageError("refused value", path=str(path), key=key) from error
         _make(connection, table, key_cells(change.record), before, after, path)
-        row = _HistoryRow(
+        row = HistoryRow(
             last.seq + 1,
             step.number,
             step.at,
@@ -333,7 +275,7 @@ def _append(connection: sqlite3.Connection, step: Step, last: _Position, path: P
         )
         chain = row.chained(last.chain)
         connection.execute(_APPEND, (*row, chain))
-        last = _Position(row.seq, row.step, chain)
+        last = Position(row.seq, row.step, chain)
     return last
 
 
@@ -356,11 +298,7 @@ def _make(
         connection.execute(table.update, (*after, *key))
 
 
-def _row(cells: Sequence[object]) -> _HistoryRow:
-    return _HistoryRow(*cells[:-1])  # type: ignore[arg-type]
-
-
-def _step(rows: list[_HistoryRow]) -> Step:
+def _step(rows: list[HistoryRow]) -> Step:
     first = rows[0]
     changes = tuple(row.change() for row in rows)
     return Step(first.step, first.at, first.kind, first.act, first.of, changes)

@@ -30,12 +30,16 @@ _PHRASES: dict[Act, str] = {
     "remove change": "the removed change",
     "mark span": "the named days",
     "remove span": "the removed named days",
+    "restore copy": "the earlier copy put in place",
+    "put earlier back": "the earlier value put back",
 }
 """For acts whose records say no more."""
 
 
 def act_phrase(step: Step, journal: Journal) -> str:
     """What a step did: ``30 minutes on 4 May``, ``the change “earlier bus”``, ``12 days of the pasted block``."""
+    if step.act == "restore copy":
+        return _PHRASES[step.act]
     if len(step.changes) > 1 and step.act in ("paste values", "bring in table", "clear values"):
         entries = sum(isinstance(change.record, Entry) for change in step.changes)
         return f"{_PHRASES[step.act]}, {count(entries, 'day')}"

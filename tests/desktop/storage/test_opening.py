@@ -265,7 +265,7 @@ def test_a_first_read_that_does_not_work_lets_go(
 ) -> None:
     store.close()
     with monkeypatch.context() as patch:
-        patch.setattr("desktop.storage.store._position", lambda _: 1 / 0)
+        patch.setattr("desktop.storage.store.position", lambda _: 1 / 0)
         with pytest.raises(ZeroDivisionError):
             Store.open(path)
     Store.open(path).close()
