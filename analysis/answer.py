@@ -98,6 +98,7 @@ class Shift:
         better_days: after-days strictly beyond the old median, the way the aim (else the shift) points, or inside
             the range aimed at.
         days: observations after.
+        control_median_p: two-sided chance by luck that so many days after lie on one side of the old median.
     """
 
     estimate: float
@@ -108,6 +109,7 @@ class Shift:
     share_high: float
     better_days: int
     days: int
+    control_median_p: float
 
 
 @dataclass(frozen=True)

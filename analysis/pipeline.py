@@ -36,6 +36,7 @@ from analysis.doubts.seen import Seen
 from analysis.log import Change, Log, Measure, Values
 from analysis.points import Points, first_logged_day, points_of
 from analysis.questions.by_how_much import difference_of_shares, share_range, shift
+from analysis.questions.control_median import control_median
 from analysis.questions.days_at_level import days_at_level
 from analysis.questions.days_still_needed import forecast
 from analysis.questions.did_it_move import at_most
@@ -254,7 +255,17 @@ def _answer(
     rhythm = level.rhythm
     return Answer(
         carried=carried,
-        shift=Shift(level.estimate, level.low, level.high, level.share, share_low, share_high, better, len(after)),
+        shift=Shift(
+            level.estimate,
+            level.low,
+            level.high,
+            level.share,
+            share_low,
+            share_high,
+            better,
+            len(after),
+            control_median(level.sides.known_before, level.sides.known_after),
+        ),
         luck=Luck(level.p, in_100(level.p)),
         sureness=level.sureness,
         direction=level.direction,

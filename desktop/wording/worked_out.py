@@ -15,6 +15,8 @@ RULES = (
     "into the next.",
     "Share of pairs: of all pairs of one day before and one after, the share in which after is higher "
     "(range: Newcombe 2006).",
+    "Control-median test: how often luck would put so many values beyond the median of a short baseline "
+    "(Mathisen 1943).",
     "Since when: the split into two levels that fits best, and those that fit nearly as well.",
     "Weekends: where they differ from weekdays by more than luck, the difference is taken off first.",
     "Logs with many zeros: judged by how many days there was some, and by how much on those days.",
@@ -43,6 +45,10 @@ def worked_out(review: Review) -> tuple[str, ...]:
             f"range {speech.number(shift.low)} to {speech.number(shift.high)}. "
             f"Share of pairs {plain(shift.share_of_pairs, 3)}, range {plain(shift.share_low, 3)} to "
             f"{plain(shift.share_high, 3)}."
+        )
+        lines.append(
+            f"Control-median test of the {speech.many} beyond the old median, without carry-over: "
+            f"{shift.control_median_p:.2g} by luck (two-sided)."
         )
     if answer.luck is not None:
         lines.append(f"Chance by luck (two-sided) {answer.luck.p:.2g}.")

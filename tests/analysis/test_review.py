@@ -1,6 +1,7 @@
 """The answer from end to end on invented logs."""
 
 import json
+from dataclasses import replace
 from datetime import date
 
 import numpy as np
@@ -9,6 +10,7 @@ from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from analysis import AnalysisError, Change, Log, Measure, review
+from desktop.wording.findings import worded
 from tests.builders import FIRST_DAY, day, log_of, number, reviewed
 
 KEYS = set(
@@ -182,11 +184,20 @@ log_values = st.one_of(
     kind=st.sampled_from(["amount", "count", "reading", "score", "yes/no"]),
     missed=st.sampled_from(["zero", "blank"]),
     combine=st.sampled_from([None, "sum", "mean", "median", "first", "last", "max", "min"]),
+    slots=st.lists(st.sampled_from(["", "morning", "evening"]), min_size=70, max_size=70),
+    asked=st.fixed_dictionaries(
+        {
+            "worth": st.sampled_from([None, 0.0, 1e-300, 3.0, 1e300]),
+            "look_day": st.sampled_from([None, day(0), day(30), day(90)]),
+            "others": st.sampled_from([(), (0.0, 1.0), (0.01,)]),
+        }
+    ),
 )
-def test_no_log_makes_a_review_raise_or_warn(values, change, settle, period, kind, missed, combine):
+def test_no_log_makes_a_review_raise_or_warn(values, change, settle, period, kind, missed, combine, slots, asked):
     measure = Measure("x", kind=kind, period=period, missed=missed, combine=combine)
-    log = Log.from_pairs([(day(place), value) for place, value in enumerate(values)], measure)
-    assert json.dumps(review(log, [Change(day(change), "x", settle)]).to_json(), allow_nan=False)
+    rows = [(day(place), value, slots[place]) for place, value in enumerate(values)]
+    one = review(Log.from_pairs(rows, measure), [Change(day(change), "x", settle)], **asked)
+    assert json.dumps(worded(one).to_json(), allow_nan=False)
 
 
 @settings(deadline=None, max_examples=60)
@@ -203,6 +214,25 @@ def test_shifting_and_scaling_change_the_answer_only_as_they_must(values, added,
     assert other.answer.shift.share_of_pairs == plain.answer.shift.share_of_pairs
     if plain.answer.carried is not None:
         assert other.answer.carried.above == plain.answer.carried.above
+
+
+@settings(deadline=None, max_examples=60)
+@given(st.lists(st.integers(0, 40), min_size=20, max_size=60))
+def test_turning_the_values_round_turns_the_answer_round(values):
+    plain = reviewed([float(value) for value in values], 10, aim="more").answer
+    turned = reviewed([-float(value) for value in values], 10, aim="less").answer
+    assert (turned.sureness, turned.luck.p) == (plain.sureness, pytest.approx(plain.luck.p))
+    assert turned.shift.estimate == pytest.approx(-plain.shift.estimate)
+    assert turned.shift.better_days == plain.shift.better_days
+    assert {"more": "less", "less": "more", "none": "none"}[turned.direction] == plain.direction
+
+
+@settings(deadline=None, max_examples=60)
+@given(st.lists(st.integers(0, 40), min_size=20, max_size=60))
+def test_the_aim_changes_which_days_are_better_and_nothing_of_the_level(values):
+    more, less = (reviewed([float(value) for value in values], 10, aim=aim).answer for aim in ("more", "less"))
+    assert (more.luck, more.since, more.carried) == (less.luck, less.since, less.carried)
+    assert replace(more.shift, better_days=0) == replace(less.shift, better_days=0)
 
 
 def test_a_log_of_two_centuries_is_answered_with_little_memory():
