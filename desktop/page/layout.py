@@ -166,7 +166,8 @@ class _Layout:
         doubts = len(self.content.doubts)
         lines = max((len(one.lines) for one in self.content.answers), default=0)
         rows = self.content.rows
-        kept = tuple(row for row in rows if not row.gives_way)
+        # In large print a row is a column, which leaves no room when it goes.
+        kept = rows if self.sizes is LARGE else tuple(row for row in rows if not row.gives_way)
         ends = tuple(row for row in kept if row.head in (kept[0].head, kept[-1].head))
         tried = [_Shown(place, lines, rows) for place in range(doubts, 0, -1)]
         tried += [_Shown(min(doubts, 1), lines, rows), _Shown(min(doubts, 1), lines, kept), _Shown(0, lines, kept)]
@@ -281,10 +282,10 @@ class _Layout:
         return boxes
 
     def _fitting(self, headline: str, largest: int) -> int:
-        """The size at which a headline has one line, if one a little smaller does; else that smaller size."""
+        """The size at which a headline has one line, where one a little smaller does; else the largest."""
         sizes = range(largest, largest - 3, -1)
         one_line = (size for size in sizes if width_of(headline, Face(size, bold=True)) <= self.width)
-        return next(one_line, sizes[-1])
+        return next(one_line, largest)
 
     def _tables(self, shown: _Shown) -> list[Box]:
         rows = shown.rows

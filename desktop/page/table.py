@@ -49,16 +49,38 @@ def wide_table(
 def tall_tables(
     content: PageContent, rows: Sequence[Row], size: int, width: float
 ) -> list[tuple[str, list[Words], list[QLineF], float]]:
-    """A column for each stretch, one table a measure; with the measure's short name, if there are two."""
+    """A column for each stretch; of two measures on the same days a cell holds both, else each has its table.
+
+    Returns:
+        For each table the short names of its measures (``""`` where there is one), and as for ``wide_table``.
+    """
+    names = list(dict.fromkeys(row.cells["which"] for row in rows))
+    columns = [[row for row in rows if row.cells["which"] == name] for name in names]
+    if len(names) == 2 and [_days_of(row) for row in columns[0]] == [_days_of(row) for row in columns[1]]:
+        rows = [_both(upper, lower) for upper, lower in zip(*columns, strict=True)]
+        names, columns = [" / ".join(names)], [rows]
     tables = []
-    for which in dict.fromkeys(row.cells["which"] for row in rows):
-        shown = [row for row in rows if row.cells["which"] == which]
+    for name, shown in zip(names, columns, strict=True):
         cells: Cells = [["", *(row.head for row in shown)]]
-        for name in content.columns:
-            if name != "which":
-                cells.append([HEADS[name], *(row.cells.get(name, "") for row in shown)])
-        tables.append((which, *_set(cells, size, width, parted_from=[True] * len(cells))))
+        for column in content.columns:
+            if column != "which":
+                cells.append([HEADS[column], *(row.cells.get(column, "") for row in shown)])
+        tables.append((name, *_set(cells, size, width, parted_from=[True] * len(cells))))
     return tables
+
+
+def _both(upper: Row, lower: Row) -> Row:
+    """The row of two measures on the same days: each cell holds both, parted where the line must end."""
+    cells = {}
+    for name, said in upper.cells.items():
+        other = lower.cells.get(name, "")
+        halves = (one.replace(" ", "\u00a0") for one in (said, other))
+        cells[name] = said if name in _SHARED and said == other else "\u00a0/ ".join(halves)
+    return Row(upper.head, cells)
+
+
+def _days_of(row: Row) -> tuple[str, str]:
+    return row.head, row.cells["dates"]
 
 
 def _set(
