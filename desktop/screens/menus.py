@@ -12,7 +12,6 @@ from PySide6.QtWidgets import QMenu
 from analysis.log import PERIODS
 from desktop.screens.chart_pane import PERIOD_WORDS
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
-from desktop.screens.page_dialog import copy_chart, show_page
 from desktop.wording.acts import act_phrase
 from desktop.wording.days import full_day
 
@@ -62,7 +61,7 @@ class Menus:
         _add(file, "Open the &sample journal", window.open_sample)
         file.addSeparator()
         _add(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")
-        self._reading.append(_add(file, "The &page…", partial(show_page, window), Keys.Print))
+        self._reading.append(_add(file, "The &page…", partial(_show_page, window), Keys.Print))
         file.addSeparator()
         _add(file, "&Quit", window.close, Keys.Quit)
 
@@ -73,7 +72,7 @@ class Menus:
         edit.addSeparator()
         self._reading += [
             _add(edit, "&Copy days", window.workspace.days.copy),
-            _add(edit, "Copy chart as p&icture", partial(copy_chart, window)),
+            _add(edit, "Copy chart as p&icture", partial(_copy_chart, window)),
         ]
         self._writing.append(_add(edit, "&Paste days", window.workspace.days.paste))
 
@@ -133,6 +132,18 @@ class Menus:
             action = _add(menu, measure.title, partial(self._window.show_measure, measure.id))
             action.setCheckable(True)
             action.setChecked(session is not None and measure.id == session.measure)
+
+
+def _show_page(window: MainWindow) -> None:
+    from desktop.screens.page_dialog import show_page  # What draws on paper is not needed to show the window.
+
+    show_page(window)
+
+
+def _copy_chart(window: MainWindow) -> None:
+    from desktop.screens.page_dialog import copy_chart
+
+    copy_chart(window)
 
 
 def _add(menu: QMenu, text: str, do: Callable[[], object], keys: Keys | str | None = None) -> QAction:
