@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Callable, Sequence
+from contextlib import suppress
 from dataclasses import dataclass
 from datetime import date, datetime
 from functools import partial
@@ -15,12 +16,17 @@ from analysis.log import Period
 from desktop.edits.edit import Edit
 from desktop.edits.history import STEPS_KEPT, UndoHistory, redo_edit, undo_edit
 from desktop.edits.ids import Ids
+from desktop.errors import StorageError
 from desktop.journal.journal import Journal
 from desktop.journal.records import Measure
-from desktop.journal.row_change import Step, StepKind
+from desktop.journal.row_change import Act, Step, StepKind
 from desktop.models.background import Background
 from desktop.models.other_measures import Asked, OtherMeasures, ask
+from desktop.storage.backups import take_copy
 from desktop.storage.store import Store
+
+_COPIED_BEFORE: frozenset[Act] = frozenset({"bring in table", "restore copy"})
+"""Acts that alter much at once: the journal is copied before them."""
 
 _AT_ONCE = 1_000
 """Reviews of up to this many entries are quicker than a frame and are made at once."""
@@ -102,6 +108,11 @@ class Session(QObject):
     def is_saved(self) -> bool:
         """Whether everything on screen is on the disk."""
         return not self._unsaved and not self._writing
+
+    @property
+    def last_change_number(self) -> int:
+        """Number of the last row change on the disk."""
+        return self._store.last_change_number
 
     @property
     def trouble(self) -> Exception | None:
@@ -208,9 +219,15 @@ class Session(QObject):
         self._unsaved.append((edit, kind, of))
         if self._blocked is None:
             self._writing += 1
-            self._writer.run(
-                partial(self._store.write, edit.act, edit.changes, kind, of), self._written, self._not_written
-            )
+            self._writer.run(partial(self._to_disk, edit, kind, of), self._written, self._not_written)
+
+    def _to_disk(self, edit: Edit, kind: StepKind, of: int | None) -> Step:
+        """Called on the writer's thread."""
+        if edit.act in _COPIED_BEFORE:
+            # Without a copy the act can still be taken back; the next copy that is due says what is wrong.
+            with suppress(StorageError):
+                take_copy(self.path, self.now())
+        return self._store.write(edit.act, edit.changes, kind, of)
 
     def _written(self, step: Step) -> None:
         self._writing -= 1

@@ -39,6 +39,16 @@ class Settings:
         """Remember a theme."""
         self._stored.setValue("theme", theme)
 
+    @property
+    def copies_place(self) -> Path | None:
+        """The second place for copies, or None."""
+        stored = str(self._stored.value("copies", ""))
+        return Path(stored) if stored else None
+
+    def set_copies_place(self, place: Path) -> None:
+        """Remember a second place for copies."""
+        self._stored.setValue("copies", str(place))
+
     def keep_places(self, window: QMainWindow, panes: QByteArray | None) -> None:
         """Remember where the window is and, where the person chose them, the widths of its panes."""
         self._stored.setValue("geometry", window.saveGeometry())

@@ -152,6 +152,21 @@ def read_copy(path: Path) -> Journal:
     return Journal.of(table.record(row) for table, row in rows)
 
 
+def check_file(journal: Path) -> None:
+    """Check the whole of a journal, open or not; writing to it waits only while it is copied into memory.
+
+    Raises:
+        StorageError: the file is damaged or cannot be read.
+    """
+    with (
+        storage_errors(journal),
+        contextlib.closing(sqlite3.connect(":memory:", isolation_level=None)) as memory,
+    ):
+        with contextlib.closing(connect(journal, "ro")) as source:
+            source.backup(memory)
+        _check(memory, journal)
+
+
 def newest_good(copies: Iterable[EarlierCopy]) -> tuple[EarlierCopy, Journal] | None:
     """The newest copy that is whole, with what it holds; None when there is none."""
     for copy in sorted(copies, reverse=True):
@@ -170,7 +185,8 @@ def is_due_at_opening(copies: Iterable[EarlierCopy], seq: int, now: datetime) ->
     """
     last = max(copies, default=None, key=lambda copy: (copy.seq, copy.made))
     if last is None:
-        return True
+        # A journal that was only just started has nothing to lose.
+        return seq > 1
     return last.seq != seq and _day(last, now) != now.date()
 
 

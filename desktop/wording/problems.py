@@ -38,6 +38,17 @@ def problem_sentence(error: DayfenceError | AnalysisError, *, in_command: bool =
     return _EXCHANGE[error.reason](error.fields)
 
 
+def not_copied_sentence(error: Exception) -> str:
+    """That the journal could not be copied, which is no trouble for what is being typed."""
+    why = {
+        "missing": " the place for it is not there",
+        "disk full": " the disk is full",
+        "read only": " the place for it cannot be written",
+    }
+    reason = why.get(error.reason, "") if isinstance(error, StorageError) else ""
+    return f"No new copy of the journal could be made{':' if reason else ''}{reason}. The journal itself is saved."
+
+
 def choice_label(reason: str, choice: object) -> str:
     """An answer to a question of the importer, as a button says it."""
     if reason == "which day order":

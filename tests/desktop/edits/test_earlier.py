@@ -8,9 +8,10 @@ from datetime import date
 
 import pytest
 
-from desktop.edits.earlier import Difference, differences, put_back_earlier, restore
+from desktop.edits.earlier import put_back_earlier, restore
 from desktop.edits.edit import Edit
 from desktop.edits.history import undo_edit
+from desktop.journal.differences import Difference, differences
 from desktop.journal.journal import Journal
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person, Span
 from desktop.journal.row_change import Step

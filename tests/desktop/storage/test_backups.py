@@ -16,6 +16,7 @@ from desktop.journal.records import Person
 from desktop.storage import backups
 from desktop.storage.backups import (
     EarlierCopy,
+    check_file,
     copies_folder,
     copies_of,
     is_due_at_closing,
@@ -201,7 +202,8 @@ def test_a_day_is_one_of_the_place_where_the_person_is() -> None:
     assert is_due_at_opening([copy_at(late.astimezone(UTC))], 2, late + timedelta(hours=1))
     here = datetime(2026, 3, 10, 12)
     assert not is_due_at_opening([copy_at(here.astimezone(UTC))], 2, here)
-    assert is_due_at_opening([], 1, here)
+    assert is_due_at_opening([], 2, here)
+    assert not is_due_at_opening([], 1, here)
 
 
 @pytest.mark.parametrize(("seq", "due"), [(0, False), (20, False), (21, True), (41, True)])
@@ -308,3 +310,12 @@ def test_opened_to_read_only(store: Store, path: Path) -> None:
     with Store.open(path, to_read=True) as opened:
         assert opened.read_only
         assert refusal(lambda: opened.write("put value", added(minutes(1)))).reason == "read only"
+
+
+def test_a_file_is_checked_while_it_is_written_to(store: Store, path: Path) -> None:
+    with store._database.writing() as connection:
+        connection.execute("UPDATE measure SET title = 'other'")
+        # What is not yet committed is not looked at, and nobody waits.
+        check_file(path)
+    assert refusal(lambda: check_file(path)).reason == "damaged"
+    assert refusal(lambda: check_file(path.parent / "none")).reason == "cannot open"
