@@ -13,6 +13,7 @@ from desktop.errors import StorageError
 from desktop.journal.journal import Journal
 from desktop.journal.records import Person, Record
 from desktop.journal.row_change import Act, RowChange, Step, StepKind, key_of
+from desktop.storage.alone import Alone
 from desktop.storage.backups import take_copy
 from desktop.storage.chain import HISTORY, HistoryRow, Position, check_whole, damaged, position
 from desktop.storage.database import Database, create_file, open_database
@@ -50,21 +51,30 @@ class Store:
     :meth:`read` gives what is there.
     """
 
-    def __init__(self, database: Database, clock: Clock) -> None:
+    def __init__(self, database: Database, clock: Clock, alone: Alone | None = None) -> None:
         """Of an open database; use :meth:`create` or :meth:`open`."""
         self._database = database
+        self._alone = alone
         self._clock = clock
         with database.reading() as connection:
             self._last = position(connection)
 
     @classmethod
-    def create(cls, path: Path, records: Person | Iterable[Record], *, clock: Clock = datetime.now) -> Store:
+    def create(
+        cls,
+        path: Path,
+        records: Person | Iterable[Record],
+        *,
+        clock: Clock = datetime.now,
+        alone: bool = False,
+    ) -> Store:
         """Make a new journal; its first step is "start journal".
 
         Args:
             path: where; nothing may be there yet.
             records: the person, or the person and other records to begin with.
             clock: gives local time.
+            alone: as for :meth:`open`.
 
         Raises:
             ValueError: not exactly one person among the records.
@@ -80,10 +90,10 @@ class Store:
             _append(connection, step, Position(), path)
 
         create_file(path, fill)
-        return cls.open(path, clock=clock)
+        return cls.open(path, clock=clock, alone=alone)
 
     @classmethod
-    def open(cls, path: Path, *, clock: Clock = datetime.now, to_read: bool = False) -> Store:
+    def open(cls, path: Path, *, clock: Clock = datetime.now, to_read: bool = False, alone: bool = False) -> Store:
         """Open a journal; in a place that cannot be written it opens for reading.
 
         A file of an older version is copied before it is brought to this one.
@@ -92,18 +102,24 @@ class Store:
             path: the file.
             clock: gives local time.
             to_read: nothing is to be written.
+            alone: where it can be written, no other window may have it until it is closed.
 
         Raises:
             StorageError: there is no file, it cannot be opened, is not a journal, is damaged, was made by a
-                newer version, or is open already in this process.
+                newer version, or is open already.
         """
         database = open_database(
             path, to_read=to_read, before_migrating=lambda old: take_copy(old, clock(), before_version=True)
         )
+        held: Alone | None = None
         try:
-            return cls(database, clock)
+            if alone and not database.read_only:
+                held = Alone.hold(path)
+            return cls(database, clock, held)
         except BaseException:
             database.close()
+            if held is not None:
+                held.release()
             raise
 
     @property
@@ -240,6 +256,9 @@ class Store:
     def close(self) -> None:
         """Let go of the file; closing twice does nothing."""
         self._database.close()
+        if self._alone is not None:
+            self._alone.release()
+            self._alone = None
 
     def __enter__(self) -> Store:
         return self
