@@ -122,6 +122,15 @@ def _logged_days(log: Log, today: int | None) -> Days:
     return days
 
 
+def _paused(log: Log, days: Days) -> NDArray[np.bool_]:
+    """Which days lie in a span of illness or absence: they are in no number, whatever was written down."""
+    paused = np.zeros(len(days), dtype=bool)
+    for span in log.spans:
+        if span.kind in ("ill", "away"):
+            paused |= (days >= span.first.toordinal()) & (days <= span.last.toordinal())
+    return paused
+
+
 def _counted(log: Log, today: int | None) -> tuple[Days, Values, NDArray[np.bool_]]:
     """Days, values and whether a value is a missed day counted as zero, in order of day."""
     measure = log.measure
@@ -134,11 +143,14 @@ def _counted(log: Log, today: int | None) -> tuple[Days, Values, NDArray[np.bool
         counted |= rest
     within = log.days <= today if today is not None else np.ones(len(log), dtype=bool)
     days, values = log.days[counted & within], values[counted & within]
+    paused = _paused(log, days)
+    days, values = days[~paused], values[~paused]
     filled = np.zeros(len(days), dtype=bool)
     if measure.missed == "zero":
         logged = _logged_days(log, today)
         if len(logged):
             missed = np.setdiff1d(np.arange(logged[0], logged[-1] + 1), logged)
+            missed = missed[~_paused(log, missed)]
             days = np.concatenate([days, missed])
             values = np.concatenate([values, np.zeros(len(missed))])
             filled = np.concatenate([filled, np.ones(len(missed), dtype=bool)])

@@ -86,13 +86,8 @@ class Seen:
             before: which periods of the baseline to leave out, shape (m,).
             after: which of the days after, shape (n,).
         """
-        if self.sides is None:
+        if self.sides is None or not self.turns_on(self.sides.without(before, after)):
             return False
-        rest = self.sides.without(before, after)
-        if not self.turns_on(rest):
-            return False
-        if not len(rest.known_before) or not len(rest.known_after):
-            return True
         # Seeded by the days left out: the same log gives the same answer.
         rng = np.random.default_rng([int(before.sum()), int(after.sum()), len(before), len(after)])
         lost = sum(

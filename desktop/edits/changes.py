@@ -7,7 +7,7 @@ from datetime import date
 from desktop.edits.edit import Edit, edit_putting
 from desktop.edits.ids import Ids
 from desktop.journal.journal import Journal
-from desktop.journal.records import Change, Span, SpanKind, WhyThatDay
+from desktop.journal.records import Change, Measure, Span, SpanKind, WhyThatDay
 from desktop.journal.row_change import RowChange
 
 
@@ -20,6 +20,7 @@ def mark_change(
     why: WhyThatDay | None = None,
     settle_days: int = 0,
     measures: tuple[int, ...] = (),
+    agreed: Measure | None = None,
 ) -> Edit:
     """Mark a change.
 
@@ -31,19 +32,20 @@ def mark_change(
         why: why that day.
         settle_days: days from ``day`` on that are in no number.
         measures: ids of the measures it concerns; empty = all.
+        agreed: a measure with the size worth it and the day to look, as agreed with the change.
     """
     change = Change(ids.new("change"), day, label, why, settle_days, measures)
-    return edit_putting(journal, "mark change", [change])
+    return edit_putting(journal, "mark change", [change, *([agreed] if agreed else [])])
 
 
-def edit_change(journal: Journal, change: Change) -> Edit:
-    """Put a change in the place of the one with its id.
+def edit_change(journal: Journal, change: Change, agreed: Measure | None = None) -> Edit:
+    """Put a change in the place of the one with its id, and a measure with what was agreed with it.
 
     Raises:
         KeyError: no such change.
     """
-    old = journal.changes[change.id]
-    return Edit("edit change", () if old == change else (RowChange(old, change),))
+    journal.changes[change.id]
+    return edit_putting(journal, "edit change", [change, *([agreed] if agreed else [])])
 
 
 def remove_change(journal: Journal, change: int) -> Edit:

@@ -8,7 +8,7 @@ from dataclasses import replace
 from desktop.edits.edit import Edit, edit_putting
 from desktop.edits.ids import Ids
 from desktop.journal.journal import Journal
-from desktop.journal.records import Change, Measure, Span
+from desktop.journal.records import Change, Entry, Measure, Span
 from desktop.journal.row_change import RowChange
 
 
@@ -40,6 +40,65 @@ def set_measure(journal: Journal, *measures: Measure) -> Edit:
     """
     pairs = [(journal.measures[measure.id], measure) for measure in measures]
     return Edit("set measure", tuple(RowChange(old, new) for old, new in pairs if old != new))
+
+
+def convert_measure(journal: Journal, measure: Measure, factor: float, offset: float) -> Edit:
+    """Give a measure another unit and turn every number of it over, as one act; what was typed stays beside it.
+
+    Args:
+        journal: as it stands.
+        measure: the measure as it is to be, its limits and amounts still in the old unit.
+        factor: for every number, before the offset.
+        offset: is added to values and limits, not to the size of a move.
+
+    Raises:
+        KeyError: no such measure.
+    """
+
+    def turned(value: float | None) -> float | None:
+        return None if value is None else _tidy(factor * value + offset)
+
+    def is_moved(entry: Entry) -> bool:
+        return bool(offset) and entry.kind == "zero"
+
+    new = replace(
+        measure,
+        goal_low=turned(measure.goal_low),
+        goal_high=turned(measure.goal_high),
+        likely_low=turned(measure.likely_low),
+        likely_high=turned(measure.likely_high),
+        worth=None if measure.worth is None else _tidy(abs(factor) * measure.worth),
+    )
+    entries = [
+        # A true zero of one unit is none of the other only where there is no offset.
+        RowChange(
+            entry, replace(entry, value=turned(entry.value), kind="value" if is_moved(entry) else entry.kind)
+        )
+        for entry in journal.entries.get(measure.id, {}).values()
+        if entry.value is not None
+    ]
+    return Edit("set measure", (RowChange(journal.measures[measure.id], new), *entries))
+
+
+def _tidy(value: float) -> float:
+    """A converted number without the tail of digits that only the arithmetic made."""
+    return float(f"{value:.9g}")
+
+
+def move_measure(journal: Journal, measure: int, step: int) -> Edit:
+    """Move a measure's column to the left (-1) or right (1) among those shown.
+
+    Raises:
+        KeyError: no such measure.
+    """
+    columns = journal.columns()
+    place = [one.id for one in columns].index(measure) if measure in {one.id for one in columns} else -1
+    there = place + step
+    if place < 0 or not 0 <= there < len(columns):
+        journal.measures[measure]
+        return Edit("set measure", ())
+    moved, other = columns[place], columns[there]
+    return set_measure(journal, replace(moved, position=other.position), replace(other, position=moved.position))
 
 
 def archive_measure(journal: Journal, measure: int, archived: bool = True) -> Edit:

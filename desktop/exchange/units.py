@@ -34,6 +34,14 @@ _SPELLINGS: dict[str, tuple[str, ...]] = {
 }
 _KNOWN: dict[str, str] = {form: unit for unit, forms in _SPELLINGS.items() for form in forms}
 _IN_MINUTES: dict[str, float] = {"min": 1.0, "h": 60.0}
+_SIZES: tuple[dict[str, float], ...] = (
+    {"s": 1 / 60, "min": 1.0, "h": 60.0},
+    {"g": 0.001, "kg": 1.0, "lb": 0.45359237, "st": 14 * 0.45359237},
+    {"cm": 0.01, "m": 1.0, "km": 1000.0, "mi": 1609.344},
+    {"mL": 0.001, "L": 1.0},
+    {"kcal": 4.184, "kJ": 1.0},
+)
+"""Units of one kind, in one of them."""
 _NEVER_NEGATIVE = frozenset({"min", "h", "s", "steps", "km", "mi", "bpm", "mmHg", "kg", "lb", "st", "/10"})
 _MOST_IN_A_DAY: dict[str, float] = {"min": 1440.0, "h": 24.0, "s": 86400.0}
 _HEADER = re.compile(r"(.*\S)\s*[(\[]\s*([^()\[\]]+?(?:\[hg\])?)\s*[)\]]", re.IGNORECASE)
@@ -62,6 +70,31 @@ def convert_time(value: float, unit: str, wanted: str) -> float | None:
     if unit not in _IN_MINUTES or wanted not in _IN_MINUTES:
         return None
     return value * _IN_MINUTES[unit] / _IN_MINUTES[wanted]
+
+
+def conversion(unit: str, wanted: str) -> tuple[float, float] | None:
+    """Factor and offset that turn numbers in one unit into the other: ``wanted = factor * value + offset``.
+
+    Args:
+        unit: as people write it.
+        wanted: the same.
+
+    Returns:
+        None where no conversion is known, or the two are one unit.
+
+    Source: exact by definition: the pound is 0.45359237 kg, the mile 1.609344 km, the stone 14 pounds.
+    """
+    have, want = known_unit(unit), known_unit(wanted)
+    if have == want:
+        return None
+    for sizes in _SIZES:
+        if have in sizes and want in sizes:
+            return sizes[have] / sizes[want], 0.0
+    if (have, want) == ("°C", "°F"):
+        return 1.8, 32.0
+    if (have, want) == ("°F", "°C"):
+        return 1 / 1.8, -32 / 1.8
+    return None
 
 
 def impossible(value: float, unit: str, *, one_day: bool) -> str:

@@ -153,7 +153,7 @@ class Journal:
             analysis_measure(record, period),
             [entry.day.toordinal() for entry in entries],
             [float("nan") if entry.value is None else entry.value for entry in entries],
-            [entry.kind for entry in entries],
+            [_kind_in_numbers(record, entry) for entry in entries],
             [entry.slot for entry in entries],
             [analysis.log.Span(span.first, span.last, span.kind, span.label) for span in self.spans_of(measure)],
         )
@@ -198,6 +198,11 @@ class Journal:
                 del self.plans[record.id]
             case DayNote():
                 del self.notes[record.day]
+
+
+def _kind_in_numbers(measure: Measure, entry: Entry) -> analysis.log.DayKind:
+    """A day that the person called not known is no missed day, which would count as zero."""
+    return "away" if entry.kind == "blank" and measure.missed == "zero" else entry.kind
 
 
 def analysis_measure(measure: Measure, period: analysis.log.Period | None = None) -> analysis.log.Measure:

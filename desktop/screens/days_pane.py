@@ -2,21 +2,24 @@
 
 from __future__ import annotations
 
+from datetime import date
 from typing import cast
 
 from PySide6.QtCore import QEvent, QModelIndex, QPersistentModelIndex, Qt, Signal
-from PySide6.QtGui import QFontMetrics, QGuiApplication, QKeyEvent, QKeySequence
+from PySide6.QtGui import QAction, QContextMenuEvent, QFontMetrics, QGuiApplication, QKeyEvent, QKeySequence
 from PySide6.QtWidgets import (
     QAbstractItemDelegate,
     QAbstractItemView,
     QHeaderView,
     QLineEdit,
+    QMenu,
     QStyledItemDelegate,
     QStyleOptionViewItem,
     QTableView,
     QWidget,
 )
 
+from desktop.journal.records import Measure
 from desktop.models.days_table import KIND_LETTERS, DaysTable
 
 _ROW_HEIGHT = 1.7
@@ -36,6 +39,8 @@ class DaysPane(QTableView):
 
     def __init__(self, parent: QWidget | None = None) -> None:
         super().__init__(parent)
+        self.offered: list[QAction] = []
+        self._place: tuple[date, Measure | None] | None = None
         self.setItemDelegate(_CellDelegate(self))
         self.setEditTriggers(
             QAbstractItemView.EditTrigger.AnyKeyPressed
@@ -59,12 +64,22 @@ class DaysPane(QTableView):
         self.setModel(model)
         self._settle_sizes()
         model.modelReset.connect(self._settle_sizes)
+        # Other columns or other words for one leave the hand where it was.
+        model.modelAboutToBeReset.connect(self._remember_place)
+        model.modelReset.connect(self._go_back_to_place)
         self.go_to_row(model.rowCount() - 1)
 
     @property
     def days(self) -> DaysTable:
         """The model shown."""
         return cast(DaysTable, self.model())
+
+    @property
+    def chosen_days(self) -> set[date]:
+        """The days of the cells that are selected."""
+        return (
+            {self.days.day(index.row()) for index in self.selectedIndexes()} if self.model() is not None else set()
+        )
 
     def go_to_row(self, row: int) -> None:
         """Make a day current, in the measure that is current, and bring it into view."""
@@ -137,11 +152,30 @@ class DaysPane(QTableView):
         else:
             super().closeEditor(editor, hint)
 
+    def contextMenuEvent(self, event: QContextMenuEvent) -> None:
+        """What can be done with the chosen days."""
+        menu = QMenu(self)
+        menu.addActions(self.offered)
+        menu.exec(event.globalPos())
+
     def changeEvent(self, event: QEvent) -> None:
         """Follow the text size."""
         super().changeEvent(event)
         if event.type() == QEvent.Type.FontChange:
             self._settle_sizes()
+
+    def _remember_place(self) -> None:
+        index = self.currentIndex()
+        if index.isValid():
+            self._place = (self.days.day(index.row()), self.days.measure(index.column()))
+
+    def _go_back_to_place(self) -> None:
+        if self._place is None or not self.days.rowCount():
+            return
+        day, measure = self._place
+        row = min(max(self.days.row(day), 0), self.days.rowCount() - 1)
+        column = self.days.columnCount() - 1 if measure is None else self.days.column(measure.id)
+        self.setCurrentIndex(self.days.index(row, column))
 
     def _go_down(self) -> None:
         at = self.currentIndex()

@@ -17,27 +17,26 @@ from PySide6.QtWidgets import (
     QLineEdit,
     QListWidget,
     QMessageBox,
-    QSpinBox,
     QVBoxLayout,
     QWidget,
 )
 
 from analysis.log import MeasureKind, Missed
 from desktop.exchange.number_tokens import Refusal, read_typed
-from desktop.journal.records import AimWord, Change, Measure
+from desktop.journal.records import AimWord, Measure
 from desktop.models.ready_made import ready_measures
 from desktop.wording.days import full_day
 from desktop.wording.entry import number_text
 
 _OWN = "My own measure"
 
-_ZERO_ANSWERS: tuple[tuple[str, MeasureKind, Missed], ...] = (
+ZERO_ANSWERS: tuple[tuple[str, MeasureKind, Missed], ...] = (
     ("Yes, and a day without an entry is zero", "amount", "zero"),
     ("Yes, but a day without an entry is not known", "amount", "blank"),
     ("No: it is a reading, such as a weight", "reading", "blank"),
     ("It is a score, such as pain 0 to 10", "score", "blank"),
 )
-_AIMS: tuple[tuple[str, AimWord], ...] = (
+AIMS: tuple[tuple[str, AimWord], ...] = (
     ("More is better", "more"),
     ("Less is better", "less"),
     ("Within a range", "range"),
@@ -59,9 +58,9 @@ class MeasureDialog(QDialog):
         self.title = QLineEdit()
         self.unit = QLineEdit()
         self.zero = QComboBox()
-        self.zero.addItems([text for text, _, _ in _ZERO_ANSWERS])
+        self.zero.addItems([text for text, _, _ in ZERO_ANSWERS])
         self.aim = QComboBox()
-        self.aim.addItems([text for text, _ in _AIMS])
+        self.aim.addItems([text for text, _ in AIMS])
         self.low, self.high = QLineEdit(), QLineEdit()
         self._problem = QLabel()
         self._problem.setWordWrap(True)
@@ -108,14 +107,14 @@ class MeasureDialog(QDialog):
         self.title.setText(" and ".join(measure.title for measure in ready))
         self.title.setEnabled(not is_pair)
         self.unit.setText(first.unit)
-        kinds = [(kind, missed) for _, kind, missed in _ZERO_ANSWERS]
+        kinds = [(kind, missed) for _, kind, missed in ZERO_ANSWERS]
         kind = "amount" if first.kind == "count" else first.kind
         self.zero.setCurrentIndex(kinds.index((kind, first.missed)))
-        self.aim.setCurrentIndex([aim for _, aim in _AIMS].index(first.aim))
+        self.aim.setCurrentIndex([aim for _, aim in AIMS].index(first.aim))
         self._show_range()
 
     def _show_range(self) -> None:
-        wants_range = _AIMS[self.aim.currentIndex()][1] == "range"
+        wants_range = AIMS[self.aim.currentIndex()][1] == "range"
         for row in (4, 5):
             self._form.setRowVisible(row, wants_range)
 
@@ -126,8 +125,8 @@ class MeasureDialog(QDialog):
         if len(ready) == 1 and not title:
             self.title.setFocus()
             return "Give the measure a name, such as Walking."
-        _, kind, missed = _ZERO_ANSWERS[self.zero.currentIndex()]
-        aim = _AIMS[self.aim.currentIndex()][1]
+        _, kind, missed = ZERO_ANSWERS[self.zero.currentIndex()]
+        aim = AIMS[self.aim.currentIndex()][1]
         low = high = None
         if aim == "range":
             read = [read_typed(box.text().strip(), self.unit.text().strip()) for box in (self.low, self.high)]
@@ -155,58 +154,6 @@ class MeasureDialog(QDialog):
         return ""
 
 
-class ChangeDialog(QDialog):
-    """What changed, on which day, and how many days it needs to settle in."""
-
-    def __init__(
-        self, day: date, measures: list[Measure], parent: QWidget | None = None, change: Change | None = None
-    ) -> None:
-        super().__init__(parent)
-        self.setWindowTitle("Edit the change" if change else "Mark a change")
-        self._change = change
-        self.label = QLineEdit(change.label if change else "")
-        self.label.setPlaceholderText("for example: off the bus one stop early")
-        self.day = DayBox(change.day if change else day)
-        self.settle = QSpinBox()
-        self.settle.setRange(0, 365)
-        self.settle.setValue(change.settle_days if change else 0)
-        self.settle.setToolTip("Days from the change on, shown but not counted. 1 leaves just the day out.")
-        self.concerns = QComboBox()
-        self.concerns.addItem("every measure", ())
-        for measure in measures:
-            self.concerns.addItem(f"only {measure.title}", (measure.id,))
-        if change:
-            self.concerns.setCurrentIndex(max(0, self.concerns.findData(change.measures)))
-        form = QFormLayout()
-        form.addRow("What changed?", self.label)
-        form.addRow("First day", self.day)
-        form.addRow("Settling-in days", self.settle)
-        if len(measures) > 1:
-            form.addRow("It concerns", self.concerns)
-        buttons = QDialogButtonBox(QDialogButtonBox.StandardButton.Ok | QDialogButtonBox.StandardButton.Cancel)
-        buttons.button(QDialogButtonBox.StandardButton.Ok).setText("Keep" if change else "Mark")
-        buttons.accepted.connect(self.accept)
-        buttons.rejected.connect(self.reject)
-        layout = QVBoxLayout(self)
-        layout.addLayout(form)
-        layout.addWidget(buttons)
-        self.setMinimumWidth(420)
-        self.label.setFocus()
-
-    @property
-    def chosen(self) -> Change:
-        """What was filled in; the id is that of the change edited, else 0."""
-        concerns = self.concerns.currentData()
-        return Change(
-            self._change.id if self._change else 0,
-            self.day.chosen,
-            self.label.text().strip(),
-            self._change.why if self._change else None,
-            self.settle.value(),
-            tuple(concerns or ()),
-        )
-
-
 class DayBox(QDateEdit):
     """A day, typed or picked; the month is a word."""
 
@@ -215,6 +162,10 @@ class DayBox(QDateEdit):
         self.setDisplayFormat("d MMM yyyy")
         self.setCalendarPopup(True)
         self.setDateRange(QDate(1900, 1, 1), QDate(2199, 12, 31))
+
+    def choose(self, day: date) -> None:
+        """Put a day into the box."""
+        self.setDate(QDate(day.year, day.month, day.day))
 
     @property
     def chosen(self) -> date:

@@ -11,8 +11,6 @@ from PySide6.QtGui import QCloseEvent
 from PySide6.QtWidgets import QApplication, QDialog, QMainWindow, QMessageBox, QStackedWidget, QWidget
 
 from analysis.log import Period
-from desktop.edits.changes import edit_change, mark_change, remove_change
-from desktop.edits.days import put_back, set_aside
 from desktop.edits.measures import add_measures
 from desktop.errors import DayfenceError, StorageError
 from desktop.models.days_table import DaysTable, Unlikely
@@ -20,14 +18,9 @@ from desktop.models.ready_made import make_sample, new_person
 from desktop.models.session import Session
 from desktop.screens.bring_in_dialog import BringInDialog, read_with_questions
 from desktop.screens.days_pane import DaysPane
-from desktop.screens.dialogs import (
-    ChangeDialog,
-    MeasureDialog,
-    ask_day,
-    ask_if_right,
-    ask_reason,
-)
+from desktop.screens.dialogs import MeasureDialog, ask_day, ask_if_right
 from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_journal, ask_table
+from desktop.screens.log_commands import LogCommands
 from desktop.screens.menus import Menus
 from desktop.screens.settings import TEXT_SIZES, Settings
 from desktop.screens.start_screen import StartScreen
@@ -61,6 +54,7 @@ class MainWindow(QMainWindow):
         self._pages.addWidget(self.start_screen)
         self._pages.addWidget(self.workspace)
         self.setCentralWidget(self._pages)
+        self.log = LogCommands(self)
         self._menus = Menus(self)
         self._connect()
         self._clock = QTimer(self)
@@ -163,55 +157,6 @@ class MainWindow(QMainWindow):
 
     # The log.
 
-    def mark_change(self) -> None:
-        """Mark a change on the current day."""
-        session = self.session
-        if session is None:
-            return
-        dialog = ChangeDialog(self._current_day(session), session.journal.columns(), self)
-        if dialog.exec() == QDialog.DialogCode.Accepted:
-            chosen = dialog.chosen
-            edit = mark_change(
-                session.journal,
-                session.ids,
-                chosen.day,
-                chosen.label,
-                settle_days=chosen.settle_days,
-                measures=chosen.measures,
-            )
-            session.do(edit)
-
-    def edit_change(self, number: int) -> None:
-        """Edit a change by its id."""
-        session = self.session
-        if session is None:
-            return
-        change = session.journal.changes[number]
-        dialog = ChangeDialog(change.day, session.journal.columns(), self, change)
-        if dialog.exec() == QDialog.DialogCode.Accepted:
-            session.do(edit_change(session.journal, dialog.chosen))
-
-    def remove_change(self, number: int) -> None:
-        """Take a change away by its id; Undo puts it back."""
-        if self.session is not None:
-            self.session.do(remove_change(self.session.journal, number))
-
-    def set_day_aside(self) -> None:
-        """Set the current day aside with a reason, or put it back."""
-        session = self.session
-        if session is None:
-            return
-        index = self.workspace.days.currentIndex()
-        measure = self.workspace.days.days.measure(index.column()) if index.isValid() else None
-        day = self._current_day(session)
-        entry = session.journal.entry(measure.id, day) if measure is not None else None
-        if measure is None or entry is None or entry.value is None:
-            self.say("There is no value on this day to set aside.")
-        elif entry.kind == "set aside":
-            session.do(put_back(session.journal, measure.id, day))
-        elif (reason := ask_reason(self)) is not None:
-            session.do(set_aside(session.journal, measure.id, day, reason))
-
     def go_to_today(self) -> None:
         """Make today current."""
         if self.session is not None:
@@ -222,7 +167,7 @@ class MainWindow(QMainWindow):
         session = self.session
         if session is None:
             return
-        day = ask_day(self, "Go to a day", self._current_day(session))
+        day = ask_day(self, "Go to a day", self.current_day(session))
         if day is not None:
             self.workspace.days.days.show_from(day - timedelta(7))
             self._go_to(min(day, session.today))
@@ -294,6 +239,8 @@ class MainWindow(QMainWindow):
         self.start_screen.sample_wanted.connect(self.open_sample)
         self.workspace.days.said.connect(self.say)
         self.workspace.chart_pane.period_chosen.connect(self.choose_period)
+        self.workspace.gap.none_meant.connect(self.log.gap_was_none)
+        self.workspace.gap.not_known.connect(self.log.gap_is_not_known)
         self.workspace.status.try_again_wanted.connect(self._try_again)
         self.workspace.status.give_up_wanted.connect(self._give_up)
 
@@ -403,7 +350,8 @@ class MainWindow(QMainWindow):
         self.workspace.days.go_to_row(self.workspace.days.days.row(day))
         self.workspace.days.setFocus()
 
-    def _current_day(self, session: Session) -> date:
+    def current_day(self, session: Session) -> date:
+        """The day under the hand that types, else today."""
         index = self.workspace.days.currentIndex()
         return self.workspace.days.days.day(index.row()) if index.isValid() else session.today
 

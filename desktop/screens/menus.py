@@ -10,12 +10,14 @@ from PySide6.QtGui import QAction, QActionGroup, QKeySequence
 from PySide6.QtWidgets import QMenu
 
 from analysis.log import PERIODS
+from desktop.edits.days import EmptyKind
 from desktop.screens.chart_pane import PERIOD_WORDS
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
 from desktop.wording.acts import act_phrase
 from desktop.wording.days import full_day
 
 if TYPE_CHECKING:
+    from desktop.screens.log_commands import LogCommands
     from desktop.screens.main_window import MainWindow
 
 Keys = QKeySequence.StandardKey
@@ -77,17 +79,33 @@ class Menus:
         self._writing.append(_add(edit, "&Paste days", window.workspace.days.paste))
 
     def _fill_log(self, log: QMenu) -> None:
-        window = self._window
-        self._writing += [
-            _add(log, "&Add a measure…", window.start_log, "Ctrl+Shift+A"),
-            _add(log, "&Mark a change…", window.mark_change, "Ctrl+M"),
-            _add(log, "&Set the day aside, or put it back…", window.set_day_aside, "Ctrl+D"),
-        ]
-        changes = log.addMenu("&Changes")
+        window, commands = self._window, self._window.log
+        self._writing.append(_add(log, "&Add a measure…", window.start_log, "Ctrl+Shift+A"))
+        mark = _add(log, "&Mark a change…", commands.mark_change, "Ctrl+M")
+        name = _add(log, "&Name days…", commands.name_days, "Ctrl+Shift+D")
+        aside = _add(log, "&Set the day aside, or put it back…", commands.set_day_aside, "Ctrl+D")
+        kinds = log.addMenu("The chosen &days were")
+        self._writing += [mark, name, aside, kinds.menuAction(), *fill_kinds(kinds, commands)]
+        # The same by the other mouse button on the table, or by the menu key.
+        window.workspace.days.offered = [mark, name, aside, kinds.menuAction()]
+        changes, spans = log.addMenu("&Changes"), log.addMenu("Days with a na&me")
         changes.aboutToShow.connect(partial(self._list_changes, changes))
+        spans.aboutToShow.connect(partial(self._list_spans, spans))
+        log.addSeparator()
+        self._writing += [
+            _add(log, "Settings of this m&easure…", commands.measure_settings, "Ctrl+E"),
+            _add(log, "Move the column &left", partial(commands.move_measure, -1), "Ctrl+Shift+Left"),
+            _add(log, "Move the column &right", partial(commands.move_measure, 1), "Ctrl+Shift+Right"),
+            _add(log, "&Put this measure away", commands.archive_measure),
+            _add(log, "Remove this measure…", commands.remove_measure),
+        ]
+        away = log.addMenu("Measures put a&way")
+        away.aboutToShow.connect(partial(self._list_put_away, away))
         log.addSeparator()
         self._reading += [
             changes.menuAction(),
+            spans.menuAction(),
+            away.menuAction(),
             _add(log, "Go to &today", window.go_to_today, "Ctrl+T"),
             _add(log, "&Go to a day…", window.go_to_day, "Ctrl+G"),
         ]
@@ -122,8 +140,32 @@ class Menus:
             menu.addAction("No change is marked yet").setEnabled(False)
         for change in changes:
             one = menu.addMenu(f"{full_day(change.day)}: {change.label or 'no label'}")
-            _add(one, "Edit…", partial(self._window.edit_change, change.id))
-            _add(one, "Remove", partial(self._window.remove_change, change.id))
+            _add(one, "Edit…", partial(self._window.log.edit_change, change.id))
+            _add(one, "Remove", partial(self._window.log.remove_change, change.id))
+
+    def _list_spans(self, menu: QMenu) -> None:
+        menu.clear()
+        session = self._window.session
+        spans = sorted(session.journal.spans.values(), key=lambda one: one.first) if session else []
+        if not spans:
+            menu.addAction("No days have a name yet").setEnabled(False)
+        for span in spans:
+            days = (
+                f"{full_day(span.first)} to {full_day(span.last)}"
+                if span.last > span.first
+                else full_day(span.first)
+            )
+            one = menu.addMenu(f"{days}: {span.label or span.kind}")
+            _add(one, "Take the name away", partial(self._window.log.remove_span, span.id))
+
+    def _list_put_away(self, menu: QMenu) -> None:
+        menu.clear()
+        session = self._window.session
+        away = [one for one in session.journal.measures.values() if one.archived] if session else []
+        if not away:
+            menu.addAction("No measure is put away").setEnabled(False)
+        for measure in away:
+            _add(menu, f"Bring back {measure.title}", partial(self._window.log.bring_back_measure, measure.id))
 
     def _list_measures(self, menu: QMenu) -> None:
         menu.clear()
@@ -144,6 +186,17 @@ def _copy_chart(window: MainWindow) -> None:
     from desktop.screens.page_dialog import copy_chart
 
     copy_chart(window)
+
+
+def fill_kinds(menu: QMenu, commands: LogCommands) -> list[QAction]:
+    """Offer every kind of day that holds no value; each with the letter that says it in a cell."""
+    kinds: tuple[tuple[str, EmptyKind], ...] = (
+        ("&Rest days\tr", "rest"),
+        ("&Ill\ti", "ill"),
+        ("&Away or paused\ta", "away"),
+        ("&Not known", "blank"),
+    )
+    return [_add(menu, words, partial(commands.set_kind, kind)) for words, kind in kinds]
 
 
 def _add(menu: QMenu, text: str, do: Callable[[], object], keys: Keys | str | None = None) -> QAction:

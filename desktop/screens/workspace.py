@@ -10,6 +10,7 @@ from desktop.models.session import Session
 from desktop.screens.chart_pane import ChartPane
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.findings_pane import FindingsPane
+from desktop.screens.gap_bar import GapBar
 from desktop.screens.status_line import StatusLine
 from desktop.screens.theme import PLAIN_SIZE
 
@@ -29,6 +30,7 @@ class Workspace(QWidget):
         self.chart_pane = ChartPane()
         self.findings = FindingsPane()
         self.status = StatusLine()
+        self.gap = GapBar()
         self._title, self._subtitle = QLabel(), QLabel()
         top = QHBoxLayout()
         top.setContentsMargins(14, 8, 14, 6)
@@ -50,6 +52,7 @@ class Workspace(QWidget):
         layout.setContentsMargins(0, 0, 0, 0)
         layout.setSpacing(0)
         layout.addLayout(top)
+        layout.addWidget(self.gap)
         layout.addWidget(self.panes, 1)
         layout.addWidget(self.status)
 
@@ -90,6 +93,7 @@ class Workspace(QWidget):
             unit = f"{unit} a day"
         self._subtitle.setText("  ·  ".join(part for part in (unit, session.journal.person.name) if part))
         self.status.show_session(session)
+        self.gap.follow(session)
 
     def show_review(self, session: Session) -> None:
         """Draw and tell the session's review."""

@@ -93,10 +93,18 @@ class MovedTeller(Teller):
                 return "This log cannot tell if it moved."
             case "leaning" if self._is_slope:
                 return f"It was moving all along, by about {self._slope_told()}."
+            case "leaning" if self._is_faded:
+                return "It may have moved at first. If so, it has gone back."
             case "leaning":
                 return f"It may have moved: {self._levels()}"
+            case _ if self._is_faded:
+                return "It moved at first, and has gone back since."
             case _:
                 return f"It moved: {self._levels()}"
+
+    @property
+    def _is_faded(self) -> bool:
+        return self.answer.still is not None and self.answer.still.state == "faded"
 
     @property
     def _is_slope(self) -> bool:

@@ -1,11 +1,12 @@
 """How days become observations."""
 
+from dataclasses import replace
 from datetime import date, timedelta
 
 import numpy as np
 import pytest
 
-from analysis import Change, Log, Measure, review
+from analysis import Change, Log, Measure, Span, review
 from analysis.points import period_firsts, period_keys, points_of
 from tests.builders import FIRST_DAY, day, log_of, number
 
@@ -17,6 +18,15 @@ def kinds_log(kinds_and_values, **measure):
         [float("nan") if value is None else value for _, value in kinds_and_values],
         [kind for kind, _ in kinds_and_values],
     )
+
+
+def test_days_of_a_span_of_illness_or_absence_are_in_no_number():
+    spans = [Span(day(3), day(5), "ill", "a cold"), Span(day(8), day(9), "device", "new watch")]
+    log = log_of([20, 30, 25, 5, None, 6, 28, None, 31, 22], missed="zero", kind="amount")
+    points = points_of(replace(log, spans=tuple(spans)))
+    assert np.flatnonzero(~points.known).tolist() == [3, 4, 5]
+    assert points.values[7] == 0
+    assert points.values[8] == 31
 
 
 def test_a_blank_stays_blank():

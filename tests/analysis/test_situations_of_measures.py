@@ -34,11 +34,10 @@ def test_a_change_after_the_best_spell_is_told_when_it_went_worse_since():
     assert "The change came after the highest week of 8. Some way back would likely have come anyway." in said
 
 
-def test_a_baseline_from_memory_in_one_evening_holds_an_answer_at_leaning():
+def test_a_baseline_typed_afterwards_is_named_since_nobody_else_can_tell_a_diary_from_memory():
     kinds = ["late"] * 14 + ["value"] * 28
     answer, said = told(days(35, 14, 20, 1) + days(36, 28, 34, 6), 14, kinds=kinds, kind="amount", unit="minutes")
-    assert doubts(answer)["late_entries"]
-    assert answer.answer.sureness == "leaning"
+    assert "late_entries" in doubts(answer)
     assert "14 of 42 days were typed days afterwards." in said
 
 

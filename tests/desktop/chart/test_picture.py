@@ -203,7 +203,7 @@ def test_the_lane_names_the_stretches_and_the_spans():
     spans = [Span(1, day(3), day(5), "ill", "cold"), Span(2, day(20), day(20), "away")]
     lane = [(part.kind, part.text, part.x0, part.x1) for part in drawn(LOW + HIGH, 14, spans=spans).lane]
     assert lane == [
-        ("stretch", "baseline, 14 days", number(0) - 0.5, CHANGE - 0.5),
+        ("stretch", "baseline, 11 days", number(0) - 0.5, CHANGE - 0.5),
         ("change", "off the bus one stop early", CHANGE - 0.5, number(27) + 0.5),
         ("span", "cold", number(3) - 0.5, number(5) + 0.5),
         ("span", "away", number(20) - 0.5, number(20) + 0.5),

@@ -9,7 +9,7 @@ from desktop.edits.changes import edit_change, mark_change, mark_span, remove_ch
 from desktop.edits.edit import Edit
 from desktop.edits.ids import Ids
 from desktop.journal.journal import Journal
-from desktop.journal.records import Change, Person, Span
+from desktop.journal.records import Change, Measure, Person, Span
 from desktop.journal.row_change import RowChange
 
 FIRST, LAST = date(2026, 3, 1), date(2026, 3, 9)
@@ -31,6 +31,16 @@ def test_editing_a_change() -> None:
     assert edit_change(JOURNAL, CHANGE) == Edit("edit change", ())
     with pytest.raises(KeyError):
         edit_change(JOURNAL, replace(CHANGE, id=4))
+
+
+def test_what_was_agreed_with_a_change_is_one_act_with_it() -> None:
+    measure = Measure(1, 0, "Walking", "minutes")
+    agreed = replace(measure, worth=10.0, look_day=LAST)
+    journal = Journal.of([Person("0" * 32), measure, CHANGE])
+    edit = mark_change(journal, Ids({"change": 3}), FIRST, "more", agreed=agreed)
+    assert edit.changes == (RowChange(None, Change(4, FIRST, "more")), RowChange(measure, agreed))
+    assert edit_change(journal, CHANGE, agreed).changes == (RowChange(measure, agreed),)
+    assert not edit_change(journal, CHANGE, measure)
 
 
 def test_removing_a_change() -> None:

@@ -9,7 +9,14 @@ import pytest
 from desktop.edits.edit import Edit
 from desktop.edits.history import undo_edit
 from desktop.edits.ids import Ids
-from desktop.edits.measures import add_measures, archive_measure, remove_measure, set_measure
+from desktop.edits.measures import (
+    add_measures,
+    archive_measure,
+    convert_measure,
+    move_measure,
+    remove_measure,
+    set_measure,
+)
 from desktop.edits.person import set_person
 from desktop.journal.journal import Journal
 from desktop.journal.records import Change, Entry, Measure, Person, Plan, Span
@@ -136,3 +143,40 @@ def test_whose_journal_it_is() -> None:
     assert set_person(journal, name="Bo").changes[0].after == replace(PERSON, name="Bo")
     assert not set_person(journal)
     assert not set_person(journal, name="Ana", question="Does it help?")
+
+
+def test_another_unit_turns_every_number_over_as_one_act() -> None:
+    weight = Measure(1, 0, "Weight", "kg", likely_low=25.0, likely_high=300.0, worth=2.0, decimals=1)
+    aside = Entry(1, DAY, "am", value=70.5, kind="set aside", note="shoes on", original="70,5")
+    journal = Journal.of(
+        [PERSON, weight, Entry(1, DAY, value=80.0, original="80"), aside, Entry(1, DAY, "pm", kind="ill")]
+    )
+    edit = convert_measure(journal, replace(weight, unit="lb"), 1 / 0.45359237, 0.0)
+    journal.apply(edit.changes)
+    assert edit.act == "set measure"
+    assert journal.measures[1].unit == "lb"
+    assert journal.measures[1].worth == pytest.approx(4.40924524)
+    assert (journal.measures[1].likely_low, journal.measures[1].goal_low) == (pytest.approx(55.1155655), None)
+    assert journal.entry(1, DAY).value == 176.36981
+    assert replace(journal.entry(1, DAY, "am"), value=70.5) == aside
+    assert journal.entry(1, DAY, "pm") == Entry(1, DAY, "pm", kind="ill")
+
+
+def test_a_zero_is_none_of_another_scale() -> None:
+    measure = Measure(1, 0, "Chill", "°C", kind="amount", worth=1.0)
+    journal = Journal.of([PERSON, measure, Entry(1, DAY, value=0.0, kind="zero")])
+    journal.apply(convert_measure(journal, replace(measure, unit="°F"), 1.8, 32.0).changes)
+    assert (journal.entry(1, DAY).value, journal.entry(1, DAY).kind) == (32.0, "value")
+    assert journal.measures[1].worth == 1.8
+
+
+def test_columns_change_places_with_their_neighbours() -> None:
+    first, hidden, second = Measure(1, 0, "a"), Measure(2, 1, "b", archived=True), Measure(3, 2, "c")
+    journal = Journal.of([PERSON, first, hidden, second])
+    journal.apply(move_measure(journal, 1, 1).changes)
+    assert [measure.id for measure in journal.columns()] == [3, 1]
+    assert not move_measure(journal, 1, 1)
+    assert not move_measure(journal, 3, -1)
+    assert not move_measure(journal, 2, 1)
+    with pytest.raises(KeyError):
+        move_measure(journal, 9, 1)

@@ -2,7 +2,7 @@
 
 import pytest
 
-from desktop.exchange.units import convert_time, impossible, known_unit, unit_in_name
+from desktop.exchange.units import conversion, convert_time, impossible, known_unit, unit_in_name
 
 
 @pytest.mark.parametrize(
@@ -57,3 +57,25 @@ def test_only_minutes_and_hours_are_converted(value, unit, wanted, result):
 )
 def test_what_cannot_be_is_told(value, unit, one_day, reason):
     assert impossible(value, unit, one_day=one_day) == reason
+
+
+@pytest.mark.parametrize(
+    ("value", "unit", "wanted", "is_then"),
+    [
+        (80, "kg", "lb", 176.3698),
+        (12.5, "stone", "kg", 79.3787),
+        (2.5, "hours", "minutes", 150),
+        (5, "miles", "km", 8.04672),
+        (98.6, "°F", "celsius", 37),
+        (37, "°C", "°F", 98.6),
+        (100, "kcal", "kJ", 418.4),
+    ],
+)
+def test_a_number_is_turned_into_another_unit_of_its_kind(value, unit, wanted, is_then):
+    factor, offset = conversion(unit, wanted)
+    assert factor * value + offset == pytest.approx(is_then, abs=1e-4)
+
+
+@pytest.mark.parametrize(("unit", "wanted"), [("kg", "kilograms"), ("kg", "minutes"), ("beans", "kg"), ("", "")])
+def test_no_number_is_turned_where_no_conversion_is_known(unit, wanted):
+    assert conversion(unit, wanted) is None
