@@ -29,6 +29,7 @@ Act = Literal[
     "remove span",
     "restore copy",
     "put earlier back",
+    "win back",
 ]
 """What the person did, as the history names it; the wording has a phrase for each."""
 

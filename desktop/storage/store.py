@@ -87,7 +87,7 @@ class Store:
         step = Step(1, _text_of(clock()), "do", "start journal", None, changes)
 
         def fill(connection: sqlite3.Connection) -> None:
-            _append(connection, step, Position(), path)
+            append_step(connection, step, Position(), path)
 
         create_file(path, fill)
         return cls.open(path, clock=clock, alone=alone)
@@ -181,7 +181,7 @@ class Store:
         with self._database.writing() as connection:
             if position(connection) != self._last:
                 raise StorageError("stale", path=str(self.path))
-            last = _append(connection, step, self._last, self.path)
+            last = append_step(connection, step, self._last, self.path)
         self._last = last
         return step
 
@@ -206,7 +206,7 @@ class Store:
                 rows.append(row)
             newest_first.close()
         try:
-            return [_step(list(group)) for _, group in groupby(reversed(rows), key=lambda row: row.step)]
+            return [step_of(list(group)) for _, group in groupby(reversed(rows), key=lambda row: row.step)]
         except (ValueError, TypeError) as error:
             raise damaged(self.path, "a row of the history is not a record") from error
 
@@ -267,7 +267,7 @@ class Store:
         self.close()
 
 
-def _append(connection: sqlite3.Connection, step: Step, last: Position, path: Path) -> Position:
+def append_step(connection: sqlite3.Connection, step: Step, last: Position, path: Path) -> Position:
     """Make the changes of a step and note them, inside the caller's transaction."""
     for change in step.changes:
         table = table_of(change.record)
@@ -317,7 +317,13 @@ def _make(
         connection.execute(table.update, (*after, *key))
 
 
-def _step(rows: list[HistoryRow]) -> Step:
+def step_of(rows: list[HistoryRow]) -> Step:
+    """The step that these rows are, all of them.
+
+    Raises:
+        ValueError: a row is not of records.
+        TypeError: as above.
+    """
     first = rows[0]
     changes = tuple(row.change() for row in rows)
     return Step(first.step, first.at, first.kind, first.act, first.of, changes)

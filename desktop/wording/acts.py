@@ -32,13 +32,14 @@ _PHRASES: dict[Act, str] = {
     "remove span": "the removed named days",
     "restore copy": "the earlier copy put in place",
     "put earlier back": "the earlier value put back",
+    "win back": "the days won back",
 }
 """For acts whose records say no more."""
 
 
 def act_phrase(step: Step, journal: Journal) -> str:
     """What a step did: ``30 minutes on 4 May``, ``the change “earlier bus”``, ``12 days of the pasted block``."""
-    if step.act == "restore copy":
+    if step.act in ("restore copy", "win back"):
         return _PHRASES[step.act]
     if len(step.changes) > 1 and step.act in ("paste values", "bring in table", "clear values"):
         entries = sum(isinstance(change.record, Entry) for change in step.changes)
