@@ -14,6 +14,7 @@ from analysis.log import Period
 from desktop.edits.measures import add_measures
 from desktop.errors import DayfenceError, StorageError
 from desktop.models.days_table import DaysTable, Unlikely
+from desktop.models.keeping import Keeping
 from desktop.models.ready_made import make_sample, new_person
 from desktop.models.session import Session
 from desktop.screens.bring_in_dialog import BringInDialog, read_with_questions
@@ -29,7 +30,7 @@ from desktop.screens.theme import ThemeName, apply_theme, is_dark
 from desktop.screens.workspace import Workspace
 from desktop.storage.store import Store
 from desktop.wording.numbers import count
-from desktop.wording.problems import problem_sentence
+from desktop.wording.problems import not_copied_sentence, problem_sentence
 
 _CLOCK_LOOK = 60_000
 """Milliseconds between two looks at the calendar."""
@@ -45,6 +46,7 @@ class MainWindow(QMainWindow):
         super().__init__(parent)
         self.folder = folder
         self.session: Session | None = None
+        self.keeping: Keeping | None = None
         self._now = now
         self.settings = Settings(folder)
         self.setWindowTitle("Dayfence")
@@ -273,6 +275,9 @@ class MainWindow(QMainWindow):
         self._follow_session()
         session.make_review()
         self.workspace.days.setFocus()
+        self.keeping = Keeping(session, self.settings.copies_place, session)
+        self.keeping.not_copied.connect(self._say_not_copied)
+        self.keeping.begin()
         return session
 
     def _let_go(self) -> bool:
@@ -292,6 +297,9 @@ class MainWindow(QMainWindow):
                 return False
         self.session = None
         self.workspace.days.setModel(None)
+        if self.keeping is not None:
+            self.keeping.close()
+        self.keeping = None
         session.close()
         session.deleteLater()
         return True
@@ -376,6 +384,9 @@ class MainWindow(QMainWindow):
         """After midnight a new today is there, but not under someone who is typing."""
         if self.session is not None and self.workspace.days.state() != DaysPane.State.EditingState:
             self.workspace.days.days.start_today()
+
+    def _say_not_copied(self, error: DayfenceError) -> None:
+        self.say(not_copied_sentence(error))
 
     def _warn(self, error: DayfenceError) -> None:
         QMessageBox.warning(self, "Dayfence", problem_sentence(error))

@@ -12,6 +12,7 @@ from PySide6.QtWidgets import QMenu
 from analysis.log import PERIODS
 from desktop.edits.days import EmptyKind
 from desktop.screens.chart_pane import PERIOD_WORDS
+from desktop.screens.earlier_copies import show_earlier_copies
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
 from desktop.wording.acts import act_phrase
 from desktop.wording.days import full_day
@@ -64,6 +65,8 @@ class Menus:
         file.addSeparator()
         _add(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")
         self._reading.append(_add(file, "The &page…", partial(_show_page, window), Keys.Print))
+        file.addSeparator()
+        self._reading.append(_add(file, "&Earlier copies…", partial(show_earlier_copies, window)))
         file.addSeparator()
         _add(file, "&Quit", window.close, Keys.Quit)
 

@@ -58,7 +58,7 @@ def test_a_log_is_started_answered_and_there_again_after_a_restart(desk, tmp_pat
     desk.presses("ctrl+q")
     assert ends_well(program)
     assert desk.reviewed() == shown
-    assert [path.name for path in desk.journal.parent.glob("journal*")] == ["journal.dayfence"]
+    assert [path.name for path in desk.journal.parent.glob("journal*.*")] == ["journal.dayfence"]
 
     program = desk.starts_the_program()
     # Today is current again: a value typed now is the last day's, and can be taken back.
