@@ -17,10 +17,15 @@ _TRIES = 5
 
 
 class Alone:
-    """Holds a journal for one window."""
+    """Holds a journal for one window.
 
-    def __init__(self, lock: Path, connection: sqlite3.Connection) -> None:
+    Attributes:
+        was_left: the window before did not let go by itself: it was killed, or the power went.
+    """
+
+    def __init__(self, lock: Path, connection: sqlite3.Connection, was_left: bool) -> None:
         """Of a lock that is held; use :meth:`hold`."""
+        self.was_left = was_left
         self._lock = lock
         self._connection = connection
 
@@ -41,8 +46,9 @@ class Alone:
         for _ in range(_TRIES):
             try:
                 os.close(os.open(lock, os.O_CREAT | os.O_EXCL | os.O_WRONLY, 0o600))
+                was_left = False
             except FileExistsError:
-                pass
+                was_left = True
             except OSError:
                 return None
             before = _number(lock)
@@ -54,7 +60,7 @@ class Alone:
                 continue
             # The window before may have taken its file away between our opening it and locking it.
             if before is not None and _number(lock) == before:
-                return cls(lock, connection)
+                return cls(lock, connection, was_left)
             connection.close()
         return None
 

@@ -133,6 +133,11 @@ class Store:
         return self._database.read_only
 
     @property
+    def ended_abruptly(self) -> bool:
+        """Whether the window that had it alone before was cut short."""
+        return self._alone is not None and self._alone.was_left
+
+    @property
     def last_step_number(self) -> int:
         """Number of the last step seen or written."""
         return self._last.step

@@ -76,6 +76,7 @@ def test_it_is_free_again_after_its_holder_was_killed(store: Store, path: Path, 
             first.send_signal(how)
     assert names(path.parent) == [f".{path.name}.lock", path.name]
     with Store.open(path, alone=True) as opened:
+        assert opened.ended_abruptly
         assert stat.S_IMODE((path.parent / f".{path.name}.lock").stat().st_mode) == 0o600
         opened.write("put value", added(minutes(1)))
     assert names(path.parent) == [path.name]
@@ -83,7 +84,10 @@ def test_it_is_free_again_after_its_holder_was_killed(store: Store, path: Path, 
 
 def test_a_new_journal_is_held_from_its_start(journal_folder: Path) -> None:
     path = journal_folder / "log"
-    with Store.create(path, PERSON, alone=True), window(path) as second:
+    with Store.create(path, PERSON, alone=True) as made:
+        assert not made.ended_abruptly
+    with Store.open(path, alone=True) as opened, window(path) as second:
+        assert not opened.ended_abruptly
         assert says(second) == "open already"
         second.communicate()
     assert names(journal_folder) == ["log"]
