@@ -8,10 +8,10 @@ from dataclasses import dataclass
 from datetime import date, datetime
 from functools import partial
 
-from PySide6.QtCore import QObject, Signal
+from PySide6.QtCore import QObject, QTimer, Signal
 
 import analysis
-from analysis import Log, Review
+from analysis import Choice, Log, Review, other_choices
 from analysis.log import Period
 from desktop.edits.edit import Edit
 from desktop.edits.history import STEPS_KEPT, UndoHistory, redo_edit, undo_edit
@@ -32,6 +32,10 @@ _AT_ONCE = 1_000
 """Reviews of up to this many entries are quicker than a frame and are made at once."""
 
 
+_QUIET = 400
+"""Milliseconds without a new review before other choices of days are looked at."""
+
+
 class Session(QObject):
     """The journal in memory, the store it is written to, and the review of the measure on the chart.
 
@@ -44,6 +48,7 @@ class Session(QObject):
         save_failed: a write failed with this error; nothing was written since.
         measure_chosen: another measure is on the chart.
         reviewed: the review of the measure on the chart is new.
+        weighed: the answers for other choices of days are there, a moment after the review they belong to.
     """
 
     edited = Signal(tuple)
@@ -51,6 +56,7 @@ class Session(QObject):
     save_failed = Signal(object)
     measure_chosen = Signal(int)
     reviewed = Signal(object)
+    weighed = Signal(tuple)
 
     def __init__(
         self, store: Store, *, now: Callable[[], datetime] = datetime.now, parent: QObject | None = None
@@ -73,6 +79,11 @@ class Session(QObject):
         self._blocked: Exception | None = None
         self._others = OtherMeasures()
         self._generation = 0
+        self._asked: _Question | None = None
+        self._weigh_later = QTimer(self)
+        self._weigh_later.setSingleShot(True)
+        self._weigh_later.setInterval(_QUIET)
+        self._weigh_later.timeout.connect(self._weigh)
         self._closed = False
         columns = self.journal.columns()
         self.measure: int | None = columns[0].id if columns else None
@@ -174,6 +185,7 @@ class Session(QObject):
         self._generation += 1
         measure = self.current
         if measure is None:
+            self._asked = None
             self._receive_review(self._generation, None)
             return
         log = self.journal.log_of(measure.id, self.period)
@@ -188,6 +200,7 @@ class Session(QObject):
             self._others.known(beside),
             unknown,
         )
+        self._asked = question
         if len(log) + sum(len(other) for _, other, _ in unknown) <= _AT_ONCE:
             self._receive_answer(self._generation, question.answer())
             return
@@ -260,7 +273,23 @@ class Session(QObject):
     def _receive_review(self, generation: int, review: Review | None) -> None:
         if generation == self._generation and not self._closed:
             self.review = review
+            self._weigh_later.start()
             self.reviewed.emit(review)
+
+    def _weigh(self) -> None:
+        """Ask for the answers of other choices of days, off the screen's thread."""
+        if self._asked is None or self.review is None or self._closed:
+            return
+        question, review, generation = self._asked, self.review, self._generation
+
+        def ask_others() -> list[Choice]:
+            return other_choices(review, question.log, question.changes, question.today)
+
+        def receive(choices: list[Choice]) -> None:
+            if generation == self._generation and not self._closed:
+                self.weighed.emit(tuple(choices))
+
+        self._reviewer.run(ask_others, receive, _raise)
 
 
 Chances = dict[int, float | None]

@@ -5,7 +5,7 @@ from __future__ import annotations
 from datetime import date
 from typing import cast
 
-from PySide6.QtCore import QEvent, QModelIndex, QPersistentModelIndex, Qt, Signal
+from PySide6.QtCore import QEvent, QModelIndex, QObject, QPersistentModelIndex, Qt, Signal
 from PySide6.QtGui import QAction, QContextMenuEvent, QFontMetrics, QGuiApplication, QKeyEvent, QKeySequence
 from PySide6.QtWidgets import (
     QAbstractItemDelegate,
@@ -218,6 +218,20 @@ class DaysPane(QTableView):
 
 class _CellDelegate(QStyledItemDelegate):
     """A plain line of text as editor: the model reads it, in any locale alike."""
+
+    def eventFilter(self, editor: QObject, event: QEvent) -> bool:
+        """Enter keeps what was typed at once.
+
+        Qt would keep it a moment later; the digits of a quick hand, or on a slow computer, would land in the cell
+        that was meant to be done.
+        """
+        if event.type() == QEvent.Type.KeyPress and isinstance(editor, QLineEdit):
+            key = cast(QKeyEvent, event).key()
+            if key in (Qt.Key.Key_Return, Qt.Key.Key_Enter):
+                self.commitData.emit(editor)
+                self.closeEditor.emit(editor, QAbstractItemDelegate.EndEditHint.SubmitModelCache)
+                return True
+        return super().eventFilter(editor, event)
 
     def createEditor(
         self, parent: QWidget, option: QStyleOptionViewItem, index: QModelIndex | QPersistentModelIndex

@@ -2,16 +2,19 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from html import escape
 
 from PySide6.QtCore import QEvent, QUrl
 from PySide6.QtGui import QFont, QFontInfo
 from PySide6.QtWidgets import QFrame, QLabel, QTextBrowser, QVBoxLayout, QWidget
 
-from analysis import Review
+from analysis import Choice, Review
 from desktop.screens.theme import CAUTION_INK
 from desktop.wording.cautions import CAUTION
 from desktop.wording.findings import findings_of
+from desktop.wording.telling import Section
+from desktop.wording.what_if import TITLE, what_if_sentences
 from desktop.wording.worked_out import worked_out
 
 _HOW = "how"
@@ -25,6 +28,7 @@ class FindingsPane(QWidget):
     def __init__(self, parent: QWidget | None = None) -> None:
         super().__init__(parent)
         self._review: Review | None = None
+        self._choices: Sequence[Choice] = ()
         self._shows_how = False
         self._text = QTextBrowser()
         self._text.setOpenLinks(False)
@@ -57,6 +61,13 @@ class FindingsPane(QWidget):
         """Tell a review; None where there is no measure yet."""
         if review is not self._review:
             self._review = review
+            self._choices = ()
+            self._fill()
+
+    def show_choices(self, choices: Sequence[Choice]) -> None:
+        """Tell what other choices of days would make of the answer that is told."""
+        if choices != self._choices:
+            self._choices = choices
             self._fill()
 
     def changeEvent(self, event: QEvent) -> None:
@@ -76,7 +87,8 @@ class FindingsPane(QWidget):
         told = findings_of(self._review)
         size = QFontInfo(self.font()).pixelSize()
         parts = [f'<p style="font-size:{round(size * 1.5)}px; font-weight:bold;">{escape(told.headline)}</p>']
-        for section in told.sections:
+        weighed = what_if_sentences(self._choices)
+        for section in (*told.sections, *([Section(TITLE, weighed)] if weighed else [])):
             if section.title:
                 parts.append(f'<p style="font-weight:bold; margin-bottom:0;">{escape(section.title)}</p>')
             style = "margin-top:2px; margin-bottom:6px;"

@@ -2,10 +2,10 @@
 
 from datetime import date, timedelta
 
-from PySide6.QtCore import Qt
-from PySide6.QtGui import QGuiApplication
+from PySide6.QtCore import QEvent, Qt
+from PySide6.QtGui import QGuiApplication, QKeyEvent
 from PySide6.QtTest import QTest
-from PySide6.QtWidgets import QLineEdit
+from PySide6.QtWidgets import QApplication
 
 from tests.journeys.test_first_four_weeks import FIRST, starts_a_log
 
@@ -21,9 +21,24 @@ def test_escape_leaves_a_cell_as_it_was(person):
     person.types("30⏎")
     person.goes_to(FIRST)
     person.types("99")
-    QTest.keyClick(person.days.viewport().findChild(QLineEdit), Qt.Key.Key_Escape)
+    QTest.keyClick(QApplication.focusWidget(), Qt.Key.Key_Escape)
     person.qtbot.waitUntil(lambda: person.days.state() != person.days.State.EditingState)
     assert shown(person, FIRST) == "30"
+
+
+def test_the_quickest_hand_loses_nothing(person):
+    """Every key is there before the first is looked at, as on a slow computer."""
+    person.starts_the_program()
+    starts_a_log(person)
+    person.goes_to(FIRST)
+    person._is_at_the_window()
+    for key in "12⏎0⏎26⏎21⏎":
+        code = Qt.Key.Key_Return if key == "⏎" else Qt.Key(ord(key))
+        text = "\r" if key == "⏎" else key
+        event = QKeyEvent(QEvent.Type.KeyPress, code, Qt.KeyboardModifier.NoModifier, text)
+        QApplication.postEvent(person.window.windowHandle(), event)
+    person.qtbot.waitUntil(lambda: shown(person, FIRST + timedelta(3)) == "21")
+    assert [shown(person, FIRST + timedelta(place)) for place in range(4)] == ["12", "0", "26", "21"]
 
 
 def test_tab_goes_to_the_note_and_a_note_is_kept(person):

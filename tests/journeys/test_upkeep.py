@@ -233,3 +233,18 @@ def test_the_other_mouse_button_offers_what_can_be_done_with_days(person):
     ]
     assert QApplication.activePopupWidget() is None
     assert date(2031, 3, 30) == person.window.session.today
+
+
+def test_other_choices_of_days_are_told_a_moment_after_the_answer(person):
+    window = person.starts_the_program()
+    starts_a_log(person)
+    types_days(person, BEFORE)
+    person.answers(lambda dialog: (QTest.keyClicks(dialog.label, "stairs"), presses_ok(dialog)))
+    person.holds_control_and_presses(Qt.Key.Key_M)
+    person.types("".join(f"{value}⏎" for value in AFTER))
+    person.qtbot.waitUntil(lambda: "Would another choice of days change it?" in person.findings)
+    assert "other choices." in person.findings
+    # A new value makes the old ones no longer true.
+    person.goes_to(FIRST)
+    person.types("22⏎")
+    assert "Would another choice" not in window.workspace.findings.text
