@@ -23,15 +23,19 @@ from desktop.screens.dialogs import MeasureDialog, ask_day, ask_if_right
 from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_journal, ask_table
 from desktop.screens.log_commands import LogCommands
 from desktop.screens.menus import Menus
+from desktop.screens.opening import mend, open_with_questions
 from desktop.screens.settings import TEXT_SIZES, Settings
 from desktop.screens.start_screen import StartScreen
 from desktop.screens.status_line import trouble_sentence
 from desktop.screens.theme import ThemeName, apply_theme, is_dark
 from desktop.screens.workspace import Workspace
+from desktop.storage.backups import copies_of
 from desktop.storage.store import Store
+from desktop.wording.damage import abrupt_sentence
 from desktop.wording.numbers import count
 from desktop.wording.problems import not_copied_sentence, problem_sentence
 
+_MEND_LATER = 500
 _CLOCK_LOOK = 60_000
 """Milliseconds between two looks at the calendar."""
 
@@ -76,7 +80,7 @@ class MainWindow(QMainWindow):
 
     def open_own(self) -> None:
         """Open the person's own journal when there is one; else the start screen stays."""
-        if self.own_journal.exists():
+        if self.own_journal.exists() or copies_of(self.own_journal):
             self.open_journal(self.own_journal)
 
     def open_journal(self, path: Path) -> bool:
@@ -85,14 +89,7 @@ class MainWindow(QMainWindow):
             return True
         if not self._let_go():
             return False
-        try:
-            store = Store.open(path, clock=self._now)
-        except StorageError as error:
-            self._warn(error)
-            self._follow_session()
-            return False
-        self._take(store)
-        return True
+        return self._show_opened(open_with_questions(self, path, self._now))
 
     def open_sample(self) -> None:
         """Open the sample journal, making it first where there is none."""
@@ -248,11 +245,20 @@ class MainWindow(QMainWindow):
 
     def _start_journal(self, path: Path) -> Session | None:
         try:
-            store = Store.create(path, new_person(), clock=self._now)
+            store = Store.create(path, new_person(), clock=self._now, alone=True)
         except StorageError as error:
             self._warn(error)
             return None
         return self._take(store)
+
+    def _show_opened(self, store: Store | None) -> bool:
+        if store is None:
+            self._follow_session()
+            return False
+        session = self._take(store)
+        if store.ended_abruptly:
+            self.say(abrupt_sentence(session.journal))
+        return True
 
     def _take(self, store: Store) -> Session:
         """Show a store's journal; no other is open."""
@@ -278,6 +284,7 @@ class MainWindow(QMainWindow):
         self.workspace.days.setFocus()
         self.keeping = Keeping(session, self.settings.copies_place, session)
         self.keeping.not_copied.connect(self._say_not_copied)
+        self.keeping.damaged.connect(self._mend)
         self.keeping.begin()
         return session
 
@@ -385,6 +392,23 @@ class MainWindow(QMainWindow):
         """After midnight a new today is there, but not under someone who is typing."""
         if self.session is not None and self.workspace.days.state() != DaysPane.State.EditingState:
             self.workspace.days.days.start_today()
+
+    def _mend(self) -> None:
+        """The open file was found to be damaged: close it, and show what can be read."""
+        if self.session is None:
+            return
+        if QApplication.activeModalWidget() is not None:
+            # Not in the middle of another question.
+            QTimer.singleShot(_MEND_LATER, self, self._mend)
+            return
+        path = self.session.path
+        if self._let_go():
+            store = None
+            try:
+                store = mend(self, path, self._now)
+            except StorageError as error:
+                self._warn(error)
+            self._show_opened(store)
 
     def _say_not_copied(self, error: DayfenceError) -> None:
         self.say(not_copied_sentence(error))
