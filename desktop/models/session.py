@@ -23,7 +23,7 @@ from desktop.journal.row_change import Act, Step, StepKind
 from desktop.models.background import Background
 from desktop.models.other_measures import Asked, OtherMeasures, ask
 from desktop.storage.backups import take_copy
-from desktop.storage.store import Store
+from desktop.storage.store import Held, Store
 
 _COPIED_BEFORE: frozenset[Act] = frozenset({"bring in table", "restore copy"})
 """Acts that alter much at once: the journal is copied before them."""
@@ -205,6 +205,15 @@ class Session(QObject):
             self._receive_answer(self._generation, question.answer())
             return
         self._reviewer.run(question.answer, partial(self._receive_answer, self._generation), _raise)
+
+    def tell_held(
+        self,
+        key: tuple[str | int, ...],
+        done: Callable[[list[Held]], None],
+        failed: Callable[[Exception], None],
+    ) -> None:
+        """Look up everything a key has ever held, newest first; then call ``done`` or ``failed``."""
+        self._writer.run(partial(self._store.history_of, key), done, failed)
 
     def wait_until_written(self) -> None:
         """Return when the writer has nothing left to do; for closing and for tests."""

@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Callable
 from datetime import date, datetime, timedelta
+from functools import partial
 from pathlib import Path
 
 from PySide6.QtCore import Qt, QTimer
@@ -20,6 +21,7 @@ from desktop.models.session import Session
 from desktop.screens.bring_in_dialog import BringInDialog, read_with_questions
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.dialogs import MeasureDialog, ask_day, ask_if_right
+from desktop.screens.file_commands import keep_elsewhere
 from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_journal, ask_table
 from desktop.screens.log_commands import LogCommands
 from desktop.screens.menus import Menus
@@ -31,7 +33,7 @@ from desktop.screens.theme import ThemeName, apply_theme, is_dark
 from desktop.screens.workspace import Workspace
 from desktop.storage.backups import copies_of
 from desktop.storage.store import Store
-from desktop.wording.damage import abrupt_sentence
+from desktop.wording.damage import abrupt_sentence, clock_sentence
 from desktop.wording.numbers import count
 from desktop.wording.problems import not_copied_sentence, problem_sentence
 
@@ -87,7 +89,7 @@ class MainWindow(QMainWindow):
         """Open a journal in place of the one that is open; says so when it cannot be."""
         if self.session is not None and self.session.path == path:
             return True
-        if not self._let_go():
+        if not self.let_go():
             return False
         return self._show_opened(open_with_questions(self, path, self._now))
 
@@ -119,7 +121,7 @@ class MainWindow(QMainWindow):
         """Start another journal in a file of the person's choice."""
         path = ask_new_journal(self, self.folder)
         if path is not None:
-            if self._let_go() and self._start_journal(path) is not None:
+            if self.let_go() and self._start_journal(path) is not None:
                 self.start_log()
             self._follow_session()
 
@@ -224,7 +226,7 @@ class MainWindow(QMainWindow):
 
     def closeEvent(self, event: QCloseEvent) -> None:
         """Write what is left; ask before leaving something that could not be written."""
-        if not self._let_go():
+        if not self.let_go():
             event.ignore()
             return
         self.settings.keep_places(self, self.workspace.chosen_panes)
@@ -242,6 +244,7 @@ class MainWindow(QMainWindow):
         self.workspace.gap.not_known.connect(self.log.gap_is_not_known)
         self.workspace.status.try_again_wanted.connect(self._try_again)
         self.workspace.status.give_up_wanted.connect(self._give_up)
+        self.workspace.status.keep_elsewhere_wanted.connect(partial(keep_elsewhere, self))
 
     def _start_journal(self, path: Path) -> Session | None:
         try:
@@ -256,7 +259,9 @@ class MainWindow(QMainWindow):
             self._follow_session()
             return False
         session = self._take(store)
-        if store.ended_abruptly:
+        if session.saved_at[:10] > session.today.isoformat():
+            self.say(clock_sentence(session.today, date.fromisoformat(session.saved_at[:10])))
+        elif store.ended_abruptly:
             self.say(abrupt_sentence(session.journal))
         return True
 
@@ -288,8 +293,12 @@ class MainWindow(QMainWindow):
         self.keeping.begin()
         return session
 
-    def _let_go(self) -> bool:
-        """Close the open journal; False when the person would rather keep it open."""
+    def let_go(self, *, leave_unsaved: bool = False) -> bool:
+        """Close the open journal; False when the person would rather keep it open.
+
+        Args:
+            leave_unsaved: what could not be written is kept elsewhere, so nobody is asked about it.
+        """
         session = self.session
         if session is None:
             return True
@@ -299,7 +308,7 @@ class MainWindow(QMainWindow):
         if self.workspace.days.state() == DaysPane.State.EditingState:
             # What was being typed was asked about, and is being typed again.
             return False
-        if session.trouble is not None:
+        if session.trouble is not None and not leave_unsaved:
             sentence = f"{trouble_sentence(session.trouble)}\n\nLeave without what is not saved?"
             if QMessageBox.question(self, "Dayfence", sentence) != QMessageBox.StandardButton.Yes:
                 return False
@@ -402,7 +411,7 @@ class MainWindow(QMainWindow):
             QTimer.singleShot(_MEND_LATER, self, self._mend)
             return
         path = self.session.path
-        if self._let_go():
+        if self.let_go():
             store = None
             try:
                 store = mend(self, path, self._now)

@@ -13,6 +13,8 @@ from analysis.log import PERIODS
 from desktop.edits.days import EmptyKind
 from desktop.screens.chart_pane import PERIOD_WORDS
 from desktop.screens.earlier_copies import show_earlier_copies
+from desktop.screens.file_commands import keep_elsewhere
+from desktop.screens.held_dialog import show_held
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
 from desktop.wording.acts import act_phrase
 from desktop.wording.days import full_day
@@ -66,7 +68,10 @@ class Menus:
         _add(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")
         self._reading.append(_add(file, "The &page…", partial(_show_page, window), Keys.Print))
         file.addSeparator()
-        self._reading.append(_add(file, "&Earlier copies…", partial(show_earlier_copies, window)))
+        self._reading += [
+            _add(file, "&Earlier copies…", partial(show_earlier_copies, window)),
+            _add(file, "Save a &copy…", partial(keep_elsewhere, window)),
+        ]
         file.addSeparator()
         _add(file, "&Quit", window.close, Keys.Quit)
 
@@ -106,6 +111,7 @@ class Menus:
         away.aboutToShow.connect(partial(self._list_put_away, away))
         log.addSeparator()
         self._reading += [
+            _add(log, "What this day has &held…", partial(show_held, window), "Ctrl+H"),
             changes.menuAction(),
             spans.menuAction(),
             away.menuAction(),

@@ -17,10 +17,12 @@ class StatusLine(QWidget):
     Signals:
         try_again_wanted: write again what could not be written.
         give_up_wanted: go back to what is on the disk.
+        keep_elsewhere_wanted: keep what is on screen in another file, and go on there.
     """
 
     try_again_wanted = Signal()
     give_up_wanted = Signal()
+    keep_elsewhere_wanted = Signal()
 
     def __init__(self, parent: QWidget | None = None) -> None:
         super().__init__(parent)
@@ -36,10 +38,12 @@ class StatusLine(QWidget):
         self._try_again.clicked.connect(self.try_again_wanted)
         self._give_up = QPushButton("Go back to what is saved")
         self._give_up.clicked.connect(self.give_up_wanted)
+        self._elsewhere = QPushButton("Keep it in another file…")
+        self._elsewhere.clicked.connect(self.keep_elsewhere_wanted)
         layout = QHBoxLayout(self)
         layout.setContentsMargins(14, 4, 14, 6)
         layout.setSpacing(18)
-        for widget in (self.saved, self._try_again, self._give_up, self._counted):
+        for widget in (self.saved, self._try_again, self._elsewhere, self._give_up, self._counted):
             layout.addWidget(widget)
         layout.addWidget(self.said, 2)
         layout.addWidget(self._place, 1)
@@ -55,6 +59,7 @@ class StatusLine(QWidget):
         trouble = session.trouble
         self._try_again.setVisible(trouble is not None)
         self._give_up.setVisible(trouble is not None)
+        self._elsewhere.setVisible(trouble is not None or session.read_only)
         days = len(session.journal.entries.get(session.measure or 0, {}))
         self._counted.setText(f"{count(days, 'day')} written down")
         self._place.setText(session.path.name)

@@ -100,16 +100,21 @@ def take_copy(journal: Path, now: datetime, *, before_version: bool = False) -> 
         version = f"-v{version_of(source)}" if before_version else ""
         copy = EarlierCopy(made, seq, folder / f"{made:{_TIME}}-{seq}{version}{ENDING}", before_version)
         if not copy.path.exists():
-            with making(copy.path) as part, contextlib.closing(sqlite3.connect(part)) as target:
-                # The copy is put on the disk as a whole, so nothing has to be done twice for the parts.
-                target.execute("PRAGMA journal_mode = OFF")
-                target.execute("PRAGMA synchronous = OFF")
-                source.backup(target)
-                # The journal can be written to again while its copy is checked.
-                source.execute("COMMIT")
-                _check(target, part)
+            _copy(source, copy.path)
     _let_go(copies_of(journal), copy.made)
     return copy
+
+
+def save_copy(journal: Path, path: Path) -> None:
+    """Copy a journal as it stands to a place of the person's choice, and check the copy.
+
+    Raises:
+        StorageError: something is there already, or there is no copy.
+    """
+    with storage_errors(journal), contextlib.closing(connect(journal, "ro")) as source:
+        source.execute("BEGIN")
+        position(source)
+        _copy(source, path)
 
 
 def send_copy(copy: EarlierCopy, journal: Path, place: Path) -> None:
@@ -219,6 +224,18 @@ def kept(copies: Iterable[EarlierCopy], now: datetime) -> set[EarlierCopy]:
             newest.setdefault(period(copy), copy)
         staying.update(list(newest.values())[:many])
     return staying
+
+
+def _copy(source: sqlite3.Connection, path: Path) -> None:
+    """Copy what a transaction sees, end it, and check the copy."""
+    with making(path) as part, contextlib.closing(sqlite3.connect(part)) as target:
+        # The copy is put on the disk as a whole, so nothing has to be done twice for the parts.
+        target.execute("PRAGMA journal_mode = OFF")
+        target.execute("PRAGMA synchronous = OFF")
+        source.backup(target)
+        # The journal can be written to again while its copy is checked.
+        source.execute("COMMIT")
+        _check(target, part)
 
 
 def _let_go(copies: list[EarlierCopy], now: datetime) -> None:

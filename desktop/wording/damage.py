@@ -1,7 +1,8 @@
-"""Words for a file that cannot simply be opened: damaged, gone, open elsewhere, left by a killed program."""
+"""Words for a file that is damaged, gone, open elsewhere or cut short, and for a clock that went back."""
 
 from __future__ import annotations
 
+from datetime import date
 from pathlib import Path
 
 from desktop.journal.journal import Journal
@@ -81,3 +82,16 @@ def abrupt_sentence(journal: Journal) -> str:
         f"The last session ended abruptly. Everything saved before is here: {count(entries, 'value')}, "
         f"the last of {full_day(days[1])}."
     )
+
+
+def clock_sentence(today: date, last: date) -> str:
+    """That this computer's date lies before the last thing that was written down."""
+    return (
+        f"This computer's date, {full_day(today)}, is before your last entry, made on {full_day(last)}. "
+        "Check it before you add today."
+    )
+
+
+def kept_elsewhere(path: Path) -> str:
+    """That a copy was made at a place of the person's choice."""
+    return f"A copy is in {path}."

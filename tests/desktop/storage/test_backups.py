@@ -24,6 +24,7 @@ from desktop.storage.backups import (
     kept,
     newest_good,
     read_copy,
+    save_copy,
     send_copy,
     take_copy,
 )
@@ -319,3 +320,14 @@ def test_a_file_is_checked_while_it_is_written_to(store: Store, path: Path) -> N
         check_file(path)
     assert refusal(lambda: check_file(path)).reason == "damaged"
     assert refusal(lambda: check_file(path.parent / "none")).reason == "cannot open"
+
+
+def test_a_copy_at_a_place_of_ones_own(store: Store, path: Path) -> None:
+    store.write("put value", added(minutes(1)))
+    target = path.with_name("mine.dayfence")
+    save_copy(path, target)
+    assert refusal(lambda: save_copy(path, target)).fields["exists"] is True
+    with Store.open(target) as copy:
+        copy.verify()
+        assert copy.steps() == store.steps()
+    assert copies_of(path) == []

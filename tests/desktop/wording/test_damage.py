@@ -7,7 +7,13 @@ import pytest
 
 from desktop.journal.journal import Journal
 from desktop.journal.records import Entry, Measure, Person
-from desktop.wording.damage import abrupt_sentence, copy_sentence, missing_sentence, readable_sentence
+from desktop.wording.damage import (
+    abrupt_sentence,
+    clock_sentence,
+    copy_sentence,
+    missing_sentence,
+    readable_sentence,
+)
 
 
 @pytest.mark.parametrize(
@@ -48,3 +54,10 @@ def test_after_a_session_that_was_cut_short():
 def test_a_journal_that_is_gone():
     said = missing_sentence(Path("/a/journal.dayfence"), "9 March 2031, 20:15")
     assert said.startswith("journal.dayfence is not where it was.")
+
+
+def test_a_clock_that_went_back():
+    assert clock_sentence(date(2031, 3, 28), date(2031, 3, 30)) == (
+        "This computer's date, 28 March 2031, is before your last entry, made on 30 March 2031. "
+        "Check it before you add today."
+    )

@@ -1,0 +1,43 @@
+"""Commands about the file as a whole."""
+
+from __future__ import annotations
+
+from typing import TYPE_CHECKING
+
+from PySide6.QtWidgets import QMessageBox
+
+from desktop.errors import StorageError
+from desktop.screens.file_questions import ask_new_journal
+from desktop.storage.backups import save_copy
+from desktop.storage.store import Store
+from desktop.wording.damage import kept_elsewhere
+from desktop.wording.problems import problem_sentence
+
+if TYPE_CHECKING:
+    from desktop.screens.main_window import MainWindow
+
+
+def keep_elsewhere(window: MainWindow) -> None:
+    """Save a copy at a place of the person's choice; go on there where nothing can be written here.
+
+    What could not be written is in the copy too: then it holds what is on screen, without the history.
+    """
+    session = window.session
+    if session is None:
+        return
+    window.workspace.days.finish_typing()
+    session.wait_until_written()
+    path = ask_new_journal(window, window.folder)
+    if path is None:
+        return
+    try:
+        if session.trouble is None:
+            save_copy(session.path, path)
+        else:
+            Store.create(path, session.journal.records()).close()
+    except StorageError as error:
+        QMessageBox.warning(window, "Dayfence", problem_sentence(error))
+        return
+    if (session.read_only or session.trouble is not None) and window.let_go(leave_unsaved=True):
+        window.open_journal(path)
+    window.say(kept_elsewhere(path))
