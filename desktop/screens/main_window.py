@@ -93,6 +93,10 @@ class MainWindow(QMainWindow):
             return False
         return self._show_opened(open_with_questions(self, path, self._now))
 
+    def show_start(self) -> None:
+        """Show the start screen where no journal is open."""
+        self._follow_session()
+
     def open_sample(self) -> None:
         """Open the sample journal, making it first where there is none."""
         path = self.folder / f"sample{JOURNAL_ENDING}"

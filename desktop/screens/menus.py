@@ -13,6 +13,7 @@ from analysis.log import PERIODS
 from desktop.edits.days import EmptyKind
 from desktop.screens.chart_pane import PERIOD_WORDS
 from desktop.screens.earlier_copies import show_earlier_copies
+from desktop.screens.erase_dialog import erase_for_good
 from desktop.screens.file_commands import keep_elsewhere
 from desktop.screens.held_dialog import show_held
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
@@ -72,6 +73,7 @@ class Menus:
             _add(file, "&Earlier copies…", partial(show_earlier_copies, window)),
             _add(file, "Save a &copy…", partial(keep_elsewhere, window)),
         ]
+        self._writing.append(_add(file, "Erase for &good…", partial(erase_for_good, window)))
         file.addSeparator()
         _add(file, "&Quit", window.close, Keys.Quit)
 
