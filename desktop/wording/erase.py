@@ -8,8 +8,8 @@ from desktop.wording.days import full_day
 
 LIMITS = (
     "Erasing takes it out of the journal, its whole history and every earlier copy: those are replaced by one "
-    "new copy, and Undo cannot bring anything of it back. It cannot reach copies you gave away, copies a synced folder or a backup of this computer "
-    "keeps, printed pages, or traces in the memory chips of a disk."
+    "new copy, and Undo cannot bring anything of it back. It cannot reach copies you gave away, copies a synced "
+    "folder or a backup of this computer keeps, printed pages, or traces in the memory chips of a disk."
 )
 SURE = "I know that nobody can bring it back"
 NOT_REACHED = "Erased here. The second place was not reached: the copies there still hold it."
