@@ -15,6 +15,7 @@ from desktop.screens.chart_pane import PERIOD_WORDS
 from desktop.screens.earlier_copies import show_earlier_copies
 from desktop.screens.erase_dialog import erase_for_good
 from desktop.screens.file_commands import keep_elsewhere
+from desktop.screens.hand_over_dialog import hand_over
 from desktop.screens.held_dialog import show_held
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
 from desktop.wording.acts import act_phrase
@@ -72,6 +73,7 @@ class Menus:
         self._reading += [
             _add(file, "&Earlier copies…", partial(show_earlier_copies, window)),
             _add(file, "Save a &copy…", partial(keep_elsewhere, window)),
+            _add(file, "A copy to &hand over…", partial(hand_over, window)),
         ]
         self._writing.append(_add(file, "Erase for &good…", partial(erase_for_good, window)))
         file.addSeparator()
