@@ -41,6 +41,7 @@ def _run(options: argparse.Namespace) -> int:
     from PySide6.QtWidgets import QApplication
 
     from desktop.faces import load_faces
+    from desktop.models.collector import Collector
     from desktop.resource_files import resource
     from desktop.screens.main_window import MainWindow
 
@@ -56,6 +57,7 @@ def _run(options: argparse.Namespace) -> int:
     except OSError as error:
         sys.stderr.write(f"The folder {folder} for your journal cannot be made: {error.strerror}.\n")
         return 2
+    Collector(app)
     window = MainWindow(folder)
     window.show()
     if options.sample:

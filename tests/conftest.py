@@ -1,5 +1,6 @@
 """Set up before any test: no display, no network, nothing of the person's own folders."""
 
+import gc
 import os
 import sys
 
@@ -17,6 +18,19 @@ def _watch_sockets(event: str, arguments: tuple) -> None:
 
 
 sys.addaudithook(_watch_sockets)
+
+
+# As in the program, no worker thread collects: it would free widgets that are the main thread's.
+gc.disable()
+
+
+@pytest.fixture(autouse=True)
+def _collect_between_tests():
+    """Python's collector runs between tests, on the main thread, when it is due."""
+    yield
+    due = [place for place in range(3) if gc.get_count()[place] > gc.get_threshold()[place]]
+    if due:
+        gc.collect(max(due))
 
 
 @pytest.fixture(autouse=True)

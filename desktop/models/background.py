@@ -2,9 +2,7 @@
 
 from __future__ import annotations
 
-import gc
 from collections.abc import Callable
-from threading import Lock
 from typing import TypeVar
 
 from PySide6.QtCore import QObject, QRunnable, QThreadPool, Signal, Slot
@@ -44,31 +42,6 @@ class Background(QObject):
         receive(result)
 
 
-class _NoCollecting:
-    """While a job runs, Python's collector rests: on a worker it would free widgets of the screen's thread."""
-
-    def __init__(self) -> None:
-        self._lock = Lock()
-        self._inside = 0
-        self._was_on = False
-
-    def __enter__(self) -> None:
-        with self._lock:
-            if self._inside == 0:
-                self._was_on = gc.isenabled()
-                gc.disable()
-            self._inside += 1
-
-    def __exit__(self, *_: object) -> None:
-        with self._lock:
-            self._inside -= 1
-            if self._inside == 0 and self._was_on:
-                gc.enable()
-
-
-_NO_COLLECTING = _NoCollecting()
-
-
 class _Job(QRunnable):
     def __init__(
         self,
@@ -82,10 +55,9 @@ class _Job(QRunnable):
 
     def run(self) -> None:
         """Called by the pool; an exception must not leave it, since nobody above would see it."""
-        with _NO_COLLECTING:
-            try:
-                result = self._job()
-            except Exception as error:
-                self._owner.finished.emit(self._failed, error)
-            else:
-                self._owner.finished.emit(self._done, result)
+        try:
+            result = self._job()
+        except Exception as error:
+            self._owner.finished.emit(self._failed, error)
+        else:
+            self._owner.finished.emit(self._done, result)

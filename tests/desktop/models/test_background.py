@@ -7,6 +7,7 @@ from weakref import finalize
 from PySide6.QtCore import QObject
 
 from desktop.models.background import Background
+from desktop.models.collector import Collector
 
 
 class Knot(QObject):
@@ -18,48 +19,34 @@ class Knot(QObject):
 
 
 def test_garbage_of_the_screen_is_collected_on_its_own_thread(qtbot):
-    freed_on = []
-    background = Background()
-    gc.disable()
-    try:
-        for _ in range(50):
-            finalize(Knot(), lambda: freed_on.append(threading.current_thread()))
-    finally:
-        gc.enable()
-
-    def work():
-        # Far more than the collector waits for.
-        return len([[place] for place in range(300_000)])
-
-    done = []
-    background.run(work, done.append, done.append)
-    background.run(work, done.append, done.append)
+    collector, background = Collector(), Background()
+    freed_on, done = [], []
+    for _ in range(50):
+        finalize(Knot(), lambda: freed_on.append(threading.current_thread()))
+    for _ in range(2):
+        # Far more objects than the collector waits for.
+        background.run(lambda: len([[place] for place in range(300_000)]), done.append, done.append)
     background.wait()
     qtbot.waitUntil(lambda: len(done) == 2)
     assert done == [300_000, 300_000]
-    assert gc.isenabled()
-    gc.collect()
-    assert set(freed_on) == {threading.main_thread()}
-    assert len(freed_on) == 50
+    assert freed_on == []
+    collector.look()
+    assert freed_on == [threading.main_thread()] * 50
 
 
-def test_a_collector_that_was_off_stays_off(qtbot):
-    background, done = Background(), []
-    gc.disable()
-    try:
-        background.run(lambda: gc.isenabled(), done.append, done.append)
-        background.wait()
-        qtbot.waitUntil(lambda: bool(done))
-        assert done == [False]
-        assert not gc.isenabled()
-    finally:
-        gc.enable()
+def test_nothing_is_collected_before_it_is_due(qtbot, monkeypatch):
+    collector, collected = Collector(), []
+    monkeypatch.setattr(gc, "collect", collected.append)
+    monkeypatch.setattr(gc, "get_threshold", lambda: (700, 10, 10))
+    for counts in ((10, 3, 2), (701, 3, 2), (701, 11, 2), (3, 0, 11)):
+        monkeypatch.setattr(gc, "get_count", lambda counts=counts: counts)
+        collector.look()
+    assert collected == [0, 1, 2]
 
 
-def test_an_error_comes_back_and_the_collector_too(qtbot):
+def test_an_error_comes_back(qtbot):
     background, failed = Background(), []
     background.run(lambda: 1 / 0, failed.append, failed.append)
     background.wait()
     qtbot.waitUntil(lambda: bool(failed))
     assert isinstance(failed[0], ZeroDivisionError)
-    assert gc.isenabled()
