@@ -7,14 +7,32 @@ from typing import TYPE_CHECKING
 from PySide6.QtWidgets import QMessageBox
 
 from desktop.errors import StorageError
-from desktop.screens.file_questions import ask_new_journal
+from desktop.screens.file_questions import ask_journal, ask_new_journal
 from desktop.storage.backups import save_copy
 from desktop.storage.store import Store
+from desktop.storage.stranger import read_stranger
 from desktop.wording.damage import kept_elsewhere
-from desktop.wording.problems import problem_sentence
+from desktop.wording.problems import problem_sentence, stranger_sentence
 
 if TYPE_CHECKING:
     from desktop.screens.main_window import MainWindow
+
+
+def open_stranger(window: MainWindow) -> None:
+    """Read somebody else's journal as data alone into a new journal of one's own, and open that."""
+    theirs = ask_journal(window, window.folder)
+    if theirs is None:
+        return
+    try:
+        journal = read_stranger(theirs)
+        path = ask_new_journal(window, window.folder)
+        if path is None:
+            return
+        Store.create(path, journal.records()).close()
+    except StorageError as error:
+        QMessageBox.warning(window, "Dayfence", stranger_sentence(error))
+        return
+    window.open_journal(path)
 
 
 def keep_elsewhere(window: MainWindow) -> None:

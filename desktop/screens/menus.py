@@ -14,7 +14,7 @@ from desktop.edits.days import EmptyKind
 from desktop.screens.chart_pane import PERIOD_WORDS
 from desktop.screens.earlier_copies import show_earlier_copies
 from desktop.screens.erase_dialog import erase_for_good
-from desktop.screens.file_commands import keep_elsewhere
+from desktop.screens.file_commands import keep_elsewhere, open_stranger
 from desktop.screens.hand_over_dialog import hand_over
 from desktop.screens.held_dialog import show_held
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
@@ -65,6 +65,7 @@ class Menus:
         window = self._window
         _add(file, "&New journal…", window.new_journal, Keys.New)
         _add(file, "&Open a journal…", window.open_file, Keys.Open)
+        _add(file, "Open somebody &else's journal…", partial(open_stranger, window))
         _add(file, "Open the &sample journal", window.open_sample)
         file.addSeparator()
         _add(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")

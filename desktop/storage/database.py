@@ -65,6 +65,8 @@ _REASONS: tuple[tuple[str, str], ...] = (
     ("SQLITE_AUTH", "cannot open"),
     ("SQLITE_CORRUPT", "damaged"),
     ("SQLITE_NOTADB", "damaged"),
+    # Only a stranger's file is given up for taking too long.
+    ("SQLITE_INTERRUPT", "damaged"),
     # Every statement is one the schema answers, so one that fails met other tables.
     ("SQLITE_ERROR", "damaged"),
 )

@@ -49,6 +49,16 @@ def not_copied_sentence(error: Exception) -> str:
     return f"No new copy of the journal could be made{':' if reason else ''}{reason}. The journal itself is saved."
 
 
+def stranger_sentence(error: StorageError) -> str:
+    """Why a journal that came from elsewhere was not read."""
+    if error.reason in ("damaged", "refused value"):
+        return (
+            f"{_name(error.fields)} was not read: it is damaged, or holds something that no journal holds. "
+            "It was not changed. Ask for another copy of it."
+        )
+    return problem_sentence(error)
+
+
 def choice_label(reason: str, choice: object) -> str:
     """An answer to a question of the importer, as a button says it."""
     if reason == "which day order":
