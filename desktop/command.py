@@ -19,7 +19,8 @@ from analysis import AnalysisError, Change, Log, Measure, Review, review
 from analysis.answer import Rows, SetAsideRow
 from analysis.log import PERIODS, Aim, Combine, MeasureKind, Missed
 from desktop.errors import DayfenceError, ExchangeError
-from desktop.exchange.bring_in import Reading, choose_column, read_file
+from desktop.exchange.bring_in import choose_column, read_file
+from desktop.exchange.reading import Reading
 from desktop.journal import records
 from desktop.journal.journal import Journal
 from desktop.wording.findings import findings_of, worded
@@ -154,6 +155,9 @@ def add_log_options(parser: argparse.ArgumentParser) -> None:
     parser.add_argument("--today", metavar="DAY", type=_last_day, help="nothing after this day is used")
     parser.add_argument("--day-order", choices=("dmy", "mdy", "ymd"), help="order of day, month and year")
     parser.add_argument("--day-column", metavar="COLUMN", help="the column that holds the days")
+    parser.add_argument(
+        "--name-column", metavar="COLUMN", help="the column that names each row's measure, or none"
+    )
     parser.add_argument("--century", type=int, choices=(1900, 2000), help="what two-digit years are added to")
     parser.add_argument("--decimal", choices=(".", ","), help="the decimal mark")
 
@@ -189,6 +193,7 @@ def _from_table(options: argparse.Namespace, with_pair: bool) -> list[Asked]:
         day_column=options.day_column,
         columns=None if options.measure is None else [options.measure],
         century=options.century,
+        name_column="" if options.name_column == "none" else options.name_column,
     )
     is_pair = len(reading.columns) == 2 and len({column.pair for column in reading.columns} - {""}) == 1
     names = [column.name for column in reading.columns] if with_pair and is_pair else [options.measure]

@@ -35,6 +35,7 @@ ExchangeReason = Literal[
     "which day order",
     "which century",
     "which decimal mark",
+    "which name column",
     "unknown column",
 ]
 

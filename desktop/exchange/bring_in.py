@@ -3,111 +3,25 @@
 from __future__ import annotations
 
 from collections import Counter
-from collections.abc import Iterable, Mapping, Sequence
-from dataclasses import dataclass, replace
+from collections.abc import Iterable, Iterator, Mapping, Sequence
+from dataclasses import replace
 from datetime import date, time
 from pathlib import Path
-from typing import Literal, NamedTuple
+from typing import NamedTuple, cast
 
 from desktop.errors import ExchangeError
-from desktop.exchange.day_column import DaysRead, find_name, find_times, read_days
-from desktop.exchange.day_tokens import DayOrder, RowPeriod
+from desktop.exchange.day_column import DaysRead, read_days
+from desktop.exchange.day_tokens import DayOrder
 from desktop.exchange.day_words import is_total
-from desktop.exchange.number_tokens import DecimalMark, Refusal
+from desktop.exchange.lanes import Lane, Roles, find_roles, wanted_lanes
+from desktop.exchange.number_tokens import DecimalMark, Refusal, decide_decimal_mark
+from desktop.exchange.reading import Fate, FateList, ReadColumn, Reading, ValueList
+from desktop.exchange.rows import Rectangle
 from desktop.exchange.slots import slots_of_day
 from desktop.exchange.source_text import file_bytes
-from desktop.exchange.table import Column, SkippedLine, Table, find_table, is_index
+from desktop.exchange.table import Column, Table, find_table
 from desktop.exchange.units import split_header
-from desktop.exchange.value_column import HALVES, CellsRead, holds_values, read_values
-
-Status = Literal["kept", "blank", "set aside"]
-
-
-class ReadValue(NamedTuple):
-    """One value: the line and day it stands on, its slot of the day, and its text in the file."""
-
-    line: int
-    day: date
-    slot: str
-    value: float
-    original: str
-
-
-class Fate(NamedTuple):
-    """What became of one line: ``kept``, ``blank`` (a day without a value), or ``set aside`` and why."""
-
-    line: int
-    status: Status
-    reason: str = ""
-    text: str = ""
-
-
-@dataclass(frozen=True)
-class ReadColumn:
-    """One column of values.
-
-    Attributes:
-        name: its name in the table.
-        unit: the unit of every value, or ``""``.
-        decimal: the decimal mark it was read with.
-        durations: some cells were hours and minutes, and are now in ``unit``.
-        pair: the name of the column of pairs it is a half of, else ``""``.
-        values: in the order of the file.
-        blanks: line and day of each blank cell.
-        refused: cells that are no value.
-    """
-
-    name: str
-    unit: str
-    decimal: DecimalMark
-    durations: bool
-    pair: str
-    values: tuple[ReadValue, ...]
-    blanks: tuple[tuple[int, date], ...]
-    refused: tuple[Fate, ...]
-
-
-@dataclass(frozen=True)
-class Reading:
-    """A table that was read.
-
-    Attributes:
-        separator: what stands between cells.
-        encoding: how its letters were read.
-        encoding_guessed: nothing in the file named the encoding, so letters may be wrong.
-        header_line: the line of the header; None where there is none.
-        skipped: lines above the table.
-        day_column: the column the days stand in.
-        day_order: the order of day and month; None where no day needed one.
-        period: what a row stands for.
-        candidates: every column that holds values, read or not.
-        columns: the columns that were read.
-        fates: exactly one for each line of data, in the order of the file.
-        several_a_day: days with more than one value in a column.
-    """
-
-    separator: str
-    encoding: str
-    encoding_guessed: bool
-    header_line: int | None
-    skipped: tuple[SkippedLine, ...]
-    day_column: str
-    day_order: DayOrder | None
-    period: RowPeriod
-    candidates: tuple[str, ...]
-    columns: tuple[ReadColumn, ...]
-    fates: tuple[Fate, ...]
-    several_a_day: tuple[date, ...]
-
-    @property
-    def values(self) -> Mapping[str, tuple[ReadValue, ...]]:
-        """The values of each column that was read, by its name."""
-        return {column.name: column.values for column in self.columns}
-
-    @property
-    def set_aside(self) -> tuple[Fate, ...]:
-        """The lines of which nothing was kept, with the reason."""
-        return tuple(fate for fate in self.fates if fate.status == "set aside")
+from desktop.exchange.value_column import read_values
 
 
 def read_file(
@@ -118,6 +32,7 @@ def read_file(
     day_column: str | None = None,
     columns: Sequence[str] | None = None,
     century: int | None = None,
+    name_column: str | None = None,
 ) -> Reading:
     """Read the table in a file; the arguments and errors are those of ``read_table``.
 
@@ -131,6 +46,7 @@ def read_file(
         day_column=day_column,
         columns=columns,
         century=century,
+        name_column=name_column,
     )
 
 
@@ -142,6 +58,7 @@ def read_table(
     day_column: str | None = None,
     columns: Sequence[str] | None = None,
     century: int | None = None,
+    name_column: str | None = None,
 ) -> Reading:
     """Read a table of days and values.
 
@@ -154,27 +71,33 @@ def read_table(
         day_column: the column the days stand in.
         columns: the columns to read; all that hold values when left out.
         century: the century of years with two digits, 1900 or 2000.
+        name_column: the column that says which measure a row is about, ``""`` for none.
 
     Raises:
         ExchangeError: the file is no table that can be read (``workbook``, ``not text``, ``empty``,
             ``too large``, ``not a table``, ``no day column``, ``no value column``, ``no days read``),
             a column is not there (``unknown column``), or the table leaves something open (``which day
-            column``, ``which day order``, ``which century``, ``which decimal mark``, with ``choices``).
+            column``, ``which name column``, ``which day order``, ``which century``, ``which decimal mark``,
+            with ``choices``).
     """
     table = find_table(source)
     days = read_days(table, day_order=day_order, day_column=day_column, century=century)
-    places, clocks, index = _value_places(table, days)
-    wanted = _wanted_places(table, days, places, columns)
-    row_days = _row_days(table, days, places, index)
-    kept = [place for place, day in enumerate(row_days) if isinstance(day, date)]
-    if not kept:
-        counted = Counter(fate.reason for fate in row_days if isinstance(fate, Fate))
+    roles = find_roles(table, days, name_column)
+    lanes = wanted_lanes(table, days, roles, columns)
+    row_days, whole = _row_days(table, days, roles)
+    if len(whole) == len(row_days):
+        counted = Counter(fate.reason for fate in whole.values())
         raise ExchangeError("no days read", column=table.columns[days.place].name, reasons=dict(counted))
+    if roles.one_column is not None:
+        # What any row of the one column shows of its decimal mark holds for all of them.
+        decimal = decide_decimal_mark(roles.one_column.filled) or decimal
     read_columns = tuple(
-        _read_column(table, place, read, row_days, clocks)
-        for place in wanted
-        for read in read_values(_only(table.columns[place], kept), decimal, one_day=days.period == "day")
+        column
+        for lane in lanes
+        for column in _read_lane(table, lane, roles, row_days, whole, decimal, one_day=days.period == "day")
     )
+    if not read_columns:
+        raise ExchangeError("no value column", columns=[column.name for column in table.columns])
     return Reading(
         separator=table.separator,
         encoding=table.encoding,
@@ -184,15 +107,17 @@ def read_table(
         day_column=table.columns[days.place].name,
         day_order=days.order,
         period=days.period,
-        candidates=tuple(table.columns[place].name for place in places),
+        candidates=tuple(lane.name for lane in roles.lanes),
         columns=read_columns,
-        fates=_fates(table, row_days, read_columns),
+        fates=_fates(_lines(table, lanes, whole), whole, read_columns, table.lines),
         several_a_day=_several(read_columns),
     )
 
 
 def choose_column(reading: Reading, name: str | None = None) -> Reading:
     """The reading narrowed to one column of values, with the fate of each line for that column.
+
+    In a table with a row a reading, the lines about other measures are not among them.
 
     Args:
         reading: a table that was read.
@@ -207,8 +132,15 @@ def choose_column(reading: Reading, name: str | None = None) -> Reading:
             raise ExchangeError("which value column", choices=names)
         name = names[0]
     column = _named(reading, name)
-    by_line = {fate.line: fate for fate in _column_fates(column)}
-    fates = tuple(by_line.get(fate.line, fate) for fate in reading.fates)
+    about = {
+        line
+        for one in reading.columns
+        for line in (*one.values.lines, *(line for line, _ in one.blanks), *(fate.line for fate in one.refused))
+    }
+    own = {*column.values.lines, *(line for line, _ in column.blanks), *(fate.line for fate in column.refused)}
+    whole = {line: fate for line, fate in reading.fates.others.items() if line not in about}
+    lines = [line for line in reading.fates.lines if line in own or line in whole]
+    fates = FateList(lines, {**whole, **_told(column)})
     return replace(reading, columns=(column,), fates=fates, several_a_day=_several((column,)))
 
 
@@ -226,73 +158,56 @@ def _named(reading: Reading, name: str) -> ReadColumn:
     raise ExchangeError("unknown column", name=name, choices=[column.name for column in reading.columns])
 
 
-def _value_places(table: Table, days: DaysRead) -> tuple[list[int], list[time | None], int | None]:
-    """Where values stand, the time of day of each row, and which column only numbers the rows."""
-    others = [
-        place for place in range(len(table.columns)) if place != days.place and place not in days.other_places
-    ]
-    index = next(
-        (
-            place
-            for place in others
-            if is_index(table.columns[place], first=place == 0, has_header=table.header_line is not None)
-        ),
-        None,
-    )
-    places = [place for place in others if place != index and holds_values(table.columns[place])]
-    time_place, clocks = find_times(table, days, [place for place in others if places != [place]])
-    return [place for place in places if place != time_place], clocks, index
-
-
-def _wanted_places(table: Table, days: DaysRead, places: Sequence[int], names: Sequence[str] | None) -> list[int]:
-    if not names:
-        if not places:
-            raise ExchangeError("no value column", columns=[column.name for column in table.columns])
-        return list(places)
-    choices = [column for place, column in enumerate(table.columns) if place != days.place]
-    found = [_find_whole(name, choices) for name in names]
-    return [place for place, column in enumerate(table.columns) if column.name in found]
-
-
-def _find_whole(name: str, columns: Sequence[Column]) -> str:
-    """The name of the column meant, where a half of a column of pairs may be named too."""
-    try:
-        return find_name(name, columns)
-    except ExchangeError:
-        whole, _, half = name.strip().rpartition(" ")
-        if half.casefold() not in HALVES:
-            raise
-        return find_name(whole, columns)
-
-
-def _row_days(table: Table, days: DaysRead, places: Sequence[int], index: int | None) -> list[date | Fate]:
-    """The day of each row, or why the whole row is set aside."""
+def _row_days(table: Table, days: DaysRead, roles: Roles) -> tuple[list[date | str], dict[int, Fate]]:
+    """The day of each row, or why it has none; and by its place each row that is set aside as a whole."""
+    texts = table.columns[days.place].cells
+    row_days = list(map(days.days.__getitem__, texts))
+    suspects = _suspects(table, days, row_days, roles)
+    whole: dict[int, Fate] = {}
+    if suspects is None:
+        return row_days, whole
     width = len(table.columns)
-    needed = max(places, default=0) + 1
+    needed = max((_place_of(table, lane.column) for lane in roles.lanes), default=0) + 1
     seen: set[tuple[str, ...]] = set()
-    result: list[date | Fate] = []
-    for place, (row, text) in enumerate(zip(table.rows, table.columns[days.place].cells, strict=True)):
-        day = days.days[text]
+    for place in suspects:
+        row, day = table.rows[place], row_days[place]
         fits = len(row) == width and table.lines[place] not in table.broken
         reason = "" if fits else _misfit(table, place, width, needed)
         if not reason and isinstance(day, str):
             reason = _why_no_day(table, place, day)
         if not reason:
-            key = tuple(row if index is None else row[:index] + row[index + 1 :])
+            key = tuple(row if roles.index is None else row[: roles.index] + row[roles.index + 1 :])
             reason = "repeated" if key in seen else ""
             seen.add(key)
-        if reason or isinstance(day, str):
-            result.append(Fate(table.lines[place], "set aside", reason, table.text(place)))
-        else:
-            result.append(day)
-    return result
+        if not reason and place in roles.left_out:
+            reason = "left out there"
+        if reason:
+            whole[place] = Fate(table.lines[place], "set aside", reason, table.text(place))
+    return row_days, whole
 
 
-def _only(column: Column, places: Sequence[int]) -> Column:
-    """The column with the cells of some rows only, so that no other row has a say in how they are read."""
-    if len(places) == len(column.cells):
-        return column
-    return replace(column, cells=tuple(column.cells[place] for place in places))
+def _suspects(table: Table, days: DaysRead, row_days: Sequence[date | str], roles: Roles) -> Sequence[int] | None:
+    """The rows that have to be looked at one by one; None for none of them."""
+    every = range(len(row_days))
+    if not isinstance(table.rows, Rectangle) or table.broken:
+        return every
+    odd = {text for text, day in days.days.items() if isinstance(day, str)}
+    texts = table.columns[days.place]
+    if len(texts.counts) < len(texts.cells):
+        columns = [column for place, column in enumerate(table.rows.columns) if place != roles.index]
+        if len(set(zip(*columns, strict=True))) < len(row_days):
+            return every
+    if not odd and not roles.left_out:
+        return None
+    return [place for place, text in enumerate(texts.cells) if text in odd or place in roles.left_out]
+
+
+def _place_of(table: Table, column: Column) -> int:
+    """Where the cells of a lane stand."""
+    return next(
+        (place for place, one in enumerate(table.columns) if one.name == column.name or one.cells == column.cells),
+        0,
+    )
 
 
 def _misfit(table: Table, place: int, width: int, needed: int) -> str:
@@ -315,60 +230,110 @@ def _why_no_day(table: Table, place: int, reason: str) -> str:
     return reason
 
 
-def _read_column(
-    table: Table, place: int, read: CellsRead, row_days: Sequence[date | Fate], clocks: Sequence[time | None]
-) -> ReadColumn:
-    found: list[tuple[int, date, float, str]] = []
-    times: list[time | None] = []
-    blanks: list[tuple[int, date]] = []
-    refused: list[Fate] = []
-    outcomes = read.outcomes
-    for line, day, text, clock in zip(table.lines, row_days, table.columns[place].cells, clocks, strict=True):
-        if isinstance(day, Fate):
-            continue
-        outcome = outcomes[text]
-        if outcome is None:
-            blanks.append((line, day))
-        elif isinstance(outcome, Refusal):
-            refused.append(Fate(line, "set aside", outcome.reason, text))
+def _read_lane(
+    table: Table,
+    lane: Lane,
+    roles: Roles,
+    row_days: Sequence[date | str],
+    whole: Mapping[int, Fate],
+    decimal: DecimalMark | None,
+    *,
+    one_day: bool,
+) -> Iterator[ReadColumn]:
+    """The column of a lane, or two where its cells are pairs; none where every row of it is set aside."""
+    rows: Sequence[int] = range(len(row_days)) if lane.rows is None else lane.rows
+    places = [place for place in rows if place not in whole] if whole else rows
+    if not places:
+        return
+    column = lane.column_of(places)
+    about = column.cells
+    every = len(places) == len(row_days)
+    lines = table.lines if every else [table.lines[place] for place in places]
+    days = cast("Sequence[date]", row_days if every else [row_days[place] for place in places])
+    clocks = None if roles.clocks is None else [roles.clocks[place] for place in places]
+    words = None if roles.slots is None else [roles.slots[place] for place in places]
+    for read in read_values(column, decimal, one_day=one_day):
+        outcomes = list(map(read.outcomes.__getitem__, about))
+        blanks: list[tuple[int, date]] = []
+        refused: list[Fate] = []
+        if set(map(type, outcomes)) == {float}:
+            kept = _Kept(lines, days, clocks, words, cast("list[float]", outcomes), about)
         else:
-            found.append((line, day, outcome, text))
-            times.append(clock)
-    slots = slots_of_day([day for _, day, _, _ in found], times)
-    values = tuple(
-        ReadValue(line, day, slot, value, text)
-        for (line, day, value, text), slot in zip(found, slots, strict=True)
-    )
-    return ReadColumn(
-        read.name, read.unit, read.decimal, read.durations, read.pair, values, tuple(blanks), tuple(refused)
-    )
+            good = [place for place, outcome in enumerate(outcomes) if isinstance(outcome, float)]
+            for line, day, outcome, text in zip(lines, days, outcomes, about, strict=True):
+                if outcome is None:
+                    blanks.append((line, day))
+                elif isinstance(outcome, Refusal):
+                    refused.append(Fate(line, "set aside", outcome.reason, text))
+            kept = _Kept(lines, days, clocks, words, cast("list[float]", outcomes), about).at(good)
+        slots = slots_of_day(kept.days, kept.clocks, kept.words)
+        values = ValueList(kept.lines, kept.days, slots, kept.numbers, kept.texts)
+        yield ReadColumn(
+            read.name,
+            read.unit,
+            read.decimal,
+            read.durations,
+            read.pair,
+            values,
+            tuple(blanks),
+            tuple(refused),
+            lane.rows,
+        )
+
+
+class _Kept(NamedTuple):
+    """What is kept of a column, row by row."""
+
+    lines: Sequence[int]
+    days: Sequence[date]
+    clocks: Sequence[time | None] | None
+    words: Sequence[str] | None
+    numbers: Sequence[float]
+    texts: Sequence[str]
+
+    def at(self, places: Sequence[int]) -> _Kept:
+        """Some of the rows."""
+        return _Kept._make(None if part is None else [part[place] for place in places] for part in self)
 
 
 def _several(columns: Iterable[ReadColumn]) -> tuple[date, ...]:
     several: set[date] = set()
     for column in columns:
-        days = Counter(value.day for value in column.values)
-        several.update(day for day, number in days.items() if number > 1)
+        if any(column.values.slots):
+            days = Counter(column.values.days)
+            several.update(day for day, number in days.items() if number > 1)
     return tuple(sorted(several))
 
 
-def _column_fates(column: ReadColumn) -> Iterable[Fate]:
-    for value in column.values:
-        yield Fate(value.line, "kept")
-    for line, _ in column.blanks:
-        yield Fate(line, "blank")
-    yield from column.refused
+def _told(column: ReadColumn) -> dict[int, Fate]:
+    """The fate of each line of a column that is not kept."""
+    return {
+        **{line: Fate(line, "blank") for line, _ in column.blanks},
+        **{fate.line: fate for fate in column.refused},
+    }
 
 
-def _fates(table: Table, row_days: Sequence[date | Fate], columns: Sequence[ReadColumn]) -> tuple[Fate, ...]:
-    """The fate of each line: kept if any cell was, else set aside if any cell was refused, else blank."""
-    strength = {"blank": 0, "set aside": 1, "kept": 2}
-    by_line: dict[int, Fate] = {}
+def _lines(table: Table, lanes: Sequence[Lane], whole: Mapping[int, Fate]) -> Sequence[int]:
+    """The lines the reading is about: of a table with a row a reading, not those of measures left aside."""
+    if any(lane.rows is None for lane in lanes):
+        return table.lines
+    places = sorted({place for lane in lanes for place in lane.rows or ()} | whole.keys())
+    return [table.lines[place] for place in places]
+
+
+def _fates(
+    lines: Sequence[int], whole: Mapping[int, Fate], columns: Sequence[ReadColumn], table_lines: Sequence[int]
+) -> FateList:
+    """The fate of each line: kept if any cell of it was, else set aside if any was refused, else blank."""
+    others: dict[int, Fate] = {}
+    lanes: dict[int, list[dict[int, Fate]]] = {}
     for column in columns:
-        for fate in _column_fates(column):
-            other = by_line.get(fate.line)
-            if other is None or strength[fate.status] > strength[other.status]:
-                by_line[fate.line] = fate
-    return tuple(
-        day if isinstance(day, Fate) else by_line[line] for line, day in zip(table.lines, row_days, strict=True)
-    )
+        lanes.setdefault(id(column.rows), []).append(_told(column))
+    for told in lanes.values():
+        nowhere_kept = set(told[0]).intersection(*told[1:])
+        for line in nowhere_kept:
+            fates = [fates[line] for fates in told]
+            others[line] = next((fate for fate in fates if fate.status == "set aside"), fates[0])
+    for place, fate in whole.items():
+        others[table_lines[place]] = fate
+    return FateList(lines, others)

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections import Counter
-from collections.abc import Callable, Sequence
+from collections.abc import Callable, Iterable, Mapping, Sequence
 from dataclasses import dataclass
 from datetime import date, time
 
@@ -17,6 +17,8 @@ from desktop.exchange.day_tokens import (
     RowPeriod,
     compact_day,
     fitting_orders,
+    is_iso,
+    iso_day,
     parse_time,
     says_half_of_day,
     serial_day,
@@ -68,16 +70,42 @@ def read_days(
             ``unknown column``.
     """
     place, others = _find_place(table, day_column)
-    texts = list(dict.fromkeys(table.columns[place].cells))
-    tokens = {text: token for text in texts if (token := table.seen[text])}
-    if not tokens:
-        return _read_numbered(place, texts)
-    period = _period(table.columns[place].cells, tokens)
+    counts = table.columns[place].counts
+    period = _period(table, counts)
+    if not period:
+        return _read_numbered(place, list(counts))
+    # A day with the year in front settles nothing for the others, and is read without a token of its own.
+    plain, others_written = _parted(counts)
+    tokens = {text: token for text in others_written if (token := table.seen[text])}
     counted = [token for token in tokens.values() if token.period == period]
+    if any(token.short_year for token in counted):
+        counted += [token for text in plain if (token := table.seen[text])]
     order = _settle_order(counted, day_order)
     century = _settle_century(counted, order, century)
-    days = {text: _day_or_reason(text, tokens.get(text), period, order, century) for text in texts}
+    days: dict[str, date | str] = {
+        text: _day_or_reason(text, tokens.get(text), period, order, century) for text in others_written
+    }
+    days |= _plain_days(plain) if period == "day" else dict.fromkeys(plain, "other period")
     return DaysRead(place, order, period, days, _same_days(table, place, others))
+
+
+def _parted(texts: Iterable[str]) -> tuple[list[str], list[str]]:
+    """Texts such as 2031-03-04, and all others."""
+    plain: list[str] = []
+    others: list[str] = []
+    for text in texts:
+        (plain if is_iso(text) else others).append(text)
+    return plain, others
+
+
+def _plain_days(texts: list[str]) -> dict[str, date | str]:
+    try:
+        days = list(map(date.fromisoformat, texts))
+    except ValueError:
+        return {text: iso_day(text) for text in texts}
+    if days and (min(days).year not in DAILY_YEARS or max(days).year not in DAILY_YEARS):
+        return {text: iso_day(text) for text in texts}
+    return dict(zip(texts, days, strict=True))
 
 
 def _find_place(table: Table, day_column: str | None) -> tuple[int, tuple[int, ...]]:
@@ -128,9 +156,9 @@ def _year_places(table: Table) -> list[int]:
 
 
 def _is_years(table: Table, column: Column) -> bool:
-    filled = [cell for cell in column.cells if not is_blank(cell)]
-    count = table.seen.count(filled, years=True)
-    return count > 0 and 2 * count > len(filled) and 2 * len(set(filled)) > len(filled)
+    filled = sum(column.filled.values())
+    count = table.seen.count(column.cells, years=True)
+    return count > 0 and 2 * count > filled and 2 * len(column.filled) > filled
 
 
 def _is_named_day(_: Table, column: Column) -> bool:
@@ -162,7 +190,7 @@ def _same_days(table: Table, place: int, others: Sequence[int]) -> tuple[int, ..
 
 def _is_numbered(column: Column) -> bool:
     """Whether every filled cell is a spreadsheet's day number, or every one eight digits that make a day."""
-    filled = {cell for cell in column.cells if not is_blank(cell)}
+    filled = column.filled
     return bool(filled) and (all(map(serial_day, filled)) or all(map(compact_day, filled)))
 
 
@@ -173,10 +201,14 @@ def _read_numbered(place: int, texts: Sequence[str]) -> DaysRead:
     return DaysRead(place, None, "day", days)
 
 
-def _period(cells: Sequence[str], tokens: dict[str, DayToken]) -> RowPeriod:
-    found = Counter(tokens[text].period for text in cells if text in tokens)
+def _period(table: Table, counts: Mapping[str, int]) -> RowPeriod | None:
+    """What most rows stand for; None where no cell is a day, a month or a year."""
+    found: Counter[str] = Counter()
+    for text, number in counts.items():
+        found[table.seen.period(text)] += number
     periods: tuple[RowPeriod, ...] = ("day", "month", "year")
-    return max(periods, key=found.__getitem__)
+    period = max(periods, key=found.__getitem__)
+    return period if found[period] else None
 
 
 def _settle_order(tokens: Sequence[DayToken], answer: DayOrder | None) -> DayOrder | None:
@@ -233,8 +265,8 @@ def _no_day_reason(text: str) -> str:
     return "total row" if is_total(text) else "not a day"
 
 
-def find_times(table: Table, days: DaysRead, spare: Sequence[int]) -> tuple[int | None, list[time | None]]:
-    """The column with the time of day, if there is one, and the time of each row.
+def find_times(table: Table, days: DaysRead, spare: Sequence[int]) -> tuple[int | None, list[time | None] | None]:
+    """The column with the time of day, if there is one, and the time of each row; None where no row has one.
 
     Args:
         table: the table.
@@ -245,15 +277,15 @@ def find_times(table: Table, days: DaysRead, spare: Sequence[int]) -> tuple[int 
         if _is_times(table.columns[place]):
             return place, [parse_time(cell) for cell in table.columns[place].cells]
     for place in (days.place, *days.other_places):
-        tokens = [table.seen[text] for text in table.columns[place].cells]
-        clocks = [token.clock if token else None for token in tokens]
-        if any(clocks):
-            return None, clocks
-    return None, [None] * len(table.rows)
+        column = table.columns[place]
+        timed = {text: token.clock for text in column.counts if not is_iso(text) and (token := table.seen[text])}
+        if any(timed.values()):
+            return None, [timed.get(text) for text in column.cells]
+    return None, None
 
 
 def _is_times(column: Column) -> bool:
-    filled = {cell for cell in column.cells if not is_blank(cell)}
+    filled = column.filled
     if not filled or not all(map(parse_time, filled)):
         return False
     return simple(column.header) in TIME_HEADERS or any(map(says_half_of_day, filled))

@@ -35,6 +35,10 @@ _SHORT_YEAR = re.compile(r"([0-9]{1,2})([-/.])\s?([0-9]{1,2})\2\s?([0-9]{1,2})")
 _MONTH_ROW = re.compile(r"([0-9]{4})[-/]([0-9]{1,2})|([0-9]{1,2})[-/]([0-9]{4})")
 _AMOUNT = re.compile(r"-?[0-9]+(?:[.,][0-9]+)?")
 _YEAR_ROW = re.compile(r"([0-9]{4})(?:[.,]0{1,6})?")
+_NO_YEAR = re.compile(r"-?[0-9]{1,3}(?:\.[0-9]+)?|-?[0-9]{5,9}(?:\.[0-9]+)?")
+_ISO_AND_TIME = re.compile(
+    r"([0-9]{4})-([0-9]{2})-([0-9]{2})[T ]([01][0-9]|2[0-3]):([0-5][0-9])(?::[0-5][0-9])?Z?"
+)
 _LEADING_WORD = re.compile(r"([^\W\d_]+)\.?,?\s+(\S.*)")
 _TRAILING_WORD = re.compile(r"(.*[0-9])[\s,]+\(?([^\W\d_]+)\.?\)?")
 _NAMED = re.compile(r"[\w\s.,/'-]+")
@@ -97,6 +101,13 @@ def parse_day(text: str) -> DayToken | None:
         return DayToken("day", (int(match[1]), int(match[2]), int(match[3])))
     if _AMOUNT.fullmatch(text):
         return _year_row(text)
+    match = _ISO_AND_TIME.fullmatch(text)
+    if match:
+        return DayToken(
+            "day",
+            (int(match[1]), int(match[2]), int(match[3])),
+            clock=time(int(match[4]), int(match[5])),
+        )
     if len(text) > _LONGEST or len(text) < 4 or not any(map(str.isdecimal, text)):
         return None
     text = plain_marks(text)
@@ -108,6 +119,26 @@ def parse_day(text: str) -> DayToken | None:
     if token is None or token.period != "day":
         return None
     return DayToken("day", token.settled, token.open, token.short_year, clock)
+
+
+def is_iso(text: str) -> bool:
+    """Whether a text has the shape ``2031-03-04``."""
+    return len(text) == 10 and _ISO.fullmatch(text) is not None
+
+
+def is_no_year(text: str) -> bool:
+    """Whether a text is plainly a number, and none of four digits, so that it is no day, month or year."""
+    return _NO_YEAR.fullmatch(text) is not None
+
+
+def iso_day(text: str) -> date | str:
+    """The day of a text for which ``is_iso`` holds, or why it is none."""
+    if int(text[:4]) not in DAILY_YEARS:
+        return "day out of range"
+    try:
+        return date.fromisoformat(text)
+    except ValueError:
+        return "no such day"
 
 
 def parse_time(text: str) -> time | None:

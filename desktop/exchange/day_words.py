@@ -49,6 +49,30 @@ INDEX_HEADERS = frozenset(
     ("", "#", "index", "id", "no", "nr", "n", "row", "line", "number", "nummer", "numero", "unnamed 0")
 )
 
+NAME_HEADERS = _words(
+    """
+    measure measures measurement metric variable parameter quantity
+    messgrosse messwert kennzahl grandeur mesure indicateur parametre magnitud medida parametro
+    """
+)
+"""Headers of a column that names the measure of each row: there is a row a reading."""
+
+UNIT_HEADERS = _words("unit units einheit einheiten unite unites unidad unidades uom")
+
+SLOT_HEADERS = _words("slot slots")
+
+STATUS_HEADERS = _words("status")
+
+_PARTS_OF_DAY: dict[str, tuple[str, ...]] = {
+    "morning": ("morning", "am", "morgen", "morgens", "fruh", "vormittag", "matin", "manana"),
+    "midday": ("midday", "noon", "mittag", "mittags", "midi", "mediodia"),
+    "afternoon": ("afternoon", "nachmittag", "nachmittags", "apres-midi", "tarde"),
+    "evening": ("evening", "pm", "abend", "abends", "soir"),
+    "night": ("night", "nacht", "nachts", "nuit", "noche"),
+}
+PARTS_OF_DAY: dict[str, str] = {word: part for part, words in _PARTS_OF_DAY.items() for word in words}
+"""The slot that a word for a part of the day means."""
+
 TOTAL_WORDS = _words(
     """
     total totals subtotal sum sums average avg mean median summe gesamt mittel mittelwert durchschnitt

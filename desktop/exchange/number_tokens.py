@@ -36,6 +36,8 @@ _MARKS = str.maketrans(
     }
 )
 _PLAIN = re.compile(r"-?[0-9]+", re.ASCII)
+_PLAIN_POINT = re.compile(r"-?[0-9]{1,9}\.[0-9]{1,9}")
+_SHOWS_POINT = re.compile(r"-?[0-9]+\.(?:[0-9]{1,2}|[0-9]{4,20})")
 _NUMBER = re.compile(r"([+-]?)([0-9][0-9.,' ]*[0-9]|[0-9]|[.,][0-9]+)\s*(.*)", re.DOTALL)
 _WORD = re.compile(r"[^\W\d_]{1,15}\.?")
 _NOT_EXACT = re.compile(r"(?:[~≈<>≤≥]=?|(?:ca|about|approx|circa|etwa|env)\.?\s)\s*[+-]?[.,]?[0-9].*", re.I)
@@ -104,7 +106,9 @@ def decide_decimal_mark(tokens: Iterable[str]) -> DecimalMark | None:
     shown: set[DecimalMark] = set()
     undecided = False
     for token in tokens:
-        if "." in token or "," in token or not token.isascii():
+        if _SHOWS_POINT.fullmatch(token):
+            shown.add(".")
+        elif "." in token or "," in token or not token.isascii():
             body = _body(plain_marks(token))
             mark = _mark_shown(body)
             if mark:
@@ -141,6 +145,8 @@ def read_number(text: str, decimal: DecimalMark = ".") -> NumberToken | Refusal:
         ``other decimal mark``, ``unknown unit``, ``unclear duration``, ``out of range``.
     """
     if len(text) < 10 and _PLAIN.fullmatch(text):
+        return NumberToken("number", float(text) + 0.0)
+    if decimal == "." and _PLAIN_POINT.fullmatch(text):
         return NumberToken("number", float(text) + 0.0)
     if is_blank(text):
         return Refusal("blank")

@@ -4,9 +4,11 @@ from __future__ import annotations
 
 import csv
 import re
-from collections.abc import Callable, Iterable, Iterator
+from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 from io import StringIO
+from itertools import zip_longest
+from typing import overload
 
 from desktop.errors import ExchangeError
 from desktop.exchange.day_tokens import parse_day
@@ -23,7 +25,49 @@ _LOOKED_AT = 1_000
 _MOST_JOINED = 20
 _BLANKS = re.compile(r"[^\S\n]")
 
+LEAST_RECTANGLE = 200
+"""From this many lines on, rows of equal length are cut all at once."""
+
 Row = list[str]
+Cells = tuple[str, ...]
+
+
+class Rectangle(Sequence[Row]):
+    """Rows of equal length, kept as columns."""
+
+    def __init__(self, columns: Sequence[Cells]) -> None:
+        self.columns = tuple(columns)
+
+    def __len__(self) -> int:
+        return len(self.columns[0])
+
+    @overload
+    def __getitem__(self, place: int) -> Row: ...
+    @overload
+    def __getitem__(self, place: slice) -> Rectangle: ...
+    def __getitem__(self, place: int | slice) -> Row | Rectangle:
+        if isinstance(place, slice):
+            return Rectangle([column[place] for column in self.columns])
+        return [column[place] for column in self.columns]
+
+    def __iter__(self) -> Iterator[Row]:
+        return map(list, zip(*self.columns, strict=True))
+
+
+def columns_of(rows: Sequence[Row], width: int | None = None) -> list[Cells]:
+    """The columns of rows of any length, with ``""`` where a row is too short.
+
+    Args:
+        rows: the rows.
+        width: how many columns; as many as the longest row has when left out.
+    """
+    if isinstance(rows, Rectangle):
+        return list(rows.columns[:width])
+    columns: list[Cells] = list(zip_longest(*rows, fillvalue=""))
+    if width is None:
+        return columns
+    missing = width - len(columns)
+    return [*columns[:width], *([("",) * len(rows)] * missing)]
 
 
 @dataclass(frozen=True)
@@ -38,7 +82,7 @@ class Rows:
     """
 
     separator: str
-    cells: list[Row]
+    cells: Sequence[Row]
     lines: list[int]
     broken: frozenset[int]
 
@@ -55,17 +99,40 @@ def split_rows(text: str) -> Rows:
     if text.count("\n") > _MOST_LINES:
         raise _too_large("rows", MOST_ROWS, text.count("\n"))
     lines = text.split("\n")
-    for number, line in enumerate(lines, start=1):
-        if len(line) > _LONGEST_LINE:
-            raise _too_large("cell", LONGEST_CELL, len(line), number)
+    if max(map(len, lines)) > _LONGEST_LINE:
+        number = next(number for number, line in enumerate(lines, 1) if len(line) > _LONGEST_LINE)
+        raise _too_large("cell", LONGEST_CELL, len(lines[number - 1]), number)
     separator = choose_separator(lines)
     if '"' not in text:
+        rectangle = _rectangle(text, lines, separator)
+        if rectangle is not None:
+            return Rows(separator, rectangle, list(range(1, len(rectangle) + 1)), frozenset())
         return _kept(separator, _plain_records(text, lines, separator), ())
     try:
         return _kept(separator, _strict_records(text, separator), ())
     except csv.Error:
         broken: list[int] = []
         return _kept(separator, _line_records(lines, separator, broken), broken)
+
+
+def _rectangle(text: str, lines: list[str], separator: str) -> Rectangle | None:
+    """All rows at once where every line has as many cells as the others; None where they must be taken singly."""
+    while lines and not lines[-1]:
+        lines.pop()
+    if not LEAST_RECTANGLE <= len(lines) <= MOST_ROWS + 1:
+        return None
+    width = lines[0].count(separator) + 1
+    if width > MOST_COLUMNS or max(map(len, lines)) > LONGEST_CELL:
+        return None
+    if any(line.count(separator) != width - 1 for line in lines):
+        return None
+    flat = separator.join(lines).split(separator)
+    if _BLANKS.search(text):
+        flat = list(map(str.strip, flat))
+    columns = [tuple(flat[place::width]) for place in range(width)]
+    if "" in columns[0] and not all(map(any, zip(*columns, strict=True))):
+        return None
+    return Rectangle(columns)
 
 
 def choose_separator(lines: list[str]) -> str:

@@ -2,25 +2,28 @@
 
 from __future__ import annotations
 
+import re
 from collections import Counter
-from collections.abc import Sequence
+from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
-from itertools import zip_longest
+from functools import cached_property
 
 from desktop.errors import ExchangeError
-from desktop.exchange.day_tokens import DayToken, parse_day
+from desktop.exchange.day_tokens import DayToken, is_iso, is_no_year, parse_day
 from desktop.exchange.day_words import DAY_HEADERS, INDEX_HEADERS, is_total, simple
 from desktop.exchange.number_tokens import NumberToken, is_blank, read_number
-from desktop.exchange.rows import Row, split_rows
+from desktop.exchange.rows import Cells, Rectangle, Row, columns_of, split_rows
 from desktop.exchange.source_text import decode
-from desktop.exchange.units import split_header
+from desktop.exchange.units import known_unit, split_header
 
-Cells = tuple[str, ...]
+_BRACKETED = re.compile(r"[(\[]\s*(.+?)\s*[)\]]")
+_DAY_PATTERN = re.compile(r"[(\[]?(?:[dmyjat]{1,4}[-/. ]?){3}[)\]]?|dates?|days?|text|unit", re.IGNORECASE)
+"""What stands in a row of units over the days: ``yyyy-mm-dd``, ``TT.MM.JJJJ``, ``date``."""
 
 
 @dataclass(frozen=True)
 class SkippedLine:
-    """A line above the table: a title or a comment."""
+    """A line above the values: a title, a comment, or units under the header."""
 
     line: int
     text: str
@@ -42,6 +45,16 @@ class Column:
     header: str
     cells: Cells
 
+    @cached_property
+    def counts(self) -> Mapping[str, int]:
+        """How often each different text stands in it."""
+        return Counter(self.cells)
+
+    @cached_property
+    def filled(self) -> dict[str, int]:
+        """The same without the texts that say there is no value."""
+        return {text: number for text, number in self.counts.items() if not is_blank(text)}
+
 
 class DaySeen(dict[str, DayToken | None]):
     """What each different text is as a day; a log repeats few texts, so each is looked at once."""
@@ -49,19 +62,38 @@ class DaySeen(dict[str, DayToken | None]):
     def __init__(self) -> None:
         super().__init__()
         self._periods: dict[str, str] = {}
+        self._counted: dict[int, tuple[Sequence[str], int, int]] = {}
 
     def __missing__(self, text: str) -> DayToken | None:
         token = self[text] = parse_day(text)
         self._periods[text] = token.period if token else ""
         return token
 
+    def period(self, text: str) -> str:
+        """What a row with this text as its day stands for; ``""`` where it is none."""
+        if text not in self._periods:
+            self.__missing__(text)
+        return self._periods[text]
+
     def count(self, cells: Sequence[str], *, years: bool) -> int:
         """How many cells hold a day or month or, with ``years``, a year."""
-        for text in set(cells):
-            if text not in self:
+        known = self._counted.get(id(cells))
+        if known is None:
+            # The cells are kept too, so that no others can take their place in memory.
+            known = self._counted[id(cells)] = (cells, *self._count(cells))
+        return known[2] if years else known[1]
+
+    def _count(self, cells: Sequence[str]) -> tuple[int, int]:
+        periods = self._periods
+        for text in set(cells).difference(periods):
+            if is_iso(text):
+                periods[text] = "day"
+            elif is_no_year(text):
+                periods[text] = ""
+            else:
                 self.__missing__(text)
-        periods = Counter(map(self._periods.__getitem__, cells))
-        return periods["year"] if years else periods["day"] + periods["month"]
+        found = [periods[text] for text in cells]
+        return found.count("day") + found.count("month"), found.count("year")
 
 
 @dataclass(frozen=True)
@@ -111,38 +143,44 @@ def find_table(source: bytes) -> Table:
     text = decode(source)
     found = split_rows(text.text)
     seen = DaySeen()
-    if max(map(len, found.cells), default=0) < 2:
+    if _widest(found.cells) < 2:
         raise ExchangeError("not a table")
     place = _day_place(found.cells, seen)
     header, begins = _header_and_first(found.cells, place, seen)
+    header, begins, units = _with_units_row(found.cells, header, begins, seen)
     headers = _headers(found.cells, header, begins, place)
-    above = header if header is not None else begins
+    above = [number for number in range(begins) if number != header]
     rows = found.cells[begins:]
     return Table(
         separator=found.separator,
         encoding=text.encoding,
         encoding_guessed=text.guessed,
         header_line=None if header is None else found.lines[header],
-        columns=_columns(headers, rows),
+        columns=_columns(headers, units, rows),
         lines=found.lines[begins:],
         rows=rows,
         broken=found.broken,
         skipped=tuple(
-            SkippedLine(line, found.separator.join(cells))
-            for line, cells in zip(found.lines[:above], found.cells[:above], strict=True)
+            SkippedLine(found.lines[number], found.separator.join(found.cells[number])) for number in above
         ),
         seen=seen,
     )
 
 
+def _widest(rows: Sequence[Row]) -> int:
+    return len(rows.columns) if isinstance(rows, Rectangle) else max(map(len, rows), default=0)
+
+
 def _usual_width(rows: Sequence[Row]) -> int:
+    if isinstance(rows, Rectangle):
+        return len(rows.columns)
     widths = Counter(map(len, rows))
     return max(widths, key=lambda width: (widths[width], width))
 
 
 def _day_place(rows: Sequence[Row], seen: DaySeen) -> int | None:
     """The column most days stand in; years count only where the table has no days."""
-    columns = list(zip_longest(*rows, fillvalue=""))
+    columns = columns_of(rows)
     for years in (False, True):
         counts = [seen.count(column, years=years) for column in columns]
         if max(counts):
@@ -164,6 +202,36 @@ def _header_and_first(rows: Sequence[Row], place: int | None, seen: DaySeen) -> 
             break
         begins = above
     return None, begins
+
+
+def _with_units_row(
+    rows: Sequence[Row], header: int | None, begins: int, seen: DaySeen
+) -> tuple[int | None, int, Row]:
+    """The header and the first row of data once more, with the row of units between them, or ``[]``."""
+    if header is None:
+        return header, begins, []
+    if begins < len(rows) and _is_units(rows[begins], seen):
+        return header, begins + 1, rows[begins]
+    width = _usual_width(rows[begins:])
+    if header and not _names_days(rows[header], seen) and _is_units(rows[header], seen):
+        over = rows[header - 1]
+        if len(over) == len(rows[header]) and _is_header(over, width):
+            return header - 1, begins, rows[header]
+    return header, begins, []
+
+
+def _is_units(row: Row, seen: DaySeen) -> bool:
+    """Whether a row holds nothing but units, some of them known, and perhaps the pattern of the days."""
+    filled = [cell for cell in row if not is_blank(cell)]
+    known = [cell for cell in filled if known_unit(_bare(cell))]
+    others = [cell for cell in filled if cell not in known and not _DAY_PATTERN.fullmatch(cell)]
+    return bool(known) and not seen.count(filled, years=True) and all(_bare(cell) != cell for cell in others)
+
+
+def _bare(text: str) -> str:
+    """The text without the brackets around the whole of it."""
+    match = _BRACKETED.fullmatch(text)
+    return match.group(1) if match else text
 
 
 def _first_with_day(rows: Sequence[Row], place: int, seen: DaySeen) -> int:
@@ -222,18 +290,15 @@ def _headers(rows: Sequence[Row], header: int | None, begins: int, place: int | 
     return headers
 
 
-def _columns(headers: Sequence[str], rows: Sequence[Row]) -> tuple[Column, ...]:
-    width = len(headers)
-    if all(len(row) == width for row in rows):
-        cells: list[Cells] = list(zip(*rows, strict=True))
-    else:
-        padded = (row[:width] + [""] * (width - len(row)) for row in rows)
-        cells = list(zip(*padded, strict=True))
-    cells = cells or [()] * width
+def _columns(headers: Sequence[str], units: Row, rows: Sequence[Row]) -> tuple[Column, ...]:
+    cells = columns_of(rows, len(headers))
     names: list[str] = []
     columns: list[Column] = []
     for number, (header, column) in enumerate(zip(headers, cells, strict=True), start=1):
         name, unit = split_header(_unguarded(" ".join(header.split())))
+        if not unit and number <= len(units) and not _DAY_PATTERN.fullmatch(units[number - 1]):
+            bare = "" if is_blank(units[number - 1]) else _bare(units[number - 1])
+            unit = known_unit(bare) or bare
         names.append(_unique(name or f"column {number}", names))
         columns.append(Column(names[-1], unit, header, column))
     return tuple(columns)

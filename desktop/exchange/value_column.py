@@ -13,7 +13,6 @@ from desktop.exchange.number_tokens import (
     Refusal,
     decide_decimal_mark,
     in_unit,
-    is_blank,
     read_number,
 )
 from desktop.exchange.table import Column
@@ -49,7 +48,7 @@ class CellsRead:
 
 def holds_values(column: Column) -> bool:
     """Whether at least half of a column's filled cells are numbers or are meant as such."""
-    filled = {text: number for text, number in Counter(column.cells).items() if not is_blank(text)}
+    filled = column.filled
     numeric = sum(number for text, number in filled.items() if _is_meant_as_number(text))
     return numeric > 0 and 2 * numeric >= sum(filled.values())
 
@@ -76,11 +75,11 @@ def read_values(column: Column, decimal: DecimalMark | None, *, one_day: bool) -
     Raises:
         ExchangeError: ``which decimal mark``, with ``column``, ``choices`` and an ``example``.
     """
-    counts = {text: number for text, number in Counter(column.cells).items() if not is_blank(text)}
+    counts = column.filled
     mark = _settle_mark(column, counts, decimal)
     tokens = {text: read_number(text, mark) for text in counts}
     read = {text: token for text, token in tokens.items() if isinstance(token, NumberToken)}
-    blanks: dict[str, Outcome] = {text: None for text in column.cells if text not in counts}
+    blanks: dict[str, Outcome] = {text: None for text in column.counts if text not in counts}
     refused: dict[str, Outcome] = {text: token for text, token in tokens.items() if isinstance(token, Refusal)}
     unit = _settle_unit(column, read, counts)
     durations = any(token.kind == "duration" for token in read.values())

@@ -23,7 +23,8 @@ from PySide6.QtWidgets import (
 from analysis.log import MeasureKind, Missed
 from desktop.edits.bring_in import BroughtIn, bring_in
 from desktop.errors import ExchangeError
-from desktop.exchange.bring_in import ReadColumn, Reading, read_file
+from desktop.exchange.bring_in import read_file
+from desktop.exchange.reading import ReadColumn, Reading
 from desktop.journal.records import Entry, Measure
 from desktop.models.session import Session
 from desktop.wording.numbers import count, decimals_of
@@ -34,6 +35,7 @@ _ANSWERS = {
     "which decimal mark": "decimal",
     "which day column": "day_column",
     "which century": "century",
+    "which name column": "name_column",
 }
 """The argument of the importer that answers each of its questions."""
 

@@ -65,6 +65,8 @@ def choice_label(reason: str, choice: object) -> str:
         return _ORDERS[str(choice)].capitalize()
     if reason == "which decimal mark":
         return "Decimal point" if choice == "." else "Decimal comma"
+    if reason == "which name column":
+        return f"Yes, “{choice}”" if choice else "No, one measure"
     return str(choice)
 
 
@@ -83,6 +85,11 @@ def _listed(choices: object) -> str:
 def _either(choices: object, words: Mapping[str, str]) -> str:
     assert isinstance(choices, Sequence)
     return " or ".join(words.get(str(choice), str(choice)) for choice in choices)
+
+
+def _either_of(choices: object) -> str:
+    assert isinstance(choices, Sequence)
+    return " or ".join(f"“{choice}”" for choice in choices if choice)
 
 
 def _too_large(fields: Fields) -> str:
@@ -135,6 +142,13 @@ _QUESTIONS: dict[str, tuple[Callable[[Fields], str], str]] = {
     "which value column": (
         lambda fields: f"Which column holds the values: {_listed(fields['choices'])}?",
         "Say it with --measure COLUMN.",
+    ),
+    "which name column": (
+        lambda fields: (
+            f"Does the column {_either_of(fields['choices'])} say what each number is about, "
+            "so that each word in it is a measure of its own?"
+        ),
+        "Say it with --name-column COLUMN, or --name-column none.",
     ),
     "which day order": (
         lambda fields: f"The days can be read in more than one way: {_either(fields['choices'], _ORDERS)}?",

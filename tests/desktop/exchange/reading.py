@@ -5,7 +5,8 @@ from datetime import date
 import pytest
 
 from desktop.errors import ExchangeError
-from desktop.exchange.bring_in import Reading, choose_column, read_table
+from desktop.exchange.bring_in import choose_column, read_table
+from desktop.exchange.reading import Reading
 
 FIRST, SECOND, THIRD, FOURTH = (date(2024, 1, number) for number in (1, 2, 3, 4))
 

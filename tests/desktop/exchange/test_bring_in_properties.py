@@ -9,7 +9,8 @@ from hypothesis import HealthCheck, example, given, settings
 from hypothesis import strategies as st
 
 from desktop.errors import ExchangeError
-from desktop.exchange.bring_in import Reading, choose_column, read_table
+from desktop.exchange.bring_in import choose_column, read_table
+from desktop.exchange.reading import Reading
 
 ORDERS = {"dmy": "%d/%m/%Y", "mdy": "%m/%d/%Y", "ymd": "%Y-%m-%d"}
 SCRAPS = st.sampled_from(

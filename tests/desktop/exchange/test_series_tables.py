@@ -6,7 +6,8 @@ from datetime import date
 import pandas as pd
 import pytest
 
-from desktop.exchange.bring_in import Reading, read_table
+from desktop.exchange.bring_in import read_table
+from desktop.exchange.reading import Reading
 
 
 @pytest.fixture(scope="module")
