@@ -10,6 +10,10 @@ from desktop.models.background import Background
 from desktop.models.collector import Collector
 
 
+KNOTS = 1500
+"""More than the youngest generation waits for."""
+
+
 class Knot(QObject):
     """An object of the screen's thread that only the collector can free."""
 
@@ -21,7 +25,7 @@ class Knot(QObject):
 def test_garbage_of_the_screen_is_collected_on_its_own_thread(qtbot):
     collector, background = Collector(), Background()
     freed_on, done = [], []
-    for _ in range(50):
+    for _ in range(KNOTS):
         finalize(Knot(), lambda: freed_on.append(threading.current_thread()))
     for _ in range(2):
         # Far more objects than the collector waits for.
@@ -31,7 +35,7 @@ def test_garbage_of_the_screen_is_collected_on_its_own_thread(qtbot):
     assert done == [300_000, 300_000]
     assert freed_on == []
     collector.look()
-    assert freed_on == [threading.main_thread()] * 50
+    assert freed_on == [threading.main_thread()] * KNOTS
 
 
 def test_nothing_is_collected_before_it_is_due(qtbot, monkeypatch):
