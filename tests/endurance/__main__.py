@@ -23,6 +23,7 @@ from tests.endurance.faults import faults, recoveries
 from tests.endurance.figures import Figure
 from tests.endurance.kills import kills
 from tests.endurance.power import can_record, power_cuts
+from tests.endurance.saving import saving
 from tests.endurance.sessions import network, sessions, undo
 
 KEPT = Path(__file__).parents[2] / "resources" / "endurance.txt"
@@ -40,6 +41,7 @@ SHORT: tuple[Trial, ...] = (
     partial(undo, 20),
     full_disk,
     network,
+    partial(saving, 200),
 )
 LONG: tuple[Trial, ...] = (
     partial(kills, 4_000),
@@ -52,6 +54,7 @@ LONG: tuple[Trial, ...] = (
     partial(undo, 200),
     full_disk,
     network,
+    partial(saving, 1_000),
 )
 TRACED = {faults, power_cuts, recoveries, network}
 
