@@ -18,6 +18,7 @@ from functools import partial
 from multiprocessing import get_context
 from pathlib import Path
 
+from tests.endurance.changeovers import changeovers
 from tests.endurance.damage import flips, full_disk, pages
 from tests.endurance.faults import faults, recoveries
 from tests.endurance.figures import Figure
@@ -41,6 +42,7 @@ SHORT: tuple[Trial, ...] = (
     partial(undo, 20),
     full_disk,
     network,
+    partial(changeovers, 40),
     partial(saving, 200),
 )
 LONG: tuple[Trial, ...] = (
@@ -54,6 +56,7 @@ LONG: tuple[Trial, ...] = (
     partial(undo, 200),
     full_disk,
     network,
+    partial(changeovers, 600),
     partial(saving, 1_000),
 )
 TRACED = {faults, power_cuts, recoveries, network}

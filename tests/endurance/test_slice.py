@@ -5,12 +5,14 @@ from random import Random
 import pytest
 
 from tests.endurance.__main__ import LONG, SHORT, TRACED, _function, table
+from tests.endurance.changeovers import changeovers
 from tests.endurance.damage import flips, full_disk, pages
 from tests.endurance.disk import Disk
 from tests.endurance.faults import FAILING, lost_without_transaction
 from tests.endurance.figures import Figure
 from tests.endurance.kills import kills
 from tests.endurance.power import can_record, power_cuts
+from tests.endurance.saving import saving
 from tests.endurance.sessions import sessions, undo
 
 traced = pytest.mark.skipif(not can_record(), reason="this machine cannot trace a program")
@@ -24,10 +26,12 @@ traced = pytest.mark.skipif(not can_record(), reason="this machine cannot trace 
         lambda: pages(3),
         lambda: sessions(8),
         lambda: undo(3),
+        lambda: changeovers(5),
+        lambda: saving(20),
         full_disk,
         pytest.param(lambda: power_cuts(120), marks=traced),
     ],
-    ids=["kills", "flips", "pages", "sessions", "undo", "full disk", "power cuts"],
+    ids=["kills", "flips", "pages", "sessions", "undo", "changeovers", "saving", "full disk", "power cuts"],
 )
 def test_nothing_is_lost_and_the_control_finds_what_it_must(trial):
     figure = trial()
