@@ -46,17 +46,17 @@ SHORT: tuple[Trial, ...] = (
     partial(saving, 200),
 )
 LONG: tuple[Trial, ...] = (
-    partial(kills, 4_000),
-    partial(power_cuts, 8_000),
+    partial(kills, 3_000),
+    partial(power_cuts, 6_000),
     partial(faults, 1),
-    partial(recoveries, 20),
-    partial(pages, 300),
-    partial(flips, 6_000),
-    partial(sessions, 600),
-    partial(undo, 200),
+    partial(recoveries, 8),
+    partial(pages, 120),
+    partial(flips, 3_000),
+    partial(sessions, 400),
+    partial(undo, 100),
     full_disk,
     network,
-    partial(changeovers, 600),
+    partial(changeovers, 200),
     partial(saving, 1_000),
 )
 TRACED = {faults, power_cuts, recoveries, network}

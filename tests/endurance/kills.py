@@ -13,6 +13,9 @@ from desktop.storage.store import Store
 from tests.endurance.figures import Figure, folder
 from tests.endurance.writer import AS_IT_IS, NO_TRANSACTION, TOLD_TOO_EARLY, start, write
 
+FRESH = 100
+"""Kills a journal takes before another one is begun: it grows, and opening it would take most of the time."""
+
 
 def kills(many: int, seed: int = 1) -> Figure:
     """The journal as it is, and two ways of writing that must be found out."""
@@ -31,14 +34,19 @@ def kills(many: int, seed: int = 1) -> Figure:
 
 def trial(many: int, how: str, seed: int) -> tuple[int, int]:
     """How many of so many kills left something wrong, and how many steps were written in all."""
-    with folder() as place:
-        path = place / "log.dayfence"
-        start(path)
-        random, told, wrong = Random(seed), 0, 0
-        for kill in range(many):
-            told, good = killed_once(path, how, random, told, whole=kill % 10 == 9 or kill == many - 1)
-            wrong += not good
-        return wrong, told
+    random, wrong, steps = Random(seed), 0, 0
+    for first in range(0, many, FRESH):
+        with folder() as place:
+            path = place / "log.dayfence"
+            start(path)
+            told = 0
+            for kill in range(min(FRESH, many - first)):
+                told, good = killed_once(path, how, random, told, whole=kill % 10 == 9)
+                wrong += not good
+            steps += told
+            with Store.open(path) as store:
+                store.verify()
+    return wrong, steps
 
 
 def first_found(how: str, most: int) -> int:
