@@ -9,7 +9,6 @@ from PySide6.QtCore import QObject
 from desktop.models.background import Background
 from desktop.models.collector import Collector
 
-
 KNOTS = 1500
 """More than the youngest generation waits for."""
 
