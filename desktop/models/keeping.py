@@ -102,8 +102,10 @@ class Keeping(QObject):
             self.copied.emit(copy)
 
     def _found(self, error: Exception) -> None:
-        is_damage = isinstance(error, StorageError) and error.reason == "damaged"
-        (self.damaged if is_damage else self.not_copied).emit(error)
+        if isinstance(error, StorageError) and error.reason == "damaged":
+            self.damaged.emit(error)
+        elif not self._session.read_only:
+            self.not_copied.emit(error)
 
 
 def _nothing(_: object) -> None:
