@@ -187,6 +187,12 @@ def test_the_newest_good_copy(store: Store, path: Path) -> None:
     found = newest_good(copies_of(path))
     assert found is not None
     assert found[0] == first
+    # Altered so that only the history tells.
+    connection = sqlite3.connect(first.path)
+    connection.execute("UPDATE measure SET title = 'other'")
+    connection.commit()
+    connection.close()
+    assert newest_good(copies_of(path)) is None
     first.path.write_bytes(b"")
     assert newest_good(copies_of(path)) is None
 
