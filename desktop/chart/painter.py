@@ -8,15 +8,13 @@ from __future__ import annotations
 from collections.abc import Iterable
 from dataclasses import dataclass
 
-import numpy as np
-from numpy.typing import NDArray
 from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
-from PySide6.QtGui import QBrush, QFont, QFontMetricsF, QPainter, QPen, QPolygonF
+from PySide6.QtGui import QBrush, QFont, QFontMetricsF, QPainter, QPen
 
-from desktop.chart.picture import SHAPES, EndLabel, LanePart, Line, Picture
+from desktop.chart.days import paint_days
+from desktop.chart.picture import EndLabel, LanePart, Line, Picture
 from desktop.chart.style import Style
 from desktop.chart.ticks import day_ticks, value_ticks
-from desktop.chart.values import Places, paint_values
 
 LANE_LINES = 1.9
 """Height of the lane, in lines of text."""
@@ -28,9 +26,6 @@ BELOW_LINES_BARE = 2.0
 """The same without the days, where another chart stands under this one."""
 
 _TICK_STRIP = 0.7
-_LEAST_JOINED = 7
-"""Days nearer to one another than this part of a letter are not joined: the lines would hide the days."""
-_LEAST_RIMMED = 1.8
 _FIRST_NAME = 0.6
 """The part of the room that a change's name takes where named days begin on the same day."""
 
@@ -77,7 +72,7 @@ def paint_plot(painter: QPainter, frame: Frame, picture: Picture, style: Style) 
     painter.setPen(QPen(style.look.colour("ink"), style.size / 9))
     for day in picture.uprights:
         painter.drawLine(QLineF(frame.x(day), frame.rect.top(), frame.x(day), frame.rect.bottom()))
-    _days(painter, frame, picture, style)
+    paint_days(painter, frame.rect, (frame.x0, frame.x1, frame.y0, frame.y1), picture, style)
     _edge_words(painter, frame, picture, style)
     painter.restore()
 
@@ -273,92 +268,6 @@ def _levels(painter: QPainter, frame: Frame, lines: Iterable[Line], style: Style
             pen = QPen(style.side(line.side), style.size / 11, dashes)
         painter.setPen(pen)
         painter.drawLine(QLineF(frame.x(line.x0), frame.y(line.y), frame.x(line.x1), frame.y(line.y)))
-
-
-def _days(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:
-    marks = picture.marks
-    seen = (marks.x >= frame.x0 - 1) & (marks.x <= frame.x1 + 1)
-    if not seen.any():
-        return
-    x = frame.rect.left() + (marks.x - frame.x0) / (frame.x1 - frame.x0) * frame.rect.width()
-    y = frame.rect.bottom() - (marks.y - frame.y0) / (frame.y1 - frame.y0) * frame.rect.height()
-    one = frame.rect.width() / max(int(seen.sum()), 1)
-    if one >= style.size / _LEAST_JOINED:
-        _joins(painter, x, y, marks.joined, seen, style)
-    radius = min(max(one * 0.4, style.size / 11), style.size / 3.1)
-    for place, name in enumerate(SHAPES):
-        chosen = seen & (marks.shape == place)
-        if chosen.any():
-            _shapes(painter, name, x[chosen], y[chosen], marks.is_zero[chosen], radius, style)
-    paint_values(painter, frame.rect, picture, Places(x, y, radius), style)
-
-
-def _joins(
-    painter: QPainter,
-    x: NDArray[np.float64],
-    y: NDArray[np.float64],
-    joined: NDArray[np.bool_],
-    seen: NDArray[np.bool_],
-    style: Style,
-) -> None:
-    """Thin lines between neighbouring days, broken at every blank."""
-    painter.setPen(QPen(style.look.colour("quiet", 150), 1 if style.size > 9 else 0.5))
-    painter.setBrush(Qt.BrushStyle.NoBrush)
-    places = np.flatnonzero(seen)
-    breaks = np.flatnonzero(~joined[places])
-    for run in np.split(places, breaks):
-        if len(run) > 1:
-            painter.drawPolyline(QPolygonF([QPointF(x[at], y[at]) for at in run]))
-
-
-def _shapes(
-    painter: QPainter,
-    name: str,
-    x: NDArray[np.float64],
-    y: NDArray[np.float64],
-    is_zero: NDArray[np.bool_],
-    radius: float,
-    style: Style,
-) -> None:
-    """All marks of one shape; a counted zero is hollow."""
-    look = style.look
-    paper = QBrush(look.colour("paper"))
-    thin = max(radius * 0.45, 0.6)
-    for at_x, at_y, zero in zip(x.tolist(), y.tolist(), is_zero.tolist(), strict=True):
-        match name:
-            case "before":
-                colour = look.colour("before")
-                # A rim of paper parts marks that touch; of a very small one it would leave nothing.
-                is_rimmed = not zero and radius > _LEAST_RIMMED
-                painter.setPen(QPen(look.colour("paper"), thin * 0.5) if is_rimmed else QPen(colour, thin))
-                painter.setBrush(paper if zero else QBrush(colour))
-                painter.drawEllipse(QPointF(at_x, at_y), radius, radius)
-            case "after":
-                colour = look.colour("after")
-                painter.setPen(QPen(colour, thin))
-                painter.setBrush(paper)
-                side = radius * (1.3 if zero else 1.8)
-                painter.drawRect(QRectF(at_x - side / 2, at_y - side / 2, side, side))
-            case "above" | "below":
-                _triangle(painter, at_x, at_y, radius * 1.55, up=name == "above", hollow=zero, style=style)
-            case "set aside":
-                painter.setPen(QPen(look.colour("ink"), thin))
-                for lean in (-radius, radius):
-                    painter.drawLine(QLineF(at_x - radius, at_y - lean, at_x + radius, at_y + lean))
-            case _:
-                painter.setPen(QPen(look.colour("quiet"), thin))
-                painter.setBrush(paper)
-                painter.drawEllipse(QPointF(at_x, at_y), radius * 0.85, radius * 0.85)
-
-
-def _triangle(painter: QPainter, x: float, y: float, size: float, *, up: bool, hollow: bool, style: Style) -> None:
-    tip = -size if up else size
-    ink = style.look.colour("ink")
-    is_rimmed = not hollow and size > _LEAST_RIMMED
-    painter.setPen(QPen(style.look.colour("paper") if is_rimmed else ink, max(size * 0.2, 0.6)))
-    painter.setBrush(QBrush(style.look.colour("paper") if hollow else ink))
-    base = y - tip * 0.75
-    painter.drawPolygon(QPolygonF([QPointF(x, y + tip), QPointF(x - size, base), QPointF(x + size, base)]))
 
 
 def _edge_words(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:

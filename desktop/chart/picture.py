@@ -18,6 +18,7 @@ from analysis.batch.fences import FEWEST_TO_DRAW
 from analysis.log import Period
 from analysis.points import Points
 from analysis.questions.did_it_move import CLAIMS
+from desktop.chart.spoken import Spoken
 from desktop.journal.journal import Journal
 from desktop.journal.records import Measure
 from desktop.wording.days import DayWords, long_day
@@ -60,7 +61,7 @@ class Marks:
     is_zero: NDArray[np.bool_]
     joined: NDArray[np.bool_]
     labels: dict[int, str]
-    spoken: tuple[str, ...]
+    spoken: Sequence[str]
 
 
 SHAPES: tuple[Shape, ...] = ("before", "after", "uncounted", "above", "below", "set aside")
@@ -245,10 +246,12 @@ class _Composer:
                 for at in outside
                 if values[at] != 0 or not is_zero[at]
             }
-        spoken = tuple(
-            self._spoken(int(start), float(value), int(one))
-            for start, value, one in zip(starts, values, shape, strict=True)
-        )
+
+        def tell(place: int) -> str:
+            if place < len(starts):
+                return self._spoken(int(starts[place]), float(values[place]), int(shape[place]))
+            return self._spoken_aside(*aside[place - len(starts)])
+
         aside = [(entry.day.toordinal(), entry.value) for entry in self.entries if entry.kind == "set aside"]
         if aside and self.points.period == "day":
             x = np.r_[x, [float(day) for day, _ in aside]]
@@ -256,8 +259,7 @@ class _Composer:
             shape = np.r_[shape, np.full(len(aside), SHAPES.index("set aside"), dtype=np.int8)]
             is_zero = np.r_[is_zero, np.zeros(len(aside), dtype=bool)]
             joined = np.r_[joined, np.zeros(len(aside), dtype=bool)]
-            spoken += tuple(self._spoken_aside(day, value) for day, value in aside)
-        return Marks(x, values, shape, is_zero, joined, labels, spoken)
+        return Marks(x, values, shape, is_zero, joined, labels, Spoken(len(x), tell))
 
     def _outside(self) -> tuple[Sequence[int], Sequence[int]]:
         """Days beyond the baseline's fences: its own, and the days after beyond the carried ones."""

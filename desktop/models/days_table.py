@@ -62,6 +62,7 @@ class DaysTable(QAbstractTableModel):
         self._session = session
         self._unread: dict[DayCell, Unread] = {}
         self._measures: list[Measure] = []
+        self._written: dict[int, tuple[date, date]] = {}
         self._first = session.today
         self._rows = 0
         self.quiet_colour = QColor(110, 110, 110)
@@ -298,6 +299,7 @@ class DaysTable(QAbstractTableModel):
     def _follow(self, changes: tuple[RowChange, ...]) -> None:
         """Show what an edit changed: a few rows, or everything when the columns or the first day may be others."""
         records = [change.record for change in changes]
+        self._written.clear()
         days = [record.day for record in records if isinstance(record, Entry | DayNote)]
         may_be_others = not changes or any(isinstance(record, Measure) for record in records)
         if may_be_others or (days and not self._holds(min(days), max(days))):
@@ -363,10 +365,10 @@ class DaysTable(QAbstractTableModel):
 
     def _is_passed(self, measure: Measure, day: date) -> bool:
         """Whether a day lies between the first and the last one written down for a measure."""
-        by_day = self._session.journal.entries.get(measure.id)
-        if not by_day:
-            return False
-        first, last = min(by_day)[0], max(by_day)[0]
+        if measure.id not in self._written:
+            by_day = self._session.journal.entries.get(measure.id)
+            self._written[measure.id] = (min(by_day)[0], max(by_day)[0]) if by_day else (date.max, date.min)
+        first, last = self._written[measure.id]
         return first <= day <= last
 
 

@@ -48,6 +48,7 @@ class Session(QObject):
         save_failed: a write failed with this error; nothing was written since.
         measure_chosen: another measure is on the chart.
         reviewed: the review of the measure on the chart is new.
+        history_read: what can be taken back is known; a long history is read after the window is up.
         weighed: the answers for other choices of days are there, a moment after the review they belong to.
     """
 
@@ -57,6 +58,7 @@ class Session(QObject):
     measure_chosen = Signal(int)
     reviewed = Signal(object)
     weighed = Signal(tuple)
+    history_read = Signal()
 
     def __init__(
         self, store: Store, *, now: Callable[[], datetime] = datetime.now, parent: QObject | None = None
@@ -69,13 +71,14 @@ class Session(QObject):
         self._store = store
         self._writer = Background(self)
         self._reviewer = Background(self)
-        self._history = UndoHistory(store.steps(STEPS_KEPT))
+        self._history = UndoHistory()
+        # Steps made before a long history is read; None once it is.
+        self._made_before_history: list[Step] | None = []
         self._ids = Ids(store.highest_ids())
         self._steps = store.last_step_number
         self._unsaved: list[tuple[Edit, StepKind, int | None]] = []
         self._writing = 0
-        last = store.steps(1)
-        self.saved_at = last[-1].at if last else ""
+        self.saved_at = store.last_at
         self._blocked: Exception | None = None
         self._others = OtherMeasures()
         self._generation = 0
@@ -89,6 +92,11 @@ class Session(QObject):
         self.measure: int | None = columns[0].id if columns else None
         self.period: Period | None = None
         self.review: Review | None = None
+        if store.last_change_number <= _AT_ONCE:
+            self._receive_history(store.steps(STEPS_KEPT))
+        else:
+            # Days and answer are shown first; what can be taken back follows.
+            self._writer.run(partial(store.steps, STEPS_KEPT), self._receive_history, self._go_without_history)
 
     @property
     def today(self) -> date:
@@ -158,7 +166,8 @@ class Session(QObject):
             StorageError: the file cannot be read either.
         """
         self.journal = self._store.read()
-        self._history = UndoHistory(self._store.steps(STEPS_KEPT))
+        self._made_before_history = []
+        self._receive_history(self._store.steps(STEPS_KEPT))
         self._steps = self._store.last_step_number
         self._unsaved, self._blocked = [], None
         self._others.forget(())
@@ -231,7 +240,10 @@ class Session(QObject):
         self._others.forget(edit.changes)
         self._steps += 1
         at = self.now().isoformat(timespec="seconds")
-        self._history.record(Step(self._steps, at, kind, edit.act, of, edit.changes))
+        step = Step(self._steps, at, kind, edit.act, of, edit.changes)
+        self._history.record(step)
+        if self._made_before_history is not None:
+            self._made_before_history.append(step)
         self._write(edit, kind, of)
         self._settle_measure()
         self.edited.emit(edit.changes)
@@ -264,6 +276,17 @@ class Session(QObject):
         if self._blocked is None:
             self._blocked = error
             self.save_failed.emit(error)
+
+    def _receive_history(self, steps: list[Step]) -> None:
+        if self._made_before_history is None:
+            return  # The file was read anew meanwhile.
+        self._history = UndoHistory([*steps, *self._made_before_history])
+        self._made_before_history = None
+        self.history_read.emit()
+
+    def _go_without_history(self, _error: Exception) -> None:
+        """The check of the whole file, which runs beside this, says what is wrong with it."""
+        self._made_before_history = None
 
     def _settle_measure(self) -> None:
         """Keep a measure on the chart when one is added or the one shown is removed."""

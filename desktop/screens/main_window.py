@@ -282,6 +282,7 @@ class MainWindow(QMainWindow):
         session.save_failed.connect(self._follow_session)
         session.measure_chosen.connect(self._follow_session)
         session.reviewed.connect(self._show_review)
+        session.history_read.connect(self._menus.follow)
         session.weighed.connect(self.workspace.findings.show_choices)
         self._apply_theme()
         self.workspace.days.show_days(table)

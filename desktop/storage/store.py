@@ -143,6 +143,17 @@ class Store:
         return self._last.step
 
     @property
+    def last_at(self) -> str:
+        """Local clock time of the last step in the file, ISO 8601; ``""`` in one without a history.
+
+        Raises:
+            StorageError: the file cannot be read.
+        """
+        with self._database.reading() as connection:
+            found = connection.execute('SELECT "at" FROM "history" ORDER BY "seq" DESC LIMIT 1').fetchone()
+        return str(found[0]) if found else ""
+
+    @property
     def last_change_number(self) -> int:
         """Number of the last row change seen or written."""
         return self._last.seq

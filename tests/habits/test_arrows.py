@@ -37,7 +37,8 @@ ALLOWED: dict[str, set[str]] = {
     "desktop.edits": {"analysis", "desktop.journal", "desktop.storage"},
     "desktop.command": BELOW_THE_WINDOW,
     "desktop.models": BELOW_THE_WINDOW | {"PySide6"},
-    "desktop.chart.picture": {"analysis", "desktop.journal", "desktop.wording", "numpy"},
+    "desktop.chart.picture": {"analysis", "desktop.chart.spoken", "desktop.journal", "desktop.wording", "numpy"},
+    "desktop.chart.spoken": set(),
     "desktop.chart.ticks": {"desktop.wording"},
     "desktop.chart": {
         "analysis",
