@@ -24,6 +24,9 @@ _LEAST_EACH = 10
 _LEAST_MIDDLE = 3.5
 """Middles stand apart by at least this part of a letter."""
 
+_AMONG_MIDDLES = 5
+"""Days outside the fences keep marks of this part of a letter among the middles."""
+
 _WEEK = 7
 
 _Edges = tuple[float, float, float, float]
@@ -56,6 +59,7 @@ def paint_days(painter: QPainter, rect: QRectF, edges: _Edges, picture: Picture,
         beneath = sum(edge == "above" for edge, _ in picture.edge_words)
         _say_what_they_are(painter, rect, weeks, beneath, style)
         told_apart = seen & ~plain
+        radius = style.size / _AMONG_MIDDLES
     elif one >= style.size / _LEAST_JOINED:
         _joins(painter, x, y, marks.joined, seen, style)
     for place, name in enumerate(SHAPES):

@@ -1,7 +1,7 @@
 """Starts a window of our own or a bare one, and says when it was painted and how much memory it took.
 
-``python -m tests.bench.window_start ours|bare JOURNAL`` prints seconds from the start of Python to the first paint,
-to the chart (or an empty plot) painted, and the resident memory then in megabytes.
+``python -m tests.bench.window_start ours|bare JOURNAL`` prints seconds from the start of Python to the first
+paint, to the chart (or an empty plot) painted, and the resident memory then in megabytes.
 """
 
 from __future__ import annotations
