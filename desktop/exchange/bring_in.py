@@ -3,9 +3,11 @@
 from __future__ import annotations
 
 from collections import Counter
-from collections.abc import Iterable, Iterator, Mapping, Sequence
+from collections.abc import Callable, Iterable, Iterator, Mapping, Sequence
 from dataclasses import replace
 from datetime import date, time
+from itertools import compress, islice
+from operator import lt, not_
 from pathlib import Path
 from typing import NamedTuple, cast
 
@@ -24,6 +26,10 @@ from desktop.exchange.units import split_header
 from desktop.exchange.value_column import read_values
 
 
+def _untold(_: float) -> None:
+    """Nobody asks how far the reading is."""
+
+
 def read_file(
     path: Path,
     *,
@@ -33,6 +39,7 @@ def read_file(
     columns: Sequence[str] | None = None,
     century: int | None = None,
     name_column: str | None = None,
+    told: Callable[[float], None] = _untold,
 ) -> Reading:
     """Read the table in a file; the arguments and errors are those of ``read_table``.
 
@@ -47,6 +54,7 @@ def read_file(
         columns=columns,
         century=century,
         name_column=name_column,
+        told=told,
     )
 
 
@@ -59,6 +67,7 @@ def read_table(
     columns: Sequence[str] | None = None,
     century: int | None = None,
     name_column: str | None = None,
+    told: Callable[[float], None] = _untold,
 ) -> Reading:
     """Read a table of days and values.
 
@@ -73,6 +82,8 @@ def read_table(
         century: the century of years with two digits, 1900 or 2000.
         name_column: the column that says which measure a row is about, ``""`` for none.
 
+        told: is called between the steps with the share of them that is done; what it raises ends the reading.
+
     Raises:
         ExchangeError: the file is no table that can be read (``workbook``, ``not text``, ``empty``,
             ``too large``, ``not a table``, ``no day column``, ``no value column``, ``no days read``),
@@ -80,12 +91,17 @@ def read_table(
             column``, ``which name column``, ``which day order``, ``which century``, ``which decimal mark``,
             with ``choices``).
     """
+    told(0.1)
     table = find_table(source)
+    told(0.5)
     days = read_days(table, day_order=day_order, day_column=day_column, century=century)
+    told(0.6)
     roles = find_roles(table, days, name_column)
     lanes = wanted_lanes(table, days, roles, columns)
-    row_days, whole = _row_days(table, days, roles)
-    if len(whole) == len(row_days):
+    is_once = days.all_days and _all_different(cast("Sequence[date]", days.days))
+    whole = {} if is_once and _is_regular(table) else _whole_rows(table, days, roles)
+    told(0.8)
+    if len(whole) == len(days.days):
         counted = Counter(fate.reason for fate in whole.values())
         raise ExchangeError("no days read", column=table.columns[days.place].name, reasons=dict(counted))
     if roles.one_column is not None:
@@ -94,7 +110,7 @@ def read_table(
     read_columns = tuple(
         column
         for lane in lanes
-        for column in _read_lane(table, lane, roles, row_days, whole, decimal, one_day=days.period == "day")
+        for column in _read_lane(table, days, lane, roles, whole, decimal, is_once=is_once)
     )
     if not read_columns:
         raise ExchangeError("no value column", columns=[column.name for column in table.columns])
@@ -158,19 +174,22 @@ def _named(reading: Reading, name: str) -> ReadColumn:
     raise ExchangeError("unknown column", name=name, choices=[column.name for column in reading.columns])
 
 
-def _row_days(table: Table, days: DaysRead, roles: Roles) -> tuple[list[date | str], dict[int, Fate]]:
-    """The day of each row, or why it has none; and by its place each row that is set aside as a whole."""
-    texts = table.columns[days.place].cells
-    row_days = list(map(days.days.__getitem__, texts))
-    suspects = _suspects(table, days, row_days, roles)
-    whole: dict[int, Fate] = {}
-    if suspects is None:
-        return row_days, whole
+def _all_different(days: Sequence[date]) -> bool:
+    return all(map(lt, days, islice(days, 1, None))) or len(set(days)) == len(days)
+
+
+def _is_regular(table: Table) -> bool:
+    return isinstance(table.rows, Rectangle) and not table.broken
+
+
+def _whole_rows(table: Table, days: DaysRead, roles: Roles) -> dict[int, Fate]:
+    """By its place each row that is set aside as a whole, since it has no day or does not fit."""
     width = len(table.columns)
     needed = max((_place_of(table, lane.column) for lane in roles.lanes), default=0) + 1
+    whole: dict[int, Fate] = {}
     seen: set[tuple[str, ...]] = set()
-    for place in suspects:
-        row, day = table.rows[place], row_days[place]
+    for place in _suspects(table, days, roles):
+        row, day = table.rows[place], days.days[place]
         fits = len(row) == width and table.lines[place] not in table.broken
         reason = "" if fits else _misfit(table, place, width, needed)
         if not reason and isinstance(day, str):
@@ -183,23 +202,21 @@ def _row_days(table: Table, days: DaysRead, roles: Roles) -> tuple[list[date | s
             reason = "left out there"
         if reason:
             whole[place] = Fate(table.lines[place], "set aside", reason, table.text(place))
-    return row_days, whole
+    return whole
 
 
-def _suspects(table: Table, days: DaysRead, row_days: Sequence[date | str], roles: Roles) -> Sequence[int] | None:
-    """The rows that have to be looked at one by one; None for none of them."""
-    every = range(len(row_days))
+def _suspects(table: Table, days: DaysRead, roles: Roles) -> Sequence[int]:
+    """The rows that have to be looked at one by one."""
+    every = range(len(days.days))
     if not isinstance(table.rows, Rectangle) or table.broken:
         return every
-    odd = {text for text, day in days.days.items() if isinstance(day, str)}
-    texts = table.columns[days.place]
-    if len(texts.counts) < len(texts.cells):
-        columns = [column for place, column in enumerate(table.rows.columns) if place != roles.index]
-        if len(set(zip(*columns, strict=True))) < len(row_days):
-            return every
-    if not odd and not roles.left_out:
-        return None
-    return [place for place, text in enumerate(texts.cells) if text in odd or place in roles.left_out]
+    columns = [column for place, column in enumerate(table.rows.columns) if place != roles.index]
+    # No cell of a rectangle holds a line end.
+    if len(set(map("\n".join, zip(*columns, strict=True)))) < len(every):
+        return every
+    if days.all_days:
+        return sorted(roles.left_out)
+    return [place for place, day in enumerate(days.days) if isinstance(day, str) or place in roles.left_out]
 
 
 def _place_of(table: Table, column: Column) -> int:
@@ -232,15 +249,16 @@ def _why_no_day(table: Table, place: int, reason: str) -> str:
 
 def _read_lane(
     table: Table,
+    days_read: DaysRead,
     lane: Lane,
     roles: Roles,
-    row_days: Sequence[date | str],
     whole: Mapping[int, Fate],
     decimal: DecimalMark | None,
     *,
-    one_day: bool,
+    is_once: bool,
 ) -> Iterator[ReadColumn]:
     """The column of a lane, or two where its cells are pairs; none where every row of it is set aside."""
+    row_days = days_read.days
     rows: Sequence[int] = range(len(row_days)) if lane.rows is None else lane.rows
     places = [place for place in rows if place not in whole] if whole else rows
     if not places:
@@ -252,21 +270,23 @@ def _read_lane(
     days = cast("Sequence[date]", row_days if every else [row_days[place] for place in places])
     clocks = None if roles.clocks is None else [roles.clocks[place] for place in places]
     words = None if roles.slots is None else [roles.slots[place] for place in places]
-    for read in read_values(column, decimal, one_day=one_day):
+    for read in read_values(column, decimal, one_day=days_read.period == "day"):
         outcomes = list(map(read.outcomes.__getitem__, about))
         blanks: list[tuple[int, date]] = []
         refused: list[Fate] = []
         if set(map(type, outcomes)) == {float}:
             kept = _Kept(lines, days, clocks, words, cast("list[float]", outcomes), about)
         else:
-            good = [place for place, outcome in enumerate(outcomes) if isinstance(outcome, float)]
-            for line, day, outcome, text in zip(lines, days, outcomes, about, strict=True):
-                if outcome is None:
-                    blanks.append((line, day))
-                elif isinstance(outcome, Refusal):
-                    refused.append(Fate(line, "set aside", outcome.reason, text))
-            kept = _Kept(lines, days, clocks, words, cast("list[float]", outcomes), about).at(good)
-        slots = slots_of_day(kept.days, kept.clocks, kept.words)
+            is_good = [isinstance(outcome, float) for outcome in outcomes]
+            for place in compress(range(len(places)), map(not_, is_good)):
+                outcome = outcomes[place]
+                if isinstance(outcome, Refusal):
+                    refused.append(Fate(lines[place], "set aside", outcome.reason, about[place]))
+                else:
+                    blanks.append((lines[place], days[place]))
+            kept = _Kept(lines, days, clocks, words, cast("list[float]", outcomes), about).where(is_good)
+        once = is_once and kept.words is None
+        slots = [""] * len(kept.days) if once else slots_of_day(kept.days, kept.clocks, kept.words)
         values = ValueList(kept.lines, kept.days, slots, kept.numbers, kept.texts)
         yield ReadColumn(
             read.name,
@@ -291,9 +311,9 @@ class _Kept(NamedTuple):
     numbers: Sequence[float]
     texts: Sequence[str]
 
-    def at(self, places: Sequence[int]) -> _Kept:
+    def where(self, mask: Sequence[bool]) -> _Kept:
         """Some of the rows."""
-        return _Kept._make(None if part is None else [part[place] for place in places] for part in self)
+        return _Kept._make(None if part is None else list(compress(part, mask)) for part in self)
 
 
 def _several(columns: Iterable[ReadColumn]) -> tuple[date, ...]:

@@ -2,8 +2,7 @@
 
 from __future__ import annotations
 
-from collections import Counter
-from collections.abc import Callable, Iterable, Mapping, Sequence
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass
 from datetime import date, time
 
@@ -17,8 +16,6 @@ from desktop.exchange.day_tokens import (
     RowPeriod,
     compact_day,
     fitting_orders,
-    is_iso,
-    iso_day,
     parse_time,
     says_half_of_day,
     serial_day,
@@ -38,15 +35,17 @@ class DaysRead:
         place: the column they stand in.
         order: the order of day and month; None where no day needed one.
         period: what a row stands for.
-        days: the day of each different text, or the reason it has none.
+        days: the day of each row, or the reason it has none.
         other_places: further columns with the same days.
+        all_days: every row has a day.
     """
 
     place: int
     order: DayOrder | None
     period: RowPeriod
-    days: dict[str, date | str]
+    days: Sequence[date | str]
     other_places: tuple[int, ...] = ()
+    all_days: bool = False
 
 
 def read_days(
@@ -70,42 +69,21 @@ def read_days(
             ``unknown column``.
     """
     place, others = _find_place(table, day_column)
-    counts = table.columns[place].counts
-    period = _period(table, counts)
-    if not period:
-        return _read_numbered(place, list(counts))
-    # A day with the year in front settles nothing for the others, and is read without a token of its own.
-    plain, others_written = _parted(counts)
-    tokens = {text: token for text in others_written if (token := table.seen[text])}
+    column = table.columns[place]
+    others = _same_days(table, place, others)
+    plain = table.seen.plain(column.cells)
+    if plain is not None:
+        return DaysRead(place, None, "day", plain.days, others, all_days=True)
+    texts = list(column.counts)
+    tokens = {text: token for text in texts if (token := table.seen[text])}
+    if not tokens:
+        return _read_numbered(place, column)
+    period = _period(table, column)
     counted = [token for token in tokens.values() if token.period == period]
-    if any(token.short_year for token in counted):
-        counted += [token for text in plain if (token := table.seen[text])]
     order = _settle_order(counted, day_order)
     century = _settle_century(counted, order, century)
-    days: dict[str, date | str] = {
-        text: _day_or_reason(text, tokens.get(text), period, order, century) for text in others_written
-    }
-    days |= _plain_days(plain) if period == "day" else dict.fromkeys(plain, "other period")
-    return DaysRead(place, order, period, days, _same_days(table, place, others))
-
-
-def _parted(texts: Iterable[str]) -> tuple[list[str], list[str]]:
-    """Texts such as 2031-03-04, and all others."""
-    plain: list[str] = []
-    others: list[str] = []
-    for text in texts:
-        (plain if is_iso(text) else others).append(text)
-    return plain, others
-
-
-def _plain_days(texts: list[str]) -> dict[str, date | str]:
-    try:
-        days = list(map(date.fromisoformat, texts))
-    except ValueError:
-        return {text: iso_day(text) for text in texts}
-    if days and (min(days).year not in DAILY_YEARS or max(days).year not in DAILY_YEARS):
-        return {text: iso_day(text) for text in texts}
-    return dict(zip(texts, days, strict=True))
+    days = {text: _day_or_reason(text, tokens.get(text), period, order, century) for text in texts}
+    return DaysRead(place, order, period, [days[text] for text in column.cells], others)
 
 
 def _find_place(table: Table, day_column: str | None) -> tuple[int, tuple[int, ...]]:
@@ -194,21 +172,15 @@ def _is_numbered(column: Column) -> bool:
     return bool(filled) and (all(map(serial_day, filled)) or all(map(compact_day, filled)))
 
 
-def _read_numbered(place: int, texts: Sequence[str]) -> DaysRead:
-    days: dict[str, date | str] = {}
-    for text in texts:
-        days[text] = serial_day(text) or compact_day(text) or _no_day_reason(text)
-    return DaysRead(place, None, "day", days)
+def _read_numbered(place: int, column: Column) -> DaysRead:
+    days = {text: serial_day(text) or compact_day(text) or _no_day_reason(text) for text in column.counts}
+    return DaysRead(place, None, "day", [days[text] for text in column.cells])
 
 
-def _period(table: Table, counts: Mapping[str, int]) -> RowPeriod | None:
-    """What most rows stand for; None where no cell is a day, a month or a year."""
-    found: Counter[str] = Counter()
-    for text, number in counts.items():
-        found[table.seen.period(text)] += number
+def _period(table: Table, column: Column) -> RowPeriod:
+    found = table.seen.periods(column.cells)
     periods: tuple[RowPeriod, ...] = ("day", "month", "year")
-    period = max(periods, key=found.__getitem__)
-    return period if found[period] else None
+    return max(periods, key=found.__getitem__)
 
 
 def _settle_order(tokens: Sequence[DayToken], answer: DayOrder | None) -> DayOrder | None:
@@ -278,7 +250,12 @@ def find_times(table: Table, days: DaysRead, spare: Sequence[int]) -> tuple[int 
             return place, [parse_time(cell) for cell in table.columns[place].cells]
     for place in (days.place, *days.other_places):
         column = table.columns[place]
-        timed = {text: token.clock for text in column.counts if not is_iso(text) and (token := table.seen[text])}
+        plain = table.seen.plain(column.cells)
+        if plain is not None:
+            if plain.clocks is not None and any(plain.clocks):
+                return None, list(plain.clocks)
+            continue
+        timed = {text: token.clock for text in column.counts if (token := table.seen[text])}
         if any(timed.values()):
             return None, [timed.get(text) for text in column.cells]
     return None, None

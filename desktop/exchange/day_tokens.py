@@ -3,8 +3,9 @@
 from __future__ import annotations
 
 import re
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 from datetime import date, time, timedelta
+from operator import itemgetter
 from typing import Literal, NamedTuple, get_args
 
 from desktop.exchange.day_words import FILLERS, MONTH_NUMBERS, WEEKDAYS, simple
@@ -21,6 +22,8 @@ DAILY_YEARS = range(1800, 2200)
 SERIES_YEARS = range(1500, 2200)
 """Years a row of a monthly or yearly series may lie in."""
 
+_ISO_LENGTH = 10
+_MOST_TAILS = 5_000
 _LONGEST = 60
 _ISO = re.compile(r"([0-9]{4})-([0-9]{2})-([0-9]{2})")
 _TIME = re.compile(
@@ -121,24 +124,56 @@ def parse_day(text: str) -> DayToken | None:
     return DayToken("day", token.settled, token.open, token.short_year, clock)
 
 
-def is_iso(text: str) -> bool:
-    """Whether a text has the shape ``2031-03-04``."""
-    return len(text) == 10 and _ISO.fullmatch(text) is not None
-
-
 def is_no_year(text: str) -> bool:
     """Whether a text is plainly a number, and none of four digits, so that it is no day, month or year."""
     return _NO_YEAR.fullmatch(text) is not None
 
 
-def iso_day(text: str) -> date | str:
-    """The day of a text for which ``is_iso`` holds, or why it is none."""
-    if int(text[:4]) not in DAILY_YEARS:
-        return "day out of range"
+class PlainDays(NamedTuple):
+    """Days that all stand with the year in front, and their times of day, or None where none has one."""
+
+    days: Sequence[date]
+    clocks: Sequence[time | None] | None
+
+
+def plain_days(texts: Sequence[str]) -> PlainDays | None:
+    """The days of texts that all begin like ``2031-03-04``, with nothing or a time behind it.
+
+    Returns:
+        What ``parse_day`` makes of each of them; None where one of them is anything else.
+    """
+    if not texts or len(texts[-1]) < _ISO_LENGTH:
+        return None
+    heads, clocks = texts, None
+    if set(map(len, texts)) != {_ISO_LENGTH}:
+        heads = [text[:_ISO_LENGTH] for text in texts]
+        tails = [text[_ISO_LENGTH:] for text in texts]
+        known = _clocks(set(tails))
+        if known is None or set(map(len, heads)) != {_ISO_LENGTH}:
+            return None
+        clocks = [known[tail] for tail in tails]
+    if set(map(itemgetter(7), heads)) != {"-"}:
+        return None
     try:
-        return date.fromisoformat(text)
+        # Of ten characters with this hyphen no other form is taken, such as days of a week.
+        days = list(map(date.fromisoformat, heads))
     except ValueError:
-        return "no such day"
+        return None
+    in_range = min(days).year in DAILY_YEARS and max(days).year in DAILY_YEARS
+    return PlainDays(days, clocks) if in_range else None
+
+
+def _clocks(tails: set[str]) -> dict[str, time | None] | None:
+    """The time of day in each text behind a day; None where one of them is anything else, or they are many."""
+    if len(tails) > _MOST_TAILS:
+        return None
+    known: dict[str, time | None] = {}
+    for tail in tails:
+        token = parse_day(f"2000-01-01{tail}")
+        if token is None or token.period != "day" or token.settled != (2000, 1, 1):
+            return None
+        known[tail] = token.clock
+    return known
 
 
 def parse_time(text: str) -> time | None:

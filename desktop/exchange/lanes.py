@@ -194,11 +194,7 @@ def _could_be_names(table: Table, days: DaysRead, place: int) -> bool:
     column = table.columns[place]
     if not 2 <= len(column.filled) <= _MOST_NAMES_ASKED or min(column.filled.values()) < 2:
         return False
-    rows = [
-        (day, name)
-        for text, name in zip(table.columns[days.place].cells, column.cells, strict=True)
-        if isinstance(day := days.days[text], date)
-    ]
+    rows = [(day, name) for day, name in zip(days.days, column.cells, strict=True) if isinstance(day, date)]
     several = len({day for day, _ in rows}) < len(rows)
     return several and len(set(rows)) == len(rows) and not any(is_blank(name) for _, name in rows)
 

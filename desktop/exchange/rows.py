@@ -8,6 +8,7 @@ from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 from io import StringIO
 from itertools import zip_longest
+from operator import methodcaller
 from typing import overload
 
 from desktop.errors import ExchangeError
@@ -23,6 +24,7 @@ _MOST_LINES = 1_000_000
 _LONGEST_LINE = MOST_COLUMNS * LONGEST_CELL
 _LOOKED_AT = 1_000
 _MOST_JOINED = 20
+_ASCII_BLANKS = " \t\x0b\x0c\x1c\x1d\x1e\x1f"
 _BLANKS = re.compile(r"[^\S\n]")
 
 LEAST_RECTANGLE = 200
@@ -99,12 +101,13 @@ def split_rows(text: str) -> Rows:
     if text.count("\n") > _MOST_LINES:
         raise _too_large("rows", MOST_ROWS, text.count("\n"))
     lines = text.split("\n")
-    if max(map(len, lines)) > _LONGEST_LINE:
+    longest = max(map(len, lines))
+    if longest > _LONGEST_LINE:
         number = next(number for number, line in enumerate(lines, 1) if len(line) > _LONGEST_LINE)
         raise _too_large("cell", LONGEST_CELL, len(lines[number - 1]), number)
     separator = choose_separator(lines)
     if '"' not in text:
-        rectangle = _rectangle(text, lines, separator)
+        rectangle = _rectangle(text, lines, separator) if longest <= LONGEST_CELL else None
         if rectangle is not None:
             return Rows(separator, rectangle, list(range(1, len(rectangle) + 1)), frozenset())
         return _kept(separator, _plain_records(text, lines, separator), ())
@@ -122,12 +125,10 @@ def _rectangle(text: str, lines: list[str], separator: str) -> Rectangle | None:
     if not LEAST_RECTANGLE <= len(lines) <= MOST_ROWS + 1:
         return None
     width = lines[0].count(separator) + 1
-    if width > MOST_COLUMNS or max(map(len, lines)) > LONGEST_CELL:
-        return None
-    if any(line.count(separator) != width - 1 for line in lines):
+    if width > MOST_COLUMNS or set(map(methodcaller("count", separator), lines)) != {width - 1}:
         return None
     flat = separator.join(lines).split(separator)
-    if _BLANKS.search(text):
+    if not text.isascii() or any(blank in text for blank in _ASCII_BLANKS):
         flat = list(map(str.strip, flat))
     columns = [tuple(flat[place::width]) for place in range(width)]
     if "" in columns[0] and not all(map(any, zip(*columns, strict=True))):
@@ -137,8 +138,10 @@ def _rectangle(text: str, lines: list[str], separator: str) -> Rectangle | None:
 
 def choose_separator(lines: list[str]) -> str:
     """The separator under which most lines begin with a day, else hold one, else hold several cells."""
-    filled = [line for line in lines if line.strip()]
-    looked_at = filled[:: max(1, len(filled) // _LOOKED_AT)]
+    looked_at = [line for line in lines[:: max(1, len(lines) // _LOOKED_AT)] if line.strip()]
+    if len(looked_at) < _LOOKED_AT // 2:
+        filled = [line for line in lines if line.strip()]
+        looked_at = filled[:: max(1, len(filled) // _LOOKED_AT)]
     rules: tuple[Callable[[str, str], bool], ...] = (_begins_with_day, _holds_day, _holds_cells)
     for rule in rules:
         counts = [sum(rule(line, separator) for line in looked_at) for separator in SEPARATORS]

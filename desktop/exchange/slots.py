@@ -5,6 +5,9 @@ from __future__ import annotations
 from collections import Counter
 from collections.abc import Sequence
 from datetime import date, time
+from itertools import repeat
+
+_PARTS = ("", "morning", "midday", "evening")
 
 
 def slots_of_day(
@@ -23,9 +26,7 @@ def slots_of_day(
         same slot has a 2 behind it.
     """
     if words is None:
-        if len(set(days)) == len(days):
-            return [""] * len(days)
-        words = [_part_of_day(clock) for clock in times] if times is not None else [""] * len(days)
+        return _numbered(days, times or ())
     taken: set[tuple[date, str]] = set()
     again: Counter[tuple[date, str]] = Counter()
     slots = []
@@ -39,9 +40,22 @@ def slots_of_day(
     return slots
 
 
-def _part_of_day(clock: time | None) -> str:
+def _numbered(days: Sequence[date], times: Sequence[time | None]) -> Sequence[str]:
+    if len(set(days)) == len(days):
+        return [""] * len(days)
+    taken: dict[int, int] = {}
+    slots = []
+    parts = map(_part_of_day, times) if times else repeat(0, len(days))
+    for day, part in zip(days, parts, strict=True):
+        key = day.toordinal() * len(_PARTS) + part
+        number = taken[key] = taken.get(key, 0) + 1
+        slots.append(_PARTS[part] if number == 1 else f"{_PARTS[part]} {number}".strip())
+    return slots
+
+
+def _part_of_day(clock: time | None) -> int:
     if clock is None:
-        return ""
+        return 0
     if clock.hour < 12:
-        return "morning"
-    return "midday" if clock.hour < 15 else "evening"
+        return 1
+    return 2 if clock.hour < 15 else 3

@@ -9,13 +9,15 @@ from dataclasses import dataclass
 from functools import cached_property
 
 from desktop.errors import ExchangeError
-from desktop.exchange.day_tokens import DayToken, is_iso, is_no_year, parse_day
+from desktop.exchange.day_tokens import DayToken, PlainDays, is_no_year, parse_day, plain_days
 from desktop.exchange.day_words import DAY_HEADERS, INDEX_HEADERS, is_total, simple
 from desktop.exchange.number_tokens import NumberToken, is_blank, read_number
-from desktop.exchange.rows import Cells, Rectangle, Row, columns_of, split_rows
+from desktop.exchange.rows import LEAST_RECTANGLE, Cells, Rectangle, Row, columns_of, split_rows
 from desktop.exchange.source_text import decode
 from desktop.exchange.units import known_unit, split_header
 
+_HEAD = 20
+"""So many rows may be a title and a header before a long column of days."""
 _BRACKETED = re.compile(r"[(\[]\s*(.+?)\s*[)\]]")
 _DAY_PATTERN = re.compile(r"[(\[]?(?:[dmyjat]{1,4}[-/. ]?){3}[)\]]?|dates?|days?|text|unit", re.IGNORECASE)
 """What stands in a row of units over the days: ``yyyy-mm-dd``, ``TT.MM.JJJJ``, ``date``."""
@@ -62,38 +64,71 @@ class DaySeen(dict[str, DayToken | None]):
     def __init__(self) -> None:
         super().__init__()
         self._periods: dict[str, str] = {}
-        self._counted: dict[int, tuple[Sequence[str], int, int]] = {}
+        self._plain: dict[int, tuple[Sequence[str], PlainDays | None]] = {}
+        self._counted: dict[int, tuple[Sequence[str], Mapping[str, int]]] = {}
 
     def __missing__(self, text: str) -> DayToken | None:
         token = self[text] = parse_day(text)
         self._periods[text] = token.period if token else ""
         return token
 
-    def period(self, text: str) -> str:
-        """What a row with this text as its day stands for; ``""`` where it is none."""
-        if text not in self._periods:
-            self.__missing__(text)
-        return self._periods[text]
-
-    def count(self, cells: Sequence[str], *, years: bool) -> int:
-        """How many cells hold a day or month or, with ``years``, a year."""
+    def periods(self, cells: Sequence[str]) -> Mapping[str, int]:
+        """How many cells are a ``day``, a ``month`` or a ``year``."""
         known = self._counted.get(id(cells))
         if known is None:
             # The cells are kept too, so that no others can take their place in memory.
-            known = self._counted[id(cells)] = (cells, *self._count(cells))
-        return known[2] if years else known[1]
+            known = self._counted[id(cells)] = (cells, self._count(cells))
+        return known[1]
 
-    def _count(self, cells: Sequence[str]) -> tuple[int, int]:
+    def count(self, cells: Sequence[str], *, years: bool) -> int:
+        """How many cells hold a day or month or, with ``years``, a year."""
+        found = self.periods(cells)
+        return found["year"] if years else found["day"] + found["month"]
+
+    def plain(self, cells: Sequence[str]) -> PlainDays | None:
+        """The days of cells that all begin like ``2031-03-04``; None where one of them is anything else."""
+        known = self._plain.get(id(cells))
+        if known is None:
+            known = self._plain[id(cells)] = (cells, self._plain_days(cells))
+        return known[1]
+
+    def _plain_days(self, cells: Sequence[str]) -> PlainDays | None:
+        for body, found in self._plain.values():
+            rest = len(cells) - len(body)
+            if found and 0 < rest <= _HEAD and cells[-1] == body[-1] and cells[rest:] == body:
+                # The same column with a few more rows in front.
+                head = plain_days(cells[:rest])
+                return None if head is None else _joined(head, found)
+        return plain_days(cells)
+
+    def _count(self, cells: Sequence[str]) -> Mapping[str, int]:
+        if self.plain(cells):
+            return {"day": len(cells), "month": 0, "year": 0}
+        if len(cells) > LEAST_RECTANGLE:
+            body = cells[_HEAD:]
+            if self.plain(body) is not None:
+                head = self._count(cells[:_HEAD])
+                return {**head, "day": head["day"] + len(body)}
         periods = self._periods
-        for text in set(cells).difference(periods):
-            if is_iso(text):
-                periods[text] = "day"
-            elif is_no_year(text):
+        different = set(cells)
+        for text in different.difference(periods):
+            if is_no_year(text):
                 periods[text] = ""
             else:
                 self.__missing__(text)
-        found = [periods[text] for text in cells]
-        return found.count("day") + found.count("month"), found.count("year")
+        if not any(map(periods.__getitem__, different)):
+            return {"day": 0, "month": 0, "year": 0}
+        found = list(map(periods.__getitem__, cells))
+        return {period: found.count(period) for period in ("day", "month", "year")}
+
+
+def _joined(head: PlainDays, body: PlainDays) -> PlainDays:
+    clocks = None
+    if head.clocks or body.clocks:
+        clocks = [
+            clock for part in (head, body) for clock in (part.clocks if part.clocks else [None] * len(part.days))
+        ]
+    return PlainDays([*head.days, *body.days], clocks)
 
 
 @dataclass(frozen=True)

@@ -18,7 +18,7 @@ from desktop.models.days_table import DaysTable, Unlikely
 from desktop.models.keeping import Keeping
 from desktop.models.ready_made import make_sample, new_person
 from desktop.models.session import Session
-from desktop.screens.bring_in_dialog import BringInDialog, read_with_questions
+from desktop.screens.bring_in_dialog import BringInDialog
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.dialogs import MeasureDialog, ask_day, ask_if_right
 from desktop.screens.file_commands import keep_elsewhere
@@ -26,6 +26,7 @@ from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_
 from desktop.screens.log_commands import LogCommands
 from desktop.screens.menus import Menus
 from desktop.screens.opening import mend, open_with_questions
+from desktop.screens.reading_table import read_with_questions
 from desktop.screens.settings import TEXT_SIZES, Settings
 from desktop.screens.start_screen import StartScreen
 from desktop.screens.status_line import trouble_sentence

@@ -13,11 +13,12 @@ from datetime import date
 
 import numpy as np
 
-from tests.bench import analysis_rows, page_rows, window_rows
+from tests.bench import analysis_rows, exchange_rows, page_rows, window_rows
 from tests.bench.measuring import Row
 
 PARTS: Mapping[str, Callable[[], Iterator[Row]]] = {
     "analysis": analysis_rows.rows,
+    "exchange": exchange_rows.rows,
     "page": page_rows.rows,
     "window": window_rows.rows,
 }

@@ -32,7 +32,7 @@ ALLOWED: dict[str, set[str]] = {
     "desktop.faces": {"desktop.resource_files", "PySide6"},
     "desktop.journal": {"analysis"},
     "desktop.storage": {"desktop.errors", "desktop.journal", "sqlite3"},
-    "desktop.exchange": {"desktop.errors", "desktop.journal", "pandas"},
+    "desktop.exchange": {"desktop.errors", "desktop.journal"},
     "desktop.wording": {"analysis", "desktop.errors", "desktop.journal", "desktop.resource_files", "numpy"},
     "desktop.edits": {"analysis", "desktop.journal", "desktop.storage"},
     "desktop.command": BELOW_THE_WINDOW,
@@ -174,7 +174,7 @@ def test_no_arrow_leads_in_a_circle():
 
 @pytest.mark.parametrize(
     ("library", "home"),
-    [("sqlite3", "desktop.storage"), ("pandas", "desktop.exchange"), ("pyqtgraph", "desktop.chart")],
+    [("sqlite3", "desktop.storage"), ("pyqtgraph", "desktop.chart")],
 )
 def test_a_library_has_one_home(library, home):
     users = {
