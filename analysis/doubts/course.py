@@ -125,8 +125,8 @@ def season(seen: Seen) -> Doubt | None:
         return None
     before, after = seen.sides.before_days, seen.sides.after_days
     apart = float(np.median(after) - np.median(before))
-    # A log of whole years holds every season on both sides.
-    if not apart >= SEASON_DAYS or min(len(before), len(after)) * _days_a_period(seen) > 365:
+    # A baseline of a whole year holds every season, and its middle is none of them.
+    if not apart >= SEASON_DAYS or len(before) * _days_a_period(seen) >= 365:
         return None
     return Doubt("season", (("months", round(apart / 30.4)),), alters=False)
 

@@ -260,6 +260,11 @@ def test_three_weeks_lost_around_the_change_leave_the_day_open():
     assert answer.answer.sureness == "as sure as a log can be"
 
 
+def test_a_baseline_of_a_whole_year_is_of_no_season():
+    answer, _ = told(days(80, 400, 30) + days(81, 40, 30), 400, unit="minutes")
+    assert "season" not in doubts(answer)
+
+
 def test_stretches_months_apart_name_the_season():
     values = days(57, 90, 140) + days(58, 150, 132)
     _, said = told(values, 90, unit="mmHg")
