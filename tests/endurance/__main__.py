@@ -42,7 +42,7 @@ SHORT: tuple[Trial, ...] = (
     partial(undo, 20),
     full_disk,
     network,
-    partial(changeovers, 40),
+    partial(changeovers, 25),
     partial(saving, 200),
 )
 LONG: tuple[Trial, ...] = (
