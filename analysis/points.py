@@ -10,6 +10,9 @@ from numpy.typing import NDArray
 
 from analysis.log import COUNTED_KINDS, Combine, Days, Log, Period, Values
 
+LARGEST = 1e300
+"""Beyond this the difference of two values may be no number any more; no reading is so large."""
+
 _EPOCH = date(1970, 1, 1).toordinal()
 
 
@@ -73,10 +76,10 @@ def points_of(log: Log, today: int | None = None) -> Points:
     starts = np.flatnonzero(np.r_[True, keys[1:] != keys[:-1]])
     place = keys[starts] - keys[0]
     combined = np.full(len(every_key), np.nan)
-    # A sum too large for a number is no observation.
+    # A sum too large to be reckoned with is no observation.
     with np.errstate(over="ignore", invalid="ignore"):
         combined[place] = _combined(values, starts, measure.combine_rule)
-    combined[~np.isfinite(combined)] = np.nan
+    combined[~(np.abs(combined) <= LARGEST)] = np.nan
     only_filled = np.zeros(len(every_key), dtype=bool)
     only_filled[place] = np.logical_and.reduceat(filled, starts)
     day = first.copy()
