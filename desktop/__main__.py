@@ -17,6 +17,10 @@ def main(arguments: Sequence[str] | None = None) -> int:
         from desktop.page.command import main as run_page
 
         return run_page(given)
+    if given and given[0] == "export":
+        from desktop.export import main as run_export
+
+        return run_export(given)
     from desktop.app import main as open_window
 
     return open_window(given)

@@ -37,6 +37,8 @@ ExchangeReason = Literal[
     "which decimal mark",
     "which name column",
     "unknown column",
+    "not a package",
+    "package damaged",
 ]
 
 

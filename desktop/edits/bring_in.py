@@ -2,17 +2,17 @@
 
 from __future__ import annotations
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass, replace
 from datetime import datetime
 
 from analysis.log import COUNTED_KINDS
 from desktop.edits.days import kind_of_value
 from desktop.edits.edit import Edit, edit_putting
-from desktop.edits.ids import Ids
+from desktop.edits.ids import Ids, IdTable
 from desktop.edits.measures import new_measures
 from desktop.journal.journal import Journal
-from desktop.journal.records import Entry, Measure
+from desktop.journal.records import Change, Entry, Measure, Plan, Span
 from desktop.journal.row_change import key_of
 
 
@@ -81,9 +81,77 @@ def bring_in(
     return BroughtIn(edit, tuple(added_measures), added, replaced, untouched)
 
 
+def bring_in_journal(journal: Journal, ids: Ids, other: Journal, *, now: datetime) -> BroughtIn:
+    """Add everything another journal holds, at once; where a day says something else already, the other wins.
+
+    Measures of the same title, unit and kind become one. Changes, spans and plans that are there already are not
+    added again. The name and the question come where this journal has none.
+
+    Args:
+        journal: as it stands.
+        ids: gives the ids of what is added.
+        other: the other journal.
+        now: local time, noted on entries that have none.
+    """
+    same = {_likeness(measure): measure.id for measure in journal.measures.values()}
+    known = {one.id: same[_likeness(one)] for one in other.measures.values() if _likeness(one) in same}
+    new = sorted((one for one in other.measures.values() if one.id not in known), key=lambda one: one.position)
+    numbered = [replace(measure, id=-place) for place, measure in enumerate(new)]
+    known |= {old.id: stand_in.id for old, stand_in in zip(new, numbered, strict=True)}
+    entries = [
+        replace(entry, measure=known[entry.measure])
+        for by_day in other.entries.values()
+        for entry in by_day.values()
+    ]
+    brought = bring_in(journal, ids, numbered, entries, now=now)
+    added = {stand_in.id: real for stand_in, real in zip(numbered, brought.measures, strict=True)}
+    real = {old: added[there].id if there in added else there for old, there in known.items()}
+    marks = [
+        *_new_marks(journal.changes.values(), other.changes.values(), "change", ids, real),
+        *_new_marks(journal.spans.values(), other.spans.values(), "span", ids, real),
+        *_new_marks(journal.plans.values(), other.plans.values(), "plan", ids, real),
+        *other.notes.values(),
+    ]
+    person = replace(
+        journal.person,
+        name=journal.person.name or other.person.name,
+        question=journal.person.question or other.person.question,
+    )
+    rest = edit_putting(journal, "bring in table", [person, *marks])
+    return replace(brought, edit=Edit("bring in table", (*brought.edit.changes, *rest.changes)))
+
+
+def _likeness(measure: Measure) -> tuple[str, str, str]:
+    return measure.title, measure.unit, measure.kind
+
+
+Mark = Change | Span | Plan
+
+
+def _new_marks(
+    there: Iterable[Mark], others: Iterable[Mark], table: IdTable, ids: Ids, measures: Mapping[int, int]
+) -> list[Mark]:
+    """The marks that say what none says yet, with ids of their own."""
+    said = {replace(mark, id=0) for mark in there}
+    new: list[Mark] = []
+    for mark in others:
+        alike = replace(_with_measures(mark, measures), id=0)
+        if alike not in said:
+            said.add(alike)
+            new.append(replace(alike, id=ids.new(table)))
+    return new
+
+
+def _with_measures(mark: Mark, measures: Mapping[int, int]) -> Mark:
+    if isinstance(mark, Plan):
+        return replace(mark, measure=measures[mark.measure])
+    concerned = tuple(measures[one] for one in mark.measures)
+    return replace(mark, measures=concerned)
+
+
 def _settled(entry: Entry, measure: Measure, clock: str) -> Entry:
     kind = entry.kind
-    if kind == "value":
+    if kind == "value" and not entry.entered_at:
         kind = kind_of_value(measure, entry.day, entry.value, "table", entry.day)
     return replace(entry, measure=measure.id, kind=kind, entered_at=entry.entered_at or clock)
 

@@ -16,6 +16,7 @@ from desktop.exchange.day_words import (
     UNIT_HEADERS,
     simple,
 )
+from desktop.exchange.formula_guard import unguarded
 from desktop.exchange.number_tokens import is_blank
 from desktop.exchange.rows import MOST_COLUMNS
 from desktop.exchange.table import Column, Table, is_index
@@ -203,7 +204,7 @@ def _named_lanes(table: Table, values: Column, name_place: int, words: Sequence[
     rows: dict[str, list[int]] = {}
     spelt: dict[str, str] = {}
     for place, text in enumerate(table.columns[name_place].cells):
-        word = " ".join(text.split())
+        word = unguarded(" ".join(text.split()))
         key = word.casefold()
         spelt.setdefault(key, word)
         rows.setdefault(key, []).append(place)
@@ -219,7 +220,7 @@ def _named_lane(values: Column, word: str, places: list[int], units: Column | No
     name, unit = split_header(word)
     cells = values.cells
     written = {place: units.cells[place] for place in places} if units is not None else {}
-    said = {text: known_unit(text) or text.strip() for text in written.values() if not is_blank(text)}
+    said = {text: known_unit(text) or unguarded(text.strip()) for text in written.values() if not is_blank(text)}
     if len(set(said.values())) == 1:
         unit = next(iter(said.values()))
     elif said:

@@ -11,6 +11,7 @@ from functools import cached_property
 from desktop.errors import ExchangeError
 from desktop.exchange.day_tokens import DayToken, PlainDays, is_no_year, parse_day, plain_days
 from desktop.exchange.day_words import DAY_HEADERS, INDEX_HEADERS, is_total, simple
+from desktop.exchange.formula_guard import unguarded
 from desktop.exchange.number_tokens import NumberToken, is_blank, read_number
 from desktop.exchange.rows import LEAST_RECTANGLE, Cells, Rectangle, Row, columns_of, split_rows
 from desktop.exchange.source_text import decode
@@ -330,18 +331,13 @@ def _columns(headers: Sequence[str], units: Row, rows: Sequence[Row]) -> tuple[C
     names: list[str] = []
     columns: list[Column] = []
     for number, (header, column) in enumerate(zip(headers, cells, strict=True), start=1):
-        name, unit = split_header(_unguarded(" ".join(header.split())))
+        name, unit = split_header(unguarded(" ".join(header.split())))
         if not unit and number <= len(units) and not _DAY_PATTERN.fullmatch(units[number - 1]):
             bare = "" if is_blank(units[number - 1]) else _bare(units[number - 1])
             unit = known_unit(bare) or bare
         names.append(_unique(name or f"column {number}", names))
         columns.append(Column(names[-1], unit, header, column))
     return tuple(columns)
-
-
-def _unguarded(text: str) -> str:
-    """The text without the apostrophe that keeps a spreadsheet from running it as a formula."""
-    return text[1:] if len(text) > 1 and text[0] == "'" and text[1] in "=+-@'" else text
 
 
 def _unique(name: str, taken: Sequence[str]) -> str:

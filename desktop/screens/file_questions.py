@@ -26,9 +26,15 @@ def ask_journal(parent: QWidget, folder: Path) -> Path | None:
 
 def ask_table(parent: QWidget) -> Path | None:
     """Which table to bring in."""
-    kinds = "Tables (*.csv *.tsv *.txt);;All files (*)"
+    kinds = "Tables (*.csv *.tsv *.txt datapackage.json);;All files (*)"
     name, _ = QFileDialog.getOpenFileName(parent, "Bring in a table", str(Path.home()), kinds)
     return Path(name) if name else None
+
+
+def ask_folder(parent: QWidget, title: str, name: str) -> Path | None:
+    """Where a new folder is to be made."""
+    chosen, _ = QFileDialog.getSaveFileName(parent, title, str(Path.home() / name), "Folders (*)")
+    return Path(chosen) if chosen else None
 
 
 def ask_output(parent: QWidget, title: str, name: str, *endings: str) -> Path | None:

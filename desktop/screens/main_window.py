@@ -12,8 +12,10 @@ from PySide6.QtGui import QCloseEvent
 from PySide6.QtWidgets import QApplication, QDialog, QMainWindow, QMessageBox, QStackedWidget, QWidget
 
 from analysis.log import Period
+from desktop.edits.bring_in import BroughtIn
 from desktop.edits.measures import add_measures
 from desktop.errors import DayfenceError, StorageError
+from desktop.exchange.package import package_place
 from desktop.models.days_table import DaysTable, Unlikely
 from desktop.models.keeping import Keeping
 from desktop.models.ready_made import make_sample, new_person
@@ -30,6 +32,7 @@ from desktop.screens.reading_table import read_with_questions
 from desktop.screens.settings import TEXT_SIZES, Settings
 from desktop.screens.start_screen import StartScreen
 from desktop.screens.status_line import trouble_sentence
+from desktop.screens.tables_out import bring_in_package
 from desktop.screens.theme import ThemeName, apply_theme, is_dark
 from desktop.screens.workspace import Workspace
 from desktop.storage.backups import copies_of
@@ -144,6 +147,10 @@ class MainWindow(QMainWindow):
 
     def bring_in_file(self, path: Path) -> None:
         """Bring in a table; without an open journal a new one is started for it."""
+        folder = package_place(path)
+        if folder is not None:
+            bring_in_package(self, folder)
+            return
         reading = read_with_questions(self, path)
         if reading is None:
             return
@@ -153,7 +160,10 @@ class MainWindow(QMainWindow):
         dialog = BringInDialog(path, reading, session, self)
         if dialog.exec() != QDialog.DialogCode.Accepted or dialog.brought is None:
             return
-        brought = dialog.brought
+        self.say_brought(dialog.brought)
+
+    def say_brought(self, brought: BroughtIn) -> None:
+        """Show what was brought in, and say how much it was."""
         if brought.measures:
             self.show_measure(brought.measures[0].id)
         self.say(

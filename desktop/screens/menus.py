@@ -18,6 +18,7 @@ from desktop.screens.file_commands import keep_elsewhere, open_stranger
 from desktop.screens.hand_over_dialog import hand_over
 from desktop.screens.held_dialog import show_held
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
+from desktop.screens.tables_out import copy_findings, save_as_table
 from desktop.wording.acts import act_phrase
 from desktop.wording.days import full_day
 
@@ -74,6 +75,7 @@ class Menus:
         self._reading += [
             _add(file, "&Earlier copies…", partial(show_earlier_copies, window)),
             _add(file, "Save a &copy…", partial(keep_elsewhere, window)),
+            _add(file, "Save a copy as a &table…", partial(save_as_table, window)),
             _add(file, "A copy to &hand over…", partial(hand_over, window)),
         ]
         self._writing.append(_add(file, "Erase for &good…", partial(erase_for_good, window)))
@@ -88,6 +90,7 @@ class Menus:
         self._reading += [
             _add(edit, "&Copy days", window.workspace.days.copy),
             _add(edit, "Copy chart as p&icture", partial(_copy_chart, window)),
+            _add(edit, "Copy &findings as text", partial(copy_findings, window)),
         ]
         self._writing.append(_add(edit, "&Paste days", window.workspace.days.paste))
 

@@ -30,3 +30,11 @@ def worded(review: Review) -> Review:
         doubts=tuple(replace(doubt, sentence=doubt_sentence(doubt, speech)) for doubt in review.doubts),
         caution=CAUTION,
     )
+
+
+def findings_text(review: Review) -> str:
+    """The findings as plain text to paste elsewhere, with the caution below them."""
+    told = findings_of(review)
+    blocks = [told.headline]
+    blocks += ["\n".join([section.title, *section.sentences]).strip() for section in told.sections]
+    return "\n\n".join([*blocks, CAUTION]) + "\n"

@@ -107,6 +107,10 @@ def _too_large(fields: Fields) -> str:
             return f"One cell is too long{where}: up to {limit:,} characters. Is this file a table?"
 
 
+def _at_line(fields: Fields) -> str:
+    return f" (line {fields['line']})" if fields["line"] else ""
+
+
 def _no_days_read(fields: Fields) -> str:
     return f"No day could be read in the column “{fields['column']}”. Days look like 2031-03-04 or 4 March 2031."
 
@@ -128,6 +132,12 @@ _EXCHANGE: dict[str, Callable[[Fields], str]] = {
     "no days read": _no_days_read,
     "workbook": lambda _: (
         "This is a spreadsheet workbook. Open it in the spreadsheet, save the sheet as CSV, and bring that in."
+    ),
+    "not a package": lambda fields: (
+        f"{_name(fields)} does not describe a journal of this program. Bring in its tables one by one."
+    ),
+    "package damaged": lambda fields: (
+        f"{fields['file']}{_at_line(fields)} is not as it was written, so nothing was brought in."
     ),
     "unknown column": lambda fields: (
         f"There is no column “{fields['name']}”. The columns are {_listed(fields['choices'])}."

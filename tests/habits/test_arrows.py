@@ -32,10 +32,11 @@ ALLOWED: dict[str, set[str]] = {
     "desktop.faces": {"desktop.resource_files", "PySide6"},
     "desktop.journal": {"analysis"},
     "desktop.storage": {"desktop.errors", "desktop.journal", "sqlite3"},
-    "desktop.exchange": {"desktop.errors", "desktop.journal"},
+    "desktop.exchange": {"analysis", "desktop.errors", "desktop.journal"},
     "desktop.wording": {"analysis", "desktop.errors", "desktop.journal", "desktop.resource_files", "numpy"},
     "desktop.edits": {"analysis", "desktop.journal", "desktop.storage"},
     "desktop.command": BELOW_THE_WINDOW,
+    "desktop.export": BELOW_THE_WINDOW | {"desktop.command"},
     "desktop.models": BELOW_THE_WINDOW | {"PySide6"},
     "desktop.chart.picture": {"analysis", "desktop.chart.spoken", "desktop.journal", "desktop.wording", "numpy"},
     "desktop.chart.spoken": set(),
@@ -75,6 +76,7 @@ ALLOWED: dict[str, set[str]] = {
     | {
         "desktop.chart",
         "desktop.chart.picture",
+        "desktop.export",
         "desktop.faces",
         "desktop.models",
         "desktop.page",
@@ -89,7 +91,7 @@ ALLOWED: dict[str, set[str]] = {
         "desktop.screens",
         "PySide6",
     },
-    "desktop.__main__": {"desktop.app", "desktop.command", "desktop.page.command"},
+    "desktop.__main__": {"desktop.app", "desktop.command", "desktop.export", "desktop.page.command"},
 }
 """For each part, the other parts and the libraries it may import; the standard library but sqlite3 is free."""
 
@@ -212,7 +214,9 @@ def test_the_analysis_brings_in_numpy_and_nothing_else_that_is_large():
     assert not loaded & {"PySide6", "pyqtgraph", "sqlite3", "pandas", "scipy"}
 
 
-@pytest.mark.parametrize("module", ["desktop.command", "desktop.__main__", "desktop.page.command"])
+@pytest.mark.parametrize(
+    "module", ["desktop.command", "desktop.__main__", "desktop.export", "desktop.page.command"]
+)
 def test_the_command_runs_without_qt(module):
     (loaded,) = loaded_after(f"import sys, {module}; print(*sys.modules)")
     assert module in loaded
