@@ -5,7 +5,7 @@ from __future__ import annotations
 from pathlib import Path
 from typing import TYPE_CHECKING
 
-from PySide6.QtCore import QLocale
+from PySide6.QtCore import QLocale, Qt
 from PySide6.QtWidgets import (
     QApplication,
     QButtonGroup,
@@ -49,6 +49,7 @@ class FormDialog(QDialog):
             words = QLabel(hint)
             words.setWordWrap(True)
             words.setIndent(24)
+            words.setAlignment(Qt.AlignmentFlag.AlignTop)
             layout.addWidget(button)
             layout.addWidget(words)
         buttons = QDialogButtonBox(QDialogButtonBox.StandardButton.Ok | QDialogButtonBox.StandardButton.Cancel)
