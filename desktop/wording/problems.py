@@ -137,7 +137,7 @@ _EXCHANGE: dict[str, Callable[[Fields], str]] = {
         f"{_name(fields)} does not describe a journal of this program. Bring in its tables one by one."
     ),
     "package damaged": lambda fields: (
-        f"{fields['file']}{_at_line(fields)} is not as it was written, so nothing was brought in."
+        f"The table {fields['file']}{_at_line(fields)} is not as it was written, so nothing was brought in."
     ),
     "unknown column": lambda fields: (
         f"There is no column “{fields['name']}”. The columns are {_listed(fields['choices'])}."

@@ -25,6 +25,7 @@ FIELDS: dict[str, object] = {
     "limit": 65_536,
     "what": "bytes",
     "line": 12,
+    "file": "entries.csv",
     "first": date(2031, 3, 3),
     "last": date(2031, 3, 1),
     "change": date(2031, 3, 2),
