@@ -25,6 +25,7 @@ from desktop.exchange.reading import ReadColumn, Reading
 from desktop.journal.records import Entry, Measure
 from desktop.models.session import Session
 from desktop.screens.bring_in_preview import lines_set_aside, summary_of
+from desktop.screens.room import give_room
 from desktop.wording.numbers import count, decimals_of
 
 _KINDS: tuple[tuple[str, MeasureKind, Missed], ...] = (
@@ -60,7 +61,7 @@ class BringInDialog(QDialog):
         buttons.accepted.connect(self.accept)
         buttons.rejected.connect(self.reject)
         layout.addWidget(buttons)
-        self.setMinimumWidth(620)
+        give_room(self, 78)
 
     def accept(self) -> None:
         """Bring in the chosen columns, or say what keeps them out."""

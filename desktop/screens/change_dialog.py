@@ -22,6 +22,7 @@ from PySide6.QtWidgets import (
 from desktop.exchange.number_tokens import Refusal, read_typed
 from desktop.journal.records import Change, Measure, WhyThatDay
 from desktop.screens.dialogs import DayBox
+from desktop.screens.room import give_room, roomy_form
 from desktop.wording.entry import number_text
 
 _WHY: tuple[tuple[str, WhyThatDay | None], ...] = (
@@ -74,7 +75,7 @@ class ChangeDialog(QDialog):
             self.concerns.addItem(f"only {measure.title}", (measure.id,))
         if change:
             self.concerns.setCurrentIndex(max(0, self.concerns.findData(change.measures)))
-        form = QFormLayout()
+        form = roomy_form()
         form.addRow("What changed?", self.label)
         form.addRow("First day", self.day)
         form.addRow("Why that day?", self.why)
@@ -94,7 +95,7 @@ class ChangeDialog(QDialog):
         layout.addLayout(form)
         layout.addWidget(self._problem)
         layout.addWidget(buttons)
-        self.setMinimumWidth(600)
+        give_room(self, 75)
         self.label.setFocus()
 
     def accept(self) -> None:

@@ -11,7 +11,6 @@ from PySide6.QtWidgets import (
     QDateEdit,
     QDialog,
     QDialogButtonBox,
-    QFormLayout,
     QInputDialog,
     QLabel,
     QLineEdit,
@@ -25,6 +24,7 @@ from analysis.log import MeasureKind, Missed
 from desktop.exchange.number_tokens import Refusal, read_typed
 from desktop.journal.records import AimWord, Measure
 from desktop.models.ready_made import ready_measures
+from desktop.screens.room import roomy_form
 from desktop.wording.days import full_day
 from desktop.wording.entry import number_text
 
@@ -64,7 +64,7 @@ class MeasureDialog(QDialog):
         self.low, self.high = QLineEdit(), QLineEdit()
         self._problem = QLabel()
         self._problem.setWordWrap(True)
-        self._form = QFormLayout()
+        self._form = roomy_form()
         self._form.addRow("Name", self.title)
         self._form.addRow("Unit", self.unit)
         self._form.addRow("Can a day truly be zero?", self.zero)

@@ -28,6 +28,7 @@ from desktop.journal.journal import Journal
 from desktop.journal.records import DayNote, Entry
 from desktop.models.keeping import Keeping
 from desktop.models.session import Session
+from desktop.screens.room import give_room
 from desktop.storage.backups import EarlierCopy
 from desktop.wording.earlier import (
     NO_COPIES,
@@ -96,7 +97,7 @@ class EarlierCopiesDialog(QDialog):
         self._keeping.copied.connect(self._fill)
         self._keeping.not_copied.connect(self._say)
         self._fill()
-        self.resize(820, 520)
+        give_room(self, 100, 26)
         self.listed.setFocus()
 
     def _lay_out(self, close: QDialogButtonBox) -> None:

@@ -21,6 +21,7 @@ from PySide6.QtWidgets import (
 
 from desktop.errors import StorageError
 from desktop.journal.records import Measure
+from desktop.screens.room import give_room
 from desktop.storage.erase import erase, erase_everything, of_day, of_measure
 from desktop.wording.erase import EVERYTHING, LIMITS, NOT_REACHED, SURE, erased_sentence, this_day, this_measure
 from desktop.wording.problems import problem_sentence
@@ -90,7 +91,7 @@ class EraseDialog(QDialog):
             layout.addWidget(widget)
         self.sure.toggled.connect(self._offer)
         self._offer()
-        self.setMinimumWidth(560)
+        give_room(self, 70)
 
     @property
     def chosen(self) -> str:

@@ -25,6 +25,7 @@ from desktop.journal.records import Record
 from desktop.models.session import Session
 from desktop.screens.dialogs import DayBox
 from desktop.screens.file_questions import ask_new_journal
+from desktop.screens.room import give_room
 from desktop.storage.store import Store
 from desktop.wording.damage import kept_elsewhere
 from desktop.wording.hand_over import NOT_SECRET, SAME, STAYS, goes_lines
@@ -103,7 +104,7 @@ class HandOverDialog(QDialog):
             box.toggled.connect(self._show)
         self.records: list[Record] = []
         self._show()
-        self.resize(620, 640)
+        give_room(self, 78, 32)
 
     def _show(self) -> None:
         items = [self.measures.item(row) for row in range(self.measures.count())]

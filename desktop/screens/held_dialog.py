@@ -10,6 +10,7 @@ from desktop.edits.earlier import put_back_earlier
 from desktop.journal.records import DayNote, Entry, Measure
 from desktop.journal.row_change import key_of
 from desktop.models.session import Session
+from desktop.screens.room import give_room
 from desktop.storage.store import Held
 from desktop.wording.held import NEVER, held_line, held_title
 
@@ -54,7 +55,7 @@ class HeldDialog(QDialog):
         layout.addWidget(buttons)
         self.listed.currentRowChanged.connect(self._offer)
         self._offer()
-        self.resize(520, 320)
+        give_room(self, 70, 16)
         session.tell_held(key_of(like), self._show, lambda _: self.title.setText(NEVER))
 
     def _show(self, held: list[Held]) -> None:

@@ -8,7 +8,6 @@ from PySide6.QtWidgets import (
     QComboBox,
     QDialog,
     QDialogButtonBox,
-    QFormLayout,
     QHBoxLayout,
     QLabel,
     QLineEdit,
@@ -21,6 +20,7 @@ from desktop.exchange.number_tokens import Refusal, read_typed
 from desktop.exchange.units import conversion
 from desktop.journal.records import Measure
 from desktop.screens.dialogs import AIMS, ZERO_ANSWERS
+from desktop.screens.room import give_room, roomy_form
 from desktop.wording.entry import number_text
 from desktop.wording.numbers import count
 
@@ -58,7 +58,7 @@ class MeasureSettings(QDialog):
         self.goal_low, self.goal_high = self._number(measure.goal_low), self._number(measure.goal_high)
         self.likely_low, self.likely_high = self._number(measure.likely_low), self._number(measure.likely_high)
         self.worth = self._number(measure.worth)
-        self._form = QFormLayout()
+        self._form = roomy_form()
         self._form.addRow("Name", self.title)
         self._form.addRow("Unit", self.unit)
         self._form.addRow("Can a day truly be zero?", self.zero)
@@ -77,7 +77,7 @@ class MeasureSettings(QDialog):
         layout.addLayout(self._form)
         layout.addWidget(self._problem)
         layout.addWidget(buttons)
-        self.setMinimumWidth(640)
+        give_room(self, 80)
         self.aim.currentIndexChanged.connect(self._show_range)
         self._show_range()
 

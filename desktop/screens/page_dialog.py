@@ -35,6 +35,7 @@ from desktop.page.html import html_of
 from desktop.page.layout import Page, PaperName, lay_out
 from desktop.page.painter import paint_sheet
 from desktop.screens.file_questions import ask_output
+from desktop.screens.room import give_room
 from desktop.wording.page import (
     CHART_COPIED,
     NO_MEASURE_YET,
@@ -193,8 +194,8 @@ class PageDialog(QDialog):
         layout.addWidget(scroll, 1)
         layout.addWidget(self.said)
         layout.addLayout(buttons)
-        screen = self.screen().availableGeometry()
-        self.resize(min(_PREVIEW_WIDTH + 120, screen.width()), min(1000, screen.height() - 40))
+        give_room(self, 95, 100)
+        self.resize(max(self.width(), _PREVIEW_WIDTH + 120), self.height())
 
     def _button(self, row: QHBoxLayout, text: str, do: Callable[[], object]) -> QPushButton:
         button = QPushButton(text)

@@ -4,10 +4,11 @@ from __future__ import annotations
 
 from datetime import date
 
-from PySide6.QtWidgets import QComboBox, QDialog, QDialogButtonBox, QFormLayout, QLineEdit, QVBoxLayout, QWidget
+from PySide6.QtWidgets import QComboBox, QDialog, QDialogButtonBox, QLineEdit, QVBoxLayout, QWidget
 
 from desktop.journal.records import Measure, Span, SpanKind
 from desktop.screens.dialogs import DayBox
+from desktop.screens.room import give_room, roomy_form
 
 _KINDS: tuple[tuple[str, SpanKind], ...] = (
     ("ill: in no number", "ill"),
@@ -32,7 +33,7 @@ class SpanDialog(QDialog):
         self.concerns.addItem("every measure", ())
         for measure in measures:
             self.concerns.addItem(f"only {measure.title}", (measure.id,))
-        form = QFormLayout()
+        form = roomy_form()
         form.addRow("First day", self.first)
         form.addRow("Last day", self.last)
         form.addRow("These days were", self.kind)
@@ -46,7 +47,7 @@ class SpanDialog(QDialog):
         layout = QVBoxLayout(self)
         layout.addLayout(form)
         layout.addWidget(buttons)
-        self.setMinimumWidth(560)
+        give_room(self, 70)
         self.kind.setFocus()
 
     @property
