@@ -9,8 +9,7 @@ from datetime import date, datetime, timedelta
 from pathlib import Path
 
 import numpy as np
-from PySide6.QtCore import QTimer
-from PySide6.QtTest import QTest
+from PySide6.QtCore import QDeadlineTimer, QTimer
 from PySide6.QtWidgets import QApplication, QDialog, QMainWindow, QWidget
 
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person, Record, Span
@@ -63,6 +62,13 @@ class Scene:
     shown: QWidget
 
 
+def let_pass(milliseconds: int) -> None:
+    """Let the window do what it has to do for so long."""
+    end = QDeadlineTimer(milliseconds)
+    while not end.hasExpired():
+        QApplication.processEvents()
+
+
 @contextmanager
 def window_with(folder: Path, journal: str | None, look: str) -> Iterator[MainWindow]:
     """A window in a look, with one of the journals or the start screen; closed afterwards."""
@@ -78,7 +84,7 @@ def window_with(folder: Path, journal: str | None, look: str) -> Iterator[MainWi
     window.set_theme(theme)
     window.open_own()
     window.load_chart()
-    QTest.qWait(SETTLED)
+    let_pass(SETTLED)
     try:
         yield window
     finally:
@@ -120,7 +126,7 @@ def _see_dialog(window: MainWindow, command: tuple[str, ...], see: Callable[[Sce
             return
         assert isinstance(dialog, QDialog)
         try:
-            QTest.qWait(60)
+            let_pass(60)
             see(Scene(command[-1].strip("…").lower(), dialog))
         except BaseException as problem:
             problems.append(problem)

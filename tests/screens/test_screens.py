@@ -1,6 +1,5 @@
 """What a test can see of every screen: nothing without a name, nothing out of reach of the keys, no word cut."""
 
-
 import pytest
 from PySide6.QtCore import Qt
 from PySide6.QtGui import QFontMetrics
