@@ -15,7 +15,9 @@ from desktop.edits.edit import Edit
 from desktop.edits.gaps import gap_is_not_known, gap_was_none
 from desktop.edits.measures import archive_measure, convert_measure, move_measure, remove_measure, set_measure
 from desktop.journal.records import Measure
+from desktop.journal.row_change import RowChange
 from desktop.models.session import Session
+from desktop.screens.caution_settings import CautionSettings
 from desktop.screens.change_dialog import ChangeDialog
 from desktop.screens.dialogs import ask_reason
 from desktop.screens.measure_settings import MeasureSettings
@@ -130,6 +132,30 @@ class LogCommands:
             session.do(convert_measure(session.journal, dialog.chosen, *dialog.conversion))
         else:
             session.do(set_measure(session.journal, dialog.chosen))
+
+    def caution_settings(self) -> None:
+        """Settle what is said about the measure on the chart, and the emergency number."""
+        session, measure = self._current
+        if session is None or measure is None:
+            return
+        settings, journal_id = self._window.settings, session.journal.person.journal_id
+        own = settings.cautions(journal_id, measure.id)
+        dialog = CautionSettings(measure, own, settings.emergency_number, self._window)
+        if dialog.exec() == QDialog.DialogCode.Accepted:
+            settings.set_cautions(journal_id, measure.id, dialog.chosen)
+            settings.set_emergency_number(dialog.number)
+
+    def look_for_cautions(self, changes: tuple[RowChange, ...]) -> None:
+        """Say what there is to say about values that were just typed."""
+        session = self._session
+        if session is not None and changes:
+            settings, journal_id = self._window.settings, session.journal.person.journal_id
+            self._window.workspace.caution.look_at(
+                session.journal,
+                changes,
+                lambda measure: settings.cautions(journal_id, measure),
+                settings.emergency_number,
+            )
 
     def move_measure(self, step: int) -> None:
         """Move the measure's column to the left or right."""

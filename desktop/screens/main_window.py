@@ -16,6 +16,7 @@ from desktop.edits.bring_in import BroughtIn
 from desktop.edits.measures import add_measures
 from desktop.errors import DayfenceError, StorageError
 from desktop.exchange.package import package_place
+from desktop.journal.row_change import RowChange
 from desktop.models.days_table import DaysTable, Unlikely
 from desktop.models.keeping import Keeping
 from desktop.models.ready_made import make_sample, new_person
@@ -329,6 +330,7 @@ class MainWindow(QMainWindow):
             if QMessageBox.question(self, "Dayfence", sentence) != QMessageBox.StandardButton.Yes:
                 return False
         self.session = None
+        self.workspace.caution.hide()
         self.workspace.days.setModel(None)
         if self.keeping is not None:
             self.keeping.close()
@@ -345,8 +347,9 @@ class MainWindow(QMainWindow):
         else:
             self.workspace.show_session(self.session)
 
-    def _after_edit(self) -> None:
+    def _after_edit(self, changes: tuple[RowChange, ...]) -> None:
         self.say("")
+        self.log.look_for_cautions(changes)
         self._follow_session()
 
     def _show_review(self) -> None:
@@ -409,6 +412,7 @@ class MainWindow(QMainWindow):
         self.workspace.days.set_paper(look.paper)
         self.workspace.chart_pane.set_look(look)
         self.workspace.findings.set_dark(is_dark(self.settings.theme))
+        self.workspace.caution.set_dark(is_dark(self.settings.theme))
         model = self.workspace.days.model()
         if isinstance(model, DaysTable):
             model.quiet_colour = look.colour("quiet")

@@ -110,6 +110,7 @@ class Menus:
         log.addSeparator()
         self._writing += [
             _add(log, "Settings of this m&easure…", commands.measure_settings, "Ctrl+E"),
+            _add(log, "Ca&utions of this measure…", commands.caution_settings),
             _add(log, "Move the column &left", partial(commands.move_measure, -1), "Ctrl+Shift+Left"),
             _add(log, "Move the column &right", partial(commands.move_measure, 1), "Ctrl+Shift+Right"),
             _add(log, "&Put this measure away", commands.archive_measure),

@@ -2,12 +2,15 @@
 
 from __future__ import annotations
 
+import json
+from dataclasses import asdict
 from pathlib import Path
 
 from PySide6.QtCore import QByteArray, QSettings
 from PySide6.QtWidgets import QMainWindow
 
 from desktop.screens.theme import ThemeName
+from desktop.wording.caution_table import OwnCautions
 
 TEXT_SIZES = (100, 125, 150, 175, 200)
 """Sizes of text in percent."""
@@ -48,6 +51,27 @@ class Settings:
     def set_copies_place(self, place: Path) -> None:
         """Remember a second place for copies."""
         self._stored.setValue("copies", str(place))
+
+    @property
+    def emergency_number(self) -> str:
+        """The emergency number the person chose; ``""`` until they do."""
+        return str(self._stored.value("emergency", ""))[:40]
+
+    def set_emergency_number(self, number: str) -> None:
+        """Remember the emergency number."""
+        self._stored.setValue("emergency", number)
+
+    def cautions(self, journal_id: str, measure: int) -> OwnCautions:
+        """What the person settled about the cautions of a measure."""
+        try:
+            stored = json.loads(str(self._stored.value(f"cautions/{journal_id}-{measure}", "{}")))
+            return OwnCautions(**stored)
+        except (ValueError, TypeError):
+            return OwnCautions()
+
+    def set_cautions(self, journal_id: str, measure: int, own: OwnCautions) -> None:
+        """Remember what was settled about the cautions of a measure."""
+        self._stored.setValue(f"cautions/{journal_id}-{measure}", json.dumps(asdict(own)))
 
     def keep_places(self, window: QMainWindow, panes: QByteArray | None) -> None:
         """Remember where the window is and, where the person chose them, the widths of its panes."""

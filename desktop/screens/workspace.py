@@ -7,6 +7,7 @@ from PySide6.QtGui import QFont, QFontInfo, QResizeEvent
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QSplitter, QVBoxLayout, QWidget
 
 from desktop.models.session import Session
+from desktop.screens.caution_bar import CautionBar
 from desktop.screens.chart_pane import ChartPane
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.findings_pane import FindingsPane
@@ -31,6 +32,7 @@ class Workspace(QWidget):
         self.findings = FindingsPane()
         self.status = StatusLine()
         self.gap = GapBar()
+        self.caution = CautionBar()
         self._title, self._subtitle = QLabel(), QLabel()
         top = QHBoxLayout()
         top.setContentsMargins(14, 8, 14, 6)
@@ -52,6 +54,7 @@ class Workspace(QWidget):
         layout.setContentsMargins(0, 0, 0, 0)
         layout.setSpacing(0)
         layout.addLayout(top)
+        layout.addWidget(self.caution)
         layout.addWidget(self.gap)
         layout.addWidget(self.panes, 1)
         layout.addWidget(self.status)
