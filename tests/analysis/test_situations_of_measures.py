@@ -6,7 +6,7 @@ from datetime import timedelta
 import numpy as np
 import pytest
 
-from analysis import Change, Log, Measure, review
+from analysis import Change, Log, Measure, Span, review
 from desktop.wording.findings import findings_of
 from tests.analysis.test_situations import days, doubts, told
 from tests.builders import FIRST_DAY, day
@@ -237,3 +237,37 @@ def test_one_of_five_measures_moved_is_counted_among_five():
     assert alone.answer.sureness == "fairly sure"
     assert among.answer.sureness == "leaning"
     assert "5 measures were looked at." in " ".join(findings_of(among).lines())
+
+
+def test_a_first_day_left_out_as_the_clinic_says_is_in_no_number():
+    values = [178, *days(70, 13, 142, 3), *days(71, 14, 141, 3)]
+    answer, _ = told(values, 14, kinds=["set aside", *["value"] * 27], unit="mmHg")
+    assert answer.stretches[0].observations == 13
+    assert answer.stretches[0].above == ()
+    assert answer.answer.sureness == "cannot tell"
+
+
+def test_another_question_from_the_change_on_is_marked_and_never_a_claim():
+    marked = Span(day(28), day(55), "device", "worst pain instead of average pain")
+    answer, said = told(
+        SCORES * 2 + [score + 2 for score in SCORES * 2], 28, spans=[marked], kind="score", aim="less"
+    )
+    assert doubts(answer)["device_mark"]
+    assert answer.answer.sureness == "leaning"
+    assert "(worst pain instead of average pain)" in said
+
+
+def test_a_change_phased_in_over_four_weeks_compares_before_with_fully_in():
+    ramp = [round(20 + 15 * at / 28 + noise) for at, noise in enumerate(days(72, 28, 0, 3))]
+    values = days(73, 28, 20, 3) + ramp + days(74, 28, 35, 3)
+    answer, said = told(values, 28, settle=28, kind="amount", unit="minutes", aim="more")
+    assert [stretch.observations for stretch in answer.stretches] == [28, 28]
+    assert said.startswith("It moved: 36 minutes on a middle day, 21 before.")
+
+
+def test_five_bad_days_of_every_28_are_no_move():
+    cycle = [3] * 23 + [7] * 5
+    noise = np.random.default_rng(75).integers(0, 2, 112).tolist()
+    values = [level + extra for level, extra in zip(cycle * 4, noise, strict=True)]
+    answer, _ = told(values, 56, kind="score", aim="less")
+    assert answer.answer.sureness == "cannot tell"
