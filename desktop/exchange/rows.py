@@ -8,7 +8,7 @@ from collections.abc import Callable, Iterable, Iterator, Sequence
 from dataclasses import dataclass
 from io import StringIO
 from itertools import zip_longest
-from operator import methodcaller
+from operator import itemgetter
 from typing import overload
 
 from desktop.errors import ExchangeError
@@ -27,6 +27,7 @@ _MOST_JOINED = 20
 _ASCII_BLANKS = " \t\x0b\x0c\x1c\x1d\x1e\x1f"
 _BLANKS = re.compile(r"[^\S\n]")
 
+_LINE_END = "\n"
 LEAST_RECTANGLE = 200
 """From this many lines on, rows of equal length are cut all at once."""
 
@@ -107,9 +108,13 @@ def split_rows(text: str) -> Rows:
         raise _too_large("cell", LONGEST_CELL, len(lines[number - 1]), number)
     separator = choose_separator(lines)
     if '"' not in text:
-        rectangle = _rectangle(text, lines, separator) if longest <= LONGEST_CELL else None
-        if rectangle is not None:
-            return Rows(separator, rectangle, list(range(1, len(rectangle) + 1)), frozenset())
+        if longest <= LONGEST_CELL:
+            # The memory of the lines serves for the cells.
+            lines.clear()
+            rectangle = _rectangle(text, separator)
+            if rectangle is not None:
+                return Rows(separator, rectangle, list(range(1, len(rectangle) + 1)), frozenset())
+            lines = text.split("\n")
         return _kept(separator, _plain_records(text, lines, separator), ())
     try:
         return _kept(separator, _strict_records(text, separator), ())
@@ -118,16 +123,22 @@ def split_rows(text: str) -> Rows:
         return _kept(separator, _line_records(lines, separator, broken), broken)
 
 
-def _rectangle(text: str, lines: list[str], separator: str) -> Rectangle | None:
+def _rectangle(text: str, separator: str) -> Rectangle | None:
     """All rows at once where every line has as many cells as the others; None where they must be taken singly."""
-    while lines and not lines[-1]:
-        lines.pop()
-    if not LEAST_RECTANGLE <= len(lines) <= MOST_ROWS + 1:
+    text = text.rstrip("\n")
+    length = text.count("\n") + 1
+    if not LEAST_RECTANGLE <= length <= MOST_ROWS + 1:
         return None
-    width = lines[0].count(separator) + 1
-    if width > MOST_COLUMNS or set(map(methodcaller("count", separator), lines)) != {width - 1}:
+    width = text.partition("\n")[0].count(separator) + 1
+    if width > MOST_COLUMNS:
         return None
-    flat = separator.join(lines).split(separator)
+    # Every line end is kept in front of the cell behind it: if all of them stand in the first column, and there
+    # as many as rows, then every line has as many cells as the first.
+    flat = text.replace("\n", f"{separator}\n").split(separator)
+    firsts = flat[width::width]
+    if len(flat) != width * length or not all(map(_LINE_END.__eq__, map(itemgetter(slice(1)), firsts))):
+        return None
+    flat[width::width] = map(itemgetter(slice(1, None)), firsts)
     if not text.isascii() or any(blank in text for blank in _ASCII_BLANKS):
         flat = list(map(str.strip, flat))
     columns = [tuple(flat[place::width]) for place in range(width)]
