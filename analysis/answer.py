@@ -305,6 +305,7 @@ class Review:
         findings, caution: in plain words, filled in by the wording.
         rows: what became of the rows of the table, where one was read.
         today: day number of the last day looked at; None for a log without any value. Not part of the JSON.
+        to_come: day numbers of changes marked for after ``today``; not part of the JSON.
         points: one observation a period, for the chart; not part of the JSON.
         worth_a_look: among many logs, whether this one is; None when reviewed alone. Not part of the JSON.
     """
@@ -315,6 +316,7 @@ class Review:
     points: Points
     doubts: tuple[Doubt, ...] = ()
     today: int | None = None
+    to_come: tuple[int, ...] = ()
     switches: Switches | None = None
     comparisons: tuple[Comparison, ...] = ()
     findings: tuple[str, ...] = ()

@@ -121,6 +121,7 @@ def review(
         points,
         doubts,
         today=end,
+        to_come=tuple(sorted(one.day.toordinal() for one in changes if one.day.toordinal() > end)),
         switches=_switches([comparisons[0], *befores]) if several else None,
         comparisons=tuple(_listed(comparisons, befores)) if several else (),
     )

@@ -23,6 +23,18 @@ _EXCESS_BY_REMAINDER = (0.349, 0.455, 0.358, 0.443)
 """Above 60 days the excess over the known-fences rate is this over n, by n mod 4 (same simulation)."""
 
 
+def some_outside_rate(days: int) -> float:
+    """Chance that some day of an unchanged log lies outside the log's own fences.
+
+    Args:
+        days: number of observations the fences were made of, and judged, at least 5.
+
+    Fitted to simulated normal logs (0.24 at 7 days, 0.28 at 28, 0.40 at 56, 0.90 at 365); the fences of few days
+    are so uncertain that one of their own often lies outside.
+    """
+    return 1 - (1 - 0.10 - 0.75 / days) * (1 - _KNOWN_FENCES_RATE) ** days
+
+
 def new_day_rate(baseline_days: int, carry_over: float | None = None) -> float:
     """Chance that one more unchanged day lies outside the fences of a baseline of this length.
 

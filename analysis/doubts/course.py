@@ -99,7 +99,8 @@ def first_days(seen: Seen) -> Doubt | None:
     week[known[:WEEK]] = True
     nothing = np.zeros(len(sides.after), dtype=bool)
     way = "higher" if is_high else "lower"
-    return Doubt("first_days", (("way", way),), seen.turns_on_days(week, nothing))
+    left = seen.too_few_left(week, nothing)
+    return Doubt("first_days", (("way", way), *left), seen.turns_on_days(week, nothing))
 
 
 def odd_day(seen: Seen) -> Doubt | None:

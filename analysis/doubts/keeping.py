@@ -106,7 +106,8 @@ def late_entries(seen: Seen) -> Doubt | None:
     days = len(sides.known_before) + len(sides.known_after)
     if late < 3 or late < LATE_SHARE * days:
         return None
-    return Doubt("late_entries", (("late", late), ("days", days)), seen.turns_on_days(before, after))
+    left = seen.too_few_left(before, after)
+    return Doubt("late_entries", (("late", late), ("days", days), *left), seen.turns_on_days(before, after))
 
 
 def equal_in_row(seen: Seen) -> Doubt | None:
@@ -129,7 +130,8 @@ def equal_in_row(seen: Seen) -> Doubt | None:
     everything = np.concatenate([sides.known_before, sides.known_after])
     if np.mean(everything == value) > 0.5:
         return None
-    return Doubt("equal_in_row", (("days", longest), ("value", value)), seen.turns_on_days(before, after))
+    left = seen.too_few_left(before, after)
+    return Doubt("equal_in_row", (("days", longest), ("value", value), *left), seen.turns_on_days(before, after))
 
 
 def round_numbers(seen: Seen) -> Doubt | None:
@@ -157,7 +159,8 @@ def weekdays_only(seen: Seen) -> Doubt | None:
     ends_after = int((after & ~np.isnan(sides.after)).sum())
     if ends_before >= 2 or ends_after < 3 or len(sides.known_before) < 5:
         return None
-    return Doubt("weekdays_only", (("weekend", ends_before),), seen.turns_on_days(before, after))
+    left = seen.too_few_left(before, after)
+    return Doubt("weekdays_only", (("weekend", ends_before), *left), seen.turns_on_days(before, after))
 
 
 def _longest_run(values: np.ndarray) -> tuple[int, int]:

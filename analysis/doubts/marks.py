@@ -23,7 +23,8 @@ def device_mark(seen: Seen) -> Doubt | None:
         before = (sides.before_days >= first) & (sides.before_days <= last)
         after = (sides.after_days >= first) & (sides.after_days <= last)
         if before.any() or after.any():
-            return Doubt("device_mark", label, seen.turns_on_days(before, after))
+            left = seen.too_few_left(before, after)
+            return Doubt("device_mark", (*label, *left), seen.turns_on_days(before, after))
     return None
 
 

@@ -11,6 +11,7 @@ from numpy.typing import NDArray
 
 from analysis.answer import Stretch
 from analysis.log import Change, Log, Measure
+from analysis.questions.did_it_move import FEWEST_AFTER, FEWEST_BEFORE
 from analysis.sides import Level, Sides, compare
 from analysis.slots import OtherSlots
 
@@ -95,6 +96,16 @@ class Seen:
             for _ in range(_RANDOM_DRAWS)
         )
         return lost <= _RANDOM_DRAWS // 3
+
+    def too_few_left(
+        self, before: NDArray[np.bool_], after: NDArray[np.bool_]
+    ) -> tuple[tuple[str, float | str], ...]:
+        """A field that says so where the days left would not be enough for any answer; masks as above."""
+        if self.sides is None:
+            return ()
+        rest = self.sides.without(before, after)
+        enough = len(rest.known_before) >= FEWEST_BEFORE and len(rest.known_after) >= FEWEST_AFTER
+        return () if enough else (("left", "too few"),)
 
 
 def _as_many(chosen: NDArray[np.bool_], rng: np.random.Generator) -> NDArray[np.bool_]:

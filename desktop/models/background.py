@@ -25,13 +25,18 @@ class Background(QObject):
         self._pool.setMaxThreadCount(1)
         # The pool's own time-out would end the thread between two jobs.
         self._pool.setExpiryTimeout(-1)
+        self._kept: list[_Job] = []
         self.finished.connect(self._hand_back)
 
     def run(
         self, job: Callable[[], Result], done: Callable[[Result], None], failed: Callable[[Exception], None]
     ) -> None:
         """Do a job on the worker; then call ``done`` or ``failed`` on this object's thread."""
-        self._pool.start(_Job(self, job, done, failed))
+        # Kept until it is handed back: what it refers to must not be let go of on the worker, which would free
+        # objects of the screen's thread over there.
+        kept = _Job(self, job, done, failed)
+        self._kept.append(kept)
+        self._pool.start(kept)
 
     def wait(self) -> None:
         """Return when every job handed in is done; their results may still be on their way."""
@@ -39,6 +44,8 @@ class Background(QObject):
 
     @Slot(object, object)
     def _hand_back(self, receive: Callable[[object], None], result: object) -> None:
+        # Jobs are done in order, so that the oldest is the one that came back.
+        self._kept.pop(0)
         receive(result)
 
 
@@ -51,6 +58,7 @@ class _Job(QRunnable):
         failed: Callable[[Exception], None],
     ) -> None:
         super().__init__()
+        self.setAutoDelete(False)
         self._owner, self._job, self._done, self._failed = owner, job, done, failed
 
     def run(self) -> None:

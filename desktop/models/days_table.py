@@ -224,6 +224,17 @@ class DaysTable(QAbstractTableModel):
         self._unread.pop(cell, None)
         self._typed(cell, "kept")
 
+    @property
+    def unread_texts(self) -> list[tuple[date, str]]:
+        """What was typed and could not be read, with its day, oldest first."""
+        return sorted((cell.day, unread.text) for cell, unread in self._unread.items())
+
+    def holds_a_value(self, index: Index) -> bool:
+        """Whether a number is written down in a cell."""
+        measure = self.measure(index.column())
+        entry = self._session.journal.entry(measure.id, self.day(index.row())) if measure is not None else None
+        return entry is not None and entry.value is not None
+
     def set_kind(self, indexes: list[QModelIndex], kind: EmptyKind) -> None:
         """Say of these cells that the day was a rest day, ill or away."""
         for index in indexes:

@@ -51,10 +51,18 @@ def _parser() -> argparse.ArgumentParser:
     return parser
 
 
+def _is_there(output: Path) -> bool:
+    """Whether something would be written over; a folder that may not be looked into is told when writing."""
+    try:
+        return output.exists()
+    except OSError:
+        return False
+
+
 def _page(arguments: Sequence[str]) -> int:
     options = _parser().parse_args(arguments)
     output: Path = options.output
-    if output.exists() and not options.force:
+    if _is_there(output) and not options.force:
         raise RefusedError(there_already(output))
     asked = asked_of(options, with_pair=True)
     reviews = [one.reviewed(options) for one in asked]

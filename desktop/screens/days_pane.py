@@ -21,6 +21,7 @@ from PySide6.QtWidgets import (
 
 from desktop.journal.records import Measure
 from desktop.models.days_table import KIND_LETTERS, DaysTable
+from desktop.wording.entry import HOLDS_A_VALUE, LAST_DAY
 
 _ROW_HEIGHT = 1.7
 """Of a line of text; at least 24 pixels to press."""
@@ -113,6 +114,8 @@ class DaysPane(QTableView):
             self._go_down()
         elif key in (Qt.Key.Key_Delete, Qt.Key.Key_Backspace) and can_change:
             self.days.clear(self.selectedIndexes())
+        elif is_plain and text in KIND_LETTERS and not is_note and can_change and self._hold_values():
+            self.said.emit(HOLDS_A_VALUE)
         elif is_plain and text in KIND_LETTERS and not is_note and can_change:
             self.days.set_kind(self.selectedIndexes(), KIND_LETTERS[text])
             self._go_down()
@@ -164,6 +167,10 @@ class DaysPane(QTableView):
         if event.type() == QEvent.Type.FontChange:
             self._settle_sizes()
 
+    def _hold_values(self) -> bool:
+        """Whether a number is written down on any of the chosen days: one letter must not take it away."""
+        return any(self.days.holds_a_value(index) for index in self.selectedIndexes())
+
     def _remember_place(self) -> None:
         index = self.currentIndex()
         if index.isValid():
@@ -179,6 +186,8 @@ class DaysPane(QTableView):
 
     def _go_down(self) -> None:
         at = self.currentIndex()
+        if at.row() == self.model().rowCount() - 1:
+            self.said.emit(LAST_DAY)
         below = min(at.row() + 1, self.model().rowCount() - 1)
         self.setCurrentIndex(self.model().index(below, at.column()))
 

@@ -26,7 +26,7 @@ from desktop.journal.records import AimWord, Measure
 from desktop.models.ready_made import ready_measures
 from desktop.screens.room import roomy_form
 from desktop.wording.days import full_day
-from desktop.wording.entry import number_text
+from desktop.wording.entry import number_text, unread_sentence
 
 _OWN = "My own measure"
 
@@ -213,3 +213,11 @@ def ask_if_right(parent: QWidget, measure: Measure, value: float, day: date) -> 
     box.setEscapeButton(again)
     box.exec()
     return box.clickedButton() is keep
+
+
+def ask_to_leave_unread(parent: QWidget, unread: list[tuple[date, str]]) -> bool:
+    """Ask before what could not be read is gone; nothing is asked where there is nothing."""
+    if not unread:
+        return True
+    yes = QMessageBox.StandardButton.Yes
+    return QMessageBox.question(parent, "Dayfence", unread_sentence(unread)) == yes

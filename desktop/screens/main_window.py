@@ -23,7 +23,7 @@ from desktop.models.ready_made import make_sample, new_person
 from desktop.models.session import Session
 from desktop.screens.bring_in_dialog import BringInDialog
 from desktop.screens.days_pane import DaysPane
-from desktop.screens.dialogs import MeasureDialog, ask_day, ask_if_right
+from desktop.screens.dialogs import MeasureDialog, ask_day, ask_if_right, ask_to_leave_unread
 from desktop.screens.file_commands import keep_elsewhere
 from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_journal, ask_table
 from desktop.screens.log_commands import LogCommands
@@ -324,6 +324,8 @@ class MainWindow(QMainWindow):
         QApplication.processEvents()
         if self.workspace.days.state() == DaysPane.State.EditingState:
             # What was being typed was asked about, and is being typed again.
+            return False
+        if not ask_to_leave_unread(self, self.workspace.days.days.unread_texts):
             return False
         if session.trouble is not None and not leave_unsaved:
             sentence = f"{trouble_sentence(session.trouble)}\n\nLeave without what is not saved?"

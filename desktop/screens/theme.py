@@ -65,7 +65,7 @@ def apply_theme(app: QApplication, theme: ThemeName, text_percent: int) -> Look:
     # The style draws the edges of boxes a little darker than the window, which in the dark nobody sees.
     palette.setColor(QPalette.ColorRole.Window, QColor(_EDGES[name]).lighter(_DARKENED))
     for widget in _EDGED:
-        app.setPalette(palette, widget)
+        app.setPalette(palette, widget)  # type: ignore[arg-type]  # Text is what it takes; its types say bytes.
     face = QFont(FACE)
     face.setPixelSize(round(PLAIN_SIZE * text_percent / 100))
     app.setFont(face)

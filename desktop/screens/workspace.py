@@ -93,7 +93,7 @@ class Workspace(QWidget):
         self._title.setText(measure.title if measure else "No measure yet")
         unit = measure.unit if measure else ""
         if measure is not None and unit and measure.kind in ("amount", "count"):
-            unit = f"{unit} a day"
+            unit = f"{unit} a {session.period or measure.period}"
         self._subtitle.setText("  ·  ".join(part for part in (unit, session.journal.person.name) if part))
         self.status.show_session(session)
         self.gap.follow(session)

@@ -12,6 +12,7 @@ Told = Callable[[Fields, Speech], str]
 
 _SAME = "Without them the answer is the same."
 _OTHER = "Without them the answer is no longer sure."
+_TOO_FEW = "Without them too few would be left to tell."
 _SAME_WEEK = "Without that week the answer is the same."
 _OTHER_WEEK = "Without that week it is not sure."
 
@@ -23,8 +24,11 @@ def doubt_sentence(doubt: Doubt, speech: Speech) -> str:
         KeyError: a doubt without a sentence; a test looks for one.
     """
     fact, same, other = SENTENCES[doubt.name]
+    fields = dict(doubt.fields)
     effect = other if doubt.alters else same
-    return f"{fact(dict(doubt.fields), speech)} {effect}".strip()
+    if fields.get("left") == "too few" and not doubt.alters:
+        effect = _TOO_FEW
+    return f"{fact(fields, speech)} {effect}".strip()
 
 
 def _few_days(fields: Fields, speech: Speech) -> str:

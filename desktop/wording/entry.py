@@ -6,7 +6,7 @@ from datetime import date
 
 from analysis.log import DayKind
 from desktop.journal.records import Entry, Measure
-from desktop.wording.days import long_day
+from desktop.wording.days import long_day, short_day
 from desktop.wording.numbers import plain
 
 KIND_WORDS: dict[DayKind, str] = {
@@ -21,6 +21,9 @@ KIND_WORDS: dict[DayKind, str] = {
     "extra": "extra reading, not counted",
 }
 """What each kind of day says beside its value."""
+
+LAST_DAY = "That is the last day of the table. Press the arrow up for the days before."
+HOLDS_A_VALUE = "This day holds a number. Press Delete first, then the letter; or use Log, The chosen days were."
 
 _REFUSALS = {
     "duration without unit": "“{text}” looks like hours and minutes. Type plain numbers for this measure.",
@@ -65,6 +68,13 @@ def spoken_cell(measure: Measure, entry: Entry | None, day: date) -> str:
         return f"{name}: {kind}"
     said = f"{number_text(measure, entry.value)} {measure.unit}".strip()
     return f"{name}: {said}, {kind}" if kind else f"{name}: {said}"
+
+
+def unread_sentence(unread: list[tuple[date, str]]) -> str:
+    """What was typed, could not be read, and would be gone with the window."""
+    listed = "; ".join(f"“{text}” on {short_day(day)}" for day, text in unread[:3])
+    more = f" and {len(unread) - 3} more" if len(unread) > 3 else ""
+    return f"Not kept, since it is no number: {listed}{more}. Leave without it?"
 
 
 def refusal_sentence(reason: str, text: str) -> str:

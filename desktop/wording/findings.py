@@ -11,11 +11,16 @@ from desktop.wording.moved import MovedTeller
 from desktop.wording.one_stretch import OneStretchTeller
 from desktop.wording.telling import Findings, Section, speech_of
 
+_NOTHING_YET = (
+    "There is no value in this log yet.",
+    "Type a number and press Enter. Arrow up goes to earlier days.",
+)
+
 
 def findings_of(review: Review) -> Findings:
     """What a review says, in plain words."""
     if not review.stretches:
-        return Findings("No answer yet.", (Section("", ("There is no value in this log yet.",)),))
+        return Findings("No answer yet.", (Section("", _NOTHING_YET),))
     if len(review.stretches) == 1:
         return OneStretchTeller(review).tell()
     return MovedTeller(review).tell()

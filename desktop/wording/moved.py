@@ -6,7 +6,7 @@ import numpy as np
 
 from analysis.answer import AtLevel, Carried, HowMuch, HowOften, Review, Shift, Since, StillNeeded
 from analysis.questions.did_it_move import CLAIMS, FEWEST_AFTER, FEWEST_BEFORE
-from desktop.wording.numbers import Speech, chance_in_100
+from desktop.wording.numbers import Speech, chance_in_100, count
 from desktop.wording.telling import Findings, Section, Teller
 
 STEADY_BELOW = 0.01
@@ -179,6 +179,7 @@ class MovedTeller(Teller):
             f"{word[0].upper()}{word[1:]}: {reason} {luck}",
             *like_days,
             *self.season(),
+            *self._settling_in(),
             *self._levelled_off(),
             *self._switches(),
             *self.up_to(),
@@ -268,6 +269,8 @@ class MovedTeller(Teller):
 
     def _since(self, since: Since) -> str:
         name = self.days.name
+        if self._is_anytime(since):
+            return "This log cannot tell when it began."
         if since.first == since.last:
             told = f"Since {name(since.likely)}."
         else:
@@ -283,6 +286,18 @@ class MovedTeller(Teller):
         if since.first > self.after.change:
             return f"{told} That is after the day you marked, {marked}."
         return f"{told} That fits the day you marked, {marked}."
+
+    def _is_anytime(self, since: Since) -> bool:
+        """Whether more than half of the log fits as the beginning."""
+        whole = self.after.last - self.before.first
+        return since.last - since.first > whole / 2
+
+    def _settling_in(self) -> list[str]:
+        """Days after the change that are in no number."""
+        if self.after.change is None or self.after.first <= self.after.change or self.speech.one != "day":
+            return []
+        days = self.after.first - self.after.change
+        return [f"The first {count(days, 'day')} after the change, to settle in, are in no number."]
 
     def _levelled_off(self) -> list[str]:
         """A slope before the change that is not there since."""
@@ -324,12 +339,15 @@ class MovedTeller(Teller):
             short_after = max(0, FEWEST_AFTER - after.observations)
             if short_before:
                 return (
-                    f"The days before the change are too few, by {short_before}, and cannot be added later. "
-                    "If you wrote down earlier days somewhere, add them."
+                    f"The {speech.many} before the change are too few, by {short_before}. Only earlier ones that "
+                    "you wrote down somewhere can help: add them."
                 )
             return f"{speech.periods(short_after)} more after the change."
         needed = answer.still_needed
         if answer.sureness in CLAIMS:
+            if after.observations < FEWEST_FOR_LEVELLED:
+                left = speech.periods(FEWEST_FOR_LEVELLED - after.observations)
+                return f"This is the answer so far. {left} more would show if it lasts."
             return f"You have your answer. More {speech.many} would show if it lasts."
         if any(doubt.alters for doubt in self.review.doubts):
             return f"More {speech.many} alone will not settle it: the first point above stands in the way."

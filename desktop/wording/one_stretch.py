@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from analysis.answer import Stretch
+from analysis.batch.luck import some_outside_rate
 from analysis.questions.did_it_move import FEWEST_BEFORE
 from desktop.wording.moved import STEADY_BELOW
 from desktop.wording.telling import Findings, Section, Teller
@@ -19,7 +20,7 @@ class OneStretchTeller(Teller):
         only, speech = self.review.stretches[0], self.speech
         slope = self.review.answer.slope
         steady = slope is not None and slope.before and (slope.p_before or 1.0) < STEADY_BELOW
-        told = [*self._level(only), *self.season(), *self.up_to()]
+        told = [*self._level(only), *self.season(), *self.up_to(), *self.to_come()]
         if slope is not None and slope.before and steady:
             told.append(f"It is moving steadily, by about {speech.pace(slope.before)}.")
         sections = [Section("The log so far", tuple(told))]
@@ -61,10 +62,13 @@ class OneStretchTeller(Teller):
                 f"{speech.with_unit(stretch.upper_fourth)}."
             )
         if stretch.lower_fence is not None and stretch.upper_fence is not None:
-            told.append(
-                f"The fences stand at {speech.number(stretch.lower_fence)} and "
-                f"{speech.with_unit(stretch.upper_fence)}."
-            )
+            if stretch.lower_fence < 0 and self.review.measure.kind in ("amount", "count", "score"):
+                told.append(f"The upper fence stands at {speech.with_unit(stretch.upper_fence)}; no lower one.")
+            else:
+                told.append(
+                    f"The fences stand at {speech.number(stretch.lower_fence)} and "
+                    f"{speech.with_unit(stretch.upper_fence)}."
+                )
         return told
 
     def _out_of_line(self, only: Stretch, outside: list[int]) -> list[str]:
@@ -88,5 +92,9 @@ class OneStretchTeller(Teller):
         if len(outside) > _LISTED:
             others = len(outside) - _LISTED
             told.append(f"The other {'one is' if others == 1 else f'{others} are'} marked on the chart.")
+        in_100 = 10 * round(10 * some_outside_rate(only.observations))
+        told.append(
+            f"Luck alone puts some {self.speech.one} outside in about {in_100} of 100 steady logs of this length."
+        )
         told.append(f"One {self.speech.one} alone says nothing about the level.")
         return told

@@ -56,6 +56,12 @@ class Teller:
         self.speech = speech_of(review)
         self.days = day_words_of(review)
 
+    def to_come(self) -> list[str]:
+        """Changes that are marked for days still to come."""
+        return [
+            f"A change is marked for {self.days.day(day)}, which is still to come." for day in self.review.to_come
+        ]
+
     def season(self) -> list[str]:
         """What is said where the time of year is in no number."""
         season = self.review.answer.season

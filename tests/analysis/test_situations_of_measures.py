@@ -271,3 +271,28 @@ def test_five_bad_days_of_every_28_are_no_move():
     values = [level + extra for level, extra in zip(cycle * 4, noise, strict=True)]
     answer, _ = told(values, 56, kind="score", aim="less")
     assert answer.answer.sureness == "cannot tell"
+
+
+def test_a_log_typed_in_one_evening_is_not_told_to_stand_without_its_days():
+    kinds = ["late"] * 26 + ["value"] * 2
+    answer, said = told(days(76, 14, 20, 4) + days(77, 14, 35, 4), 14, kinds=kinds, unit="minutes")
+    assert "26 of 28 days were typed days afterwards. Without them too few would be left to tell." in said
+    assert answer.answer.sureness == "as sure as a log can be"
+
+
+def test_a_change_still_to_come_is_named():
+    log = Log.from_pairs([(day(place), value) for place, value in enumerate(days(78, 28, 20))])
+    answer = review(log, [Change(day(60), "earlier bed")], today=day(27))
+    assert "A change is marked for 2 May, which is still to come." in " ".join(findings_of(answer).lines())
+
+
+def test_a_day_out_of_line_stands_beside_what_luck_puts_there():
+    values = [*days(79, 27, 30, 3), 60.0]
+    _, said = told(values, unit="minutes", kind="amount")
+    assert said.startswith("1 day is out of line with the rest.")
+    assert "Luck alone puts some day outside in about 30 of 100 steady logs of this length." in said
+
+
+def test_settling_in_days_are_named_as_left_out():
+    _, said = told(days(16, 18, 20, 4) + days(17, 38, 40, 4), 28, settle=5, unit="minutes")
+    assert "The first 5 days after the change, to settle in, are in no number." in said

@@ -29,7 +29,7 @@ class Person:
     def starts_the_program(self) -> MainWindow:
         load_faces()
         self.window = MainWindow(self.folder, now=lambda: self.now)
-        self.qtbot.addWidget(self.window)
+        self.qtbot.addWidget(self.window, before_close_func=_leave_unread)
         self.window.show()
         self._is_at_the_window()
         self.window.open_own()
@@ -100,6 +100,12 @@ class Person:
     @property
     def status(self) -> str:
         return self.window.workspace.status.saved.text()
+
+
+def _leave_unread(window: MainWindow) -> None:
+    """At the end of a test nobody answers whether what could not be read may go."""
+    if window.session is not None:
+        window.workspace.days.days._unread.clear()
 
 
 @pytest.fixture

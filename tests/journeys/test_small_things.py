@@ -5,7 +5,7 @@ from datetime import date, timedelta
 from PySide6.QtCore import QEvent, Qt
 from PySide6.QtGui import QGuiApplication, QKeyEvent
 from PySide6.QtTest import QTest
-from PySide6.QtWidgets import QApplication
+from PySide6.QtWidgets import QApplication, QMessageBox
 
 from tests.journeys.test_first_four_weeks import FIRST, starts_a_log
 
@@ -89,3 +89,34 @@ def test_an_earlier_day_is_reached_by_its_date(person):
     assert person.days.days.day(person.days.currentIndex().row()) == date(2030, 12, 24)
     person.types("15⏎")
     assert person.window.session.journal.entry(1, date(2030, 12, 24)).kind == "late"
+
+
+def test_a_letter_does_not_take_a_number_away_and_today_says_where_earlier_days_are(person):
+    window = person.starts_the_program()
+    starts_a_log(person)
+    person.types("30⏎")
+    assert "arrow up" in window.workspace.status.said.text()
+    person.presses(Qt.Key.Key_A)
+    assert window.session.journal.entry(1, window.session.today).value == 30
+    assert "Press Delete first" in window.workspace.status.said.text()
+
+
+def test_what_could_not_be_read_is_asked_about_before_it_is_gone(person):
+    window = person.starts_the_program()
+    starts_a_log(person)
+    person.goes_to(FIRST)
+    person.types("12x⏎30⏎")
+    asked = []
+
+    def answer(button):
+        def press(box):
+            asked.append(box.text())
+            box.button(button).click()
+
+        return press
+
+    person.answers(answer(QMessageBox.StandardButton.No))
+    assert not window.close()
+    assert asked == ["Not kept, since it is no number: “12x” on Mon 3 Mar. Leave without it?"]
+    person.answers(answer(QMessageBox.StandardButton.Yes))
+    assert window.close()

@@ -104,7 +104,11 @@ def test_an_amount_too_small_for_the_baseline_is_told_as_such():
     [
         (14, 1, "3 days more after the change."),
         (14, 3, "1 day more after the change."),
-        (5, 9, "The days before the change are too few, by 2, and cannot be added later."),
+        (
+            5,
+            9,
+            "The days before the change are too few, by 2. Only earlier ones that you wrote down",
+        ),
     ],
 )
 def test_too_early_says_what_is_missing(before, after, settles):
@@ -128,7 +132,8 @@ def test_one_day_after_is_told_alone():
 
 
 def test_an_empty_log_has_no_answer_yet():
-    assert told([]) == "No answer yet.\nThere is no value in this log yet."
+    said = told([])
+    assert said.startswith("No answer yet.\nThere is no value in this log yet.\nType a number and press Enter.")
 
 
 def test_a_log_without_odd_days_says_so_and_what_to_do_next():
@@ -315,7 +320,8 @@ def allowed(one: Review) -> set[str]:
     values += [float(value) for value in one.points.values[one.points.known]]
     if one.stretches:
         first, last = one.stretches[0], one.stretches[-1]
-        values += [7 - first.observations, 4 - last.observations]
+        values += [7 - first.observations, 4 - last.observations, 14 - last.observations]
+        values += [last.first - (last.change or last.first)] + [10 * tenth for tenth in range(1, 11)]
         values += [len(first.below) + len(first.above), len(first.below) + len(first.above) - 3]
         inside = (one.points.first >= last.first) & (one.points.first <= last.last) & one.points.known
         after = one.points.values[inside]
