@@ -67,6 +67,8 @@ def convert_measure(journal: Journal, measure: Measure, factor: float, offset: f
         goal_high=turned(measure.goal_high),
         likely_low=turned(measure.likely_low),
         likely_high=turned(measure.likely_high),
+        limit_low=turned(measure.limit_low),
+        limit_high=turned(measure.limit_high),
         worth=None if measure.worth is None else _tidy(abs(factor) * measure.worth),
     )
     entries = [

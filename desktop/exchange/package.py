@@ -173,7 +173,7 @@ def _read(folder: Path, table: PackageTable) -> Iterator[Record]:
     keys: set[tuple[str | int, ...]] = set()
     try:
         reader = csv.DictReader(io.StringIO(source.decode("utf-8-sig"), newline=""), strict=True, restkey="")
-        if tuple(reader.fieldnames or ()) != tuple(field.name for field in table.fields):
+        if tuple(reader.fieldnames or ()) not in table.headers:
             raise ValueError("other columns")
         for row in reader:
             line = reader.line_num

@@ -61,12 +61,20 @@ class PackageTable:
         record: what a row is.
         fields: its columns, in order.
         key: the columns no two rows agree in.
+        added: the last columns, which packages of earlier versions lack.
     """
 
     name: str
     record: type[Record]
     fields: tuple[Field, ...]
     key: tuple[str, ...]
+    added: tuple[str, ...] = ()
+
+    @property
+    def headers(self) -> tuple[tuple[str, ...], ...]:
+        """The header lines there can be: of this version, of an earlier one."""
+        names = tuple(field.name for field in self.fields)
+        return names, names[: len(names) - len(self.added)]
 
     @property
     def file(self) -> str:
@@ -116,8 +124,12 @@ TABLES: tuple[PackageTable, ...] = (
             _number("worth"),
             Field("look_day", "day", optional=True),
             Field("archived", "yes/no"),
+            _number("limit_low"),
+            _number("limit_high"),
+            Field("limit_words"),
         ),
         ("id",),
+        added=("limit_low", "limit_high", "limit_words"),
     ),
     PackageTable(
         "entries",
@@ -218,7 +230,7 @@ def record_of(table: PackageTable, row: Mapping[str, str]) -> Record:
     Raises:
         ValueError: a cell cannot be its field, or the fields do not go together.
     """
-    values = {field.name: value_of(field, row[field.name]) for field in table.fields}
+    values = {field.name: value_of(field, row[field.name]) for field in table.fields if field.name in row}
     record = table.record(**values)  # type: ignore[arg-type]
     if isinstance(record, Entry):
         if (record.value is None) != (record.kind in ("blank", "rest", "ill", "away")):

@@ -7,6 +7,7 @@ from dataclasses import dataclass, field
 from datetime import date
 
 import analysis.log
+from desktop.journal.clients import Client, Coach, CoachingSession
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person, Plan, Record, Span
 from desktop.journal.row_change import RowChange, key_of
 
@@ -93,6 +94,8 @@ class Journal:
                 return self.plans.get(like.id)
             case DayNote():
                 return self.notes.get(like.day)
+            case Coach() | Client() | CoachingSession():
+                return None
 
     def columns(self) -> list[Measure]:
         """The measures shown in the table, in their order."""
@@ -181,6 +184,8 @@ class Journal:
                 self.plans[record.id] = record
             case DayNote():
                 self.notes[record.day] = record
+            case Coach() | Client() | CoachingSession():
+                raise ValueError("what a coach keeps is never in a journal")
 
     def _remove(self, record: Record) -> None:
         match record:
@@ -198,6 +203,8 @@ class Journal:
                 del self.plans[record.id]
             case DayNote():
                 del self.notes[record.day]
+            case Coach() | Client() | CoachingSession():
+                raise ValueError("what a coach keeps is never in a journal")
 
 
 def _kind_in_numbers(measure: Measure, entry: Entry) -> analysis.log.DayKind:

@@ -10,6 +10,7 @@ from datetime import date
 from typing import Literal
 
 from analysis.log import Combine, DayKind, MeasureKind, Missed, Period
+from desktop.journal.clients import Client, Coach, CoachingSession
 
 Source = Literal["typed", "table", "sample"]
 SpanKind = Literal["ill", "away", "device", "other"]
@@ -49,6 +50,8 @@ class Measure:
         worth: the smallest move that would be worth it, in the unit; None = not said.
         look_day: the day agreed on to judge; None = not agreed.
         archived: hidden from the table, kept in the file.
+        limit_low, limit_high: the limits the person's clinic gave them, both still within; None = none given.
+        limit_words: what the clinic said to do beyond them, in its own words.
     """
 
     id: int
@@ -69,6 +72,9 @@ class Measure:
     worth: float | None = None
     look_day: date | None = None
     archived: bool = False
+    limit_low: float | None = None
+    limit_high: float | None = None
+    limit_words: str = ""
 
 
 @dataclass(frozen=True)
@@ -150,5 +156,10 @@ class DayNote:
     text: str
 
 
-Record = Person | Measure | Entry | Change | Span | Plan | DayNote
+JournalRecord = Person | Measure | Entry | Change | Span | Plan | DayNote
 """Every kind of record a journal holds."""
+
+CaseloadRecord = Coach | Client | CoachingSession
+"""Every kind of record a coach's caseload holds."""
+
+Record = JournalRecord | CaseloadRecord

@@ -5,6 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 from typing import Literal
 
+from desktop.journal.clients import Client, Coach, CoachingSession
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person, Plan, Record, Span
 
 StepKind = Literal["do", "undo", "redo"]
@@ -30,6 +31,13 @@ Act = Literal[
     "restore copy",
     "put earlier back",
     "win back",
+    "start caseload",
+    "set coach",
+    "add clients",
+    "set client",
+    "write session",
+    "remove session",
+    "mark looked at",
 ]
 """What the person did, as the history names it; the wording has a phrase for each."""
 
@@ -97,5 +105,9 @@ def key_of(record: Record) -> tuple[str | int, ...]:
             return ("entry", record.measure, record.day.isoformat(), record.slot)
         case DayNote():
             return ("note", record.day.isoformat())
-        case Measure() | Change() | Span() | Plan():
+        case Coach():
+            return ("coach",)
+        case CoachingSession():
+            return ("session", record.client, record.day.isoformat())
+        case Client() | Measure() | Change() | Span() | Plan():
             return (type(record).__name__.lower(), record.id)

@@ -49,6 +49,8 @@ class CautionSettings(QDialog):
         self.speaks = QCheckBox("Say something when a value I type meets a line")
         self.speaks.setChecked(not own.off)
         self.low, self.high, self.gain = self._box(own.low), self._box(own.high), self._box(own.gain)
+        self.words = QLineEdit(own.words)
+        self.words.setPlaceholderText("what my clinic said to do then")
         self.gain_days = QSpinBox()
         self.gain_days.setRange(1, 30)
         self.gain_days.setValue(own.gain_days)
@@ -60,6 +62,7 @@ class CautionSettings(QDialog):
         form.addRow("", self.speaks)
         form.addRow("My own lower limit", self.low)
         form.addRow("My own upper limit", self.high)
+        form.addRow("Beyond my limits", self.words)
         kind = kind_and_unit(measure)
         self._has_gain = kind is not None and kind[0] == "weight"
         form.addRow("", self.heart_failure)
@@ -114,7 +117,13 @@ class CautionSettings(QDialog):
             low, high = high, low
         declared = self._has_gain and self.heart_failure.isChecked()
         self._chosen = OwnCautions(
-            not self.speaks.isChecked(), low, high, declared, gain if declared else None, self.gain_days.value()
+            not self.speaks.isChecked(),
+            low,
+            high,
+            declared,
+            gain if declared else None,
+            self.gain_days.value(),
+            self.words.text().strip(),
         )
         is_other = self.region.currentText() == OTHER
         self._number = self.other.text().strip() if is_other else str(self.region.currentData() or "")

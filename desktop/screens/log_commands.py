@@ -139,11 +139,18 @@ class LogCommands:
         if session is None or measure is None:
             return
         settings, journal_id = self._window.settings, session.journal.person.journal_id
-        own = settings.cautions(journal_id, measure.id)
+        own = settings.cautions(journal_id, measure.id).with_limits_of(measure)
         dialog = CautionSettings(measure, own, settings.emergency_number, self._window)
         if dialog.exec() == QDialog.DialogCode.Accepted:
-            settings.set_cautions(journal_id, measure.id, dialog.chosen)
+            chosen = dialog.chosen
             settings.set_emergency_number(dialog.number)
+            if session.read_only:
+                settings.set_cautions(journal_id, measure.id, chosen)
+                return
+            # The limits belong to the log: they go where it goes.
+            settings.set_cautions(journal_id, measure.id, replace(chosen, low=None, high=None, words=""))
+            limits = replace(measure, limit_low=chosen.low, limit_high=chosen.high, limit_words=chosen.words)
+            session.do(set_measure(session.journal, limits))
 
     def look_for_cautions(self, changes: tuple[RowChange, ...]) -> None:
         """Say what there is to say about values that were just typed."""
@@ -153,7 +160,9 @@ class LogCommands:
             self._window.workspace.caution.look_at(
                 session.journal,
                 changes,
-                lambda measure: settings.cautions(journal_id, measure),
+                lambda measure: settings.cautions(journal_id, measure).with_limits_of(
+                    session.journal.measures[measure]
+                ),
                 settings.emergency_number,
             )
 

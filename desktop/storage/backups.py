@@ -13,14 +13,15 @@ from collections.abc import Callable, Iterable
 from dataclasses import dataclass
 from datetime import UTC, date, datetime
 from pathlib import Path
+from typing import Any
 
 from desktop.errors import StorageError
 from desktop.journal.journal import Journal
 from desktop.storage.chain import check_whole, damaged, position
 from desktop.storage.database import check_header, connect, connect_still, storage_errors
-from desktop.storage.migrations import MIGRATIONS, expected_schema, migrate, schema_of, version_of
+from desktop.storage.layout import JOURNAL, Layout, State
+from desktop.storage.migrations import expected_schema, migrate, schema_of, version_of
 from desktop.storage.new_files import file_errors, making
-from desktop.storage.rows import TABLES
 
 ENDING = ".dayfence"
 
@@ -74,7 +75,9 @@ def copies_of(journal: Path, place: Path | None = None) -> list[EarlierCopy]:
     return sorted(found)
 
 
-def take_copy(journal: Path, now: datetime, *, before_version: bool = False) -> EarlierCopy:
+def take_copy(
+    journal: Path, now: datetime, *, before_version: bool = False, layout: Layout[Any] = JOURNAL
+) -> EarlierCopy:
     """Copy a journal as it stands at one moment, check the copy, and let older ones go.
 
     The file may be open and written to; nothing older goes before the new copy is on the disk.
@@ -83,6 +86,7 @@ def take_copy(journal: Path, now: datetime, *, before_version: bool = False) -> 
         journal: the file.
         now: the time, local where it names no zone.
         before_version: the copy is taken before the file is brought to a newer version.
+        layout: the kind of file.
 
     Returns:
         The new copy, or the one there is of this very moment.
@@ -100,7 +104,7 @@ def take_copy(journal: Path, now: datetime, *, before_version: bool = False) -> 
         version = f"-v{version_of(source)}" if before_version else ""
         copy = EarlierCopy(made, seq, folder / f"{made:{_TIME}}-{seq}{version}{ENDING}", before_version)
         if not copy.path.exists():
-            _copy(source, copy.path)
+            _copy(source, copy.path, layout)
     _let_go(copies_of(journal), copy.made)
     return copy
 
@@ -114,7 +118,7 @@ def save_copy(journal: Path, path: Path) -> None:
     with storage_errors(journal), contextlib.closing(connect(journal, "ro")) as source:
         source.execute("BEGIN")
         position(source)
-        _copy(source, path)
+        _copy(source, path, JOURNAL)
 
 
 def send_copy(copy: EarlierCopy, journal: Path, place: Path) -> None:
@@ -144,20 +148,29 @@ def read_copy(path: Path) -> Journal:
     Raises:
         StorageError: it is gone, damaged, or of another version.
     """
-    check_header(path, newest=len(MIGRATIONS))
+    return read_copy_of(path, JOURNAL)
+
+
+def read_copy_of(path: Path, layout: Layout[State]) -> State:
+    """What a finished copy of any kind of file holds, read without changing a byte of it.
+
+    Raises:
+        StorageError: it is gone, damaged, or of another version.
+    """
+    check_header(path, layout)
     with (
         storage_errors(path),
         contextlib.closing(connect_still(path)) as still,
         contextlib.closing(sqlite3.connect(":memory:", isolation_level=None)) as memory,
     ):
-        _check(still, path)
+        _check(still, path, layout)
         still.backup(memory)
-        migrate(memory)
-        rows = [(table, row) for table in TABLES.values() for row in memory.execute(table.select)]
-    return Journal.of(table.record(row) for table, row in rows)
+        migrate(memory, layout.steps, layout.application_id)
+        rows = [(table, row) for table in layout.tables.values() for row in memory.execute(table.select)]
+    return layout.state(table.record(row) for table, row in rows)
 
 
-def check_file(journal: Path) -> None:
+def check_file(journal: Path, layout: Layout[Any] = JOURNAL) -> None:
     """Check the whole of a journal, open or not; writing to it waits only while it is copied into memory.
 
     Raises:
@@ -169,14 +182,19 @@ def check_file(journal: Path) -> None:
     ):
         with contextlib.closing(connect(journal, "ro")) as source:
             source.backup(memory)
-        _check(memory, journal)
+        _check(memory, journal, layout)
 
 
 def newest_good(copies: Iterable[EarlierCopy]) -> tuple[EarlierCopy, Journal] | None:
-    """The newest copy that is whole, with what it holds; None when there is none."""
+    """The newest copy of a journal that is whole, with what it holds; None when there is none."""
+    return newest_good_of(copies, JOURNAL)
+
+
+def newest_good_of(copies: Iterable[EarlierCopy], layout: Layout[State]) -> tuple[EarlierCopy, State] | None:
+    """The same for any kind of file."""
     for copy in sorted(copies, reverse=True):
         with contextlib.suppress(StorageError):
-            return copy, read_copy(copy.path)
+            return copy, read_copy_of(copy.path, layout)
     return None
 
 
@@ -226,7 +244,7 @@ def kept(copies: Iterable[EarlierCopy], now: datetime) -> set[EarlierCopy]:
     return staying
 
 
-def _copy(source: sqlite3.Connection, path: Path) -> None:
+def _copy(source: sqlite3.Connection, path: Path, layout: Layout[Any]) -> None:
     """Copy what a transaction sees, end it, and check the copy."""
     with making(path) as part, contextlib.closing(sqlite3.connect(part)) as target:
         # The copy is put on the disk as a whole, so nothing has to be done twice for the parts.
@@ -235,7 +253,7 @@ def _copy(source: sqlite3.Connection, path: Path) -> None:
         source.backup(target)
         # The journal can be written to again while its copy is checked.
         source.execute("COMMIT")
-        _check(target, part)
+        _check(target, part, layout)
 
 
 def _let_go(copies: list[EarlierCopy], now: datetime) -> None:
@@ -251,9 +269,16 @@ def _day(copy: EarlierCopy, now: datetime) -> date:
     return copy.made.astimezone(now.astimezone().tzinfo if now.tzinfo is None else now.tzinfo).date()
 
 
-def _check(connection: sqlite3.Connection, path: Path) -> None:
+def _check(connection: sqlite3.Connection, path: Path, layout: Layout[Any]) -> None:
     connection.execute("PRAGMA trusted_schema = OFF")
     version = version_of(connection)
-    if schema_of(connection) != expected_schema(MIGRATIONS[:version]):
+    if schema_of(connection) != expected_schema(layout.steps[:version]):
         raise damaged(path, "the tables are not those of a journal")
-    check_whole(connection, path)
+    if version == len(layout.steps):
+        check_whole(connection, path, layout.tables)
+        return
+    # The records of today are not those of an older version, which stays as it is.
+    with contextlib.closing(sqlite3.connect(":memory:", isolation_level=None)) as memory:
+        connection.backup(memory)
+        migrate(memory, layout.steps, layout.application_id)
+        check_whole(memory, path, layout.tables)

@@ -5,13 +5,13 @@ from __future__ import annotations
 import hashlib
 import json
 import sqlite3
-from collections.abc import Sequence
+from collections.abc import Mapping, Sequence
 from pathlib import Path
 from typing import NamedTuple
 
 from desktop.errors import StorageError
 from desktop.journal.row_change import Act, RowChange, StepKind, key_of
-from desktop.storage.rows import TABLES, key_text
+from desktop.storage.rows import TABLES, Table, key_text, table_named
 
 HISTORY = '"seq", "step", "at", "kind", "act", "of", "tbl", "key", "before", "after", "chain"'
 """The columns of the history, in the order of ``HistoryRow`` with the chain after it."""
@@ -48,7 +48,7 @@ class HistoryRow(NamedTuple):
             ValueError: one of the two is not a record.
             TypeError: as above.
         """
-        table = TABLES[self.tbl]
+        table = table_named(self.tbl)
         before, after = (None if text is None else table.from_json(text) for text in (self.before, self.after))
         return RowChange(before, after)
 
@@ -67,12 +67,13 @@ def position(connection: sqlite3.Connection) -> Position:
     return Position(*(found.fetchone() or ()))
 
 
-def check_whole(connection: sqlite3.Connection, path: Path) -> None:
+def check_whole(connection: sqlite3.Connection, path: Path, tables: Mapping[str, Table] = TABLES) -> None:
     """Check a whole file: its pages, the chain of the history, and that the history gives the tables.
 
     Args:
         connection: open, inside a transaction or alone with the file.
         path: for the error.
+        tables: those of the kind of file.
 
     Raises:
         StorageError: the file is damaged.
@@ -82,7 +83,7 @@ def check_whole(connection: sqlite3.Connection, path: Path) -> None:
         if found not in ([], [("ok",)]):
             raise damaged(path, f"{check}: {found[0][0]}")
     replayed = _replay(connection, path)
-    rows = [(table, row) for table in TABLES.values() for row in connection.execute(table.select)]
+    rows = [(table, row) for table in tables.values() for row in connection.execute(table.select)]
     try:
         held = {(table.name, key_text(key_of(table.record(row)))): table.json(row) for table, row in rows}
     except (ValueError, TypeError) as error:
@@ -106,8 +107,13 @@ def _replay(connection: sqlite3.Connection, path: Path) -> dict[tuple[str, str],
         if cells[-1] != chain:
             raise damaged(path, "the chain of the history is broken", seq=row.seq)
         key = (row.tbl, row.key)
-        if held.pop(key, None) != row.before:
+        try:
+            complete = table_named(row.tbl).completed
+            before, after = (None if text is None else complete(text) for text in (row.before, row.after))
+        except (KeyError, ValueError) as error:
+            raise damaged(path, "a row of the history is not a record", seq=row.seq) from error
+        if held.pop(key, None) != before:
             raise damaged(path, "a step starts from what was not there", seq=row.seq)
-        if row.after is not None:
-            held[key] = row.after
+        if after is not None:
+            held[key] = after
     return held

@@ -11,20 +11,14 @@ import os
 import sqlite3
 import stat
 import weakref
-from collections.abc import Callable, Iterator, Sequence
+from collections.abc import Callable, Iterator
 from pathlib import Path
+from typing import Any
 
 from desktop.errors import StorageError
-from desktop.storage.migrations import (
-    MIGRATIONS,
-    Migration,
-    expected_schema,
-    migrate,
-    schema_of,
-    version_of,
-)
+from desktop.storage.layout import JOURNAL, Layout
+from desktop.storage.migrations import expected_schema, migrate, schema_of, version_of
 from desktop.storage.new_files import making
-from desktop.storage.schema import APPLICATION_ID
 
 _BUSY_SECONDS = 3.0
 _HEADER_BYTES = 100
@@ -152,7 +146,7 @@ def storage_errors(path: Path) -> Iterator[None]:
 
 def open_database(
     path: Path,
-    steps: Sequence[Migration] = MIGRATIONS,
+    layout: Layout[Any] = JOURNAL,
     *,
     to_read: bool = False,
     before_migrating: Callable[[Path], object] | None = None,
@@ -161,7 +155,7 @@ def open_database(
 
     Args:
         path: the file.
-        steps: the migrations known, version 1 first.
+        layout: the kind of file.
         to_read: nothing is to be written.
         before_migrating: called with the file before it is brought to a newer version; what it raises stops that.
 
@@ -173,19 +167,19 @@ def open_database(
     key = _identity(path)
     if key in _open_files:
         raise StorageError("open already", path=str(path))
-    check_header(path, newest=len(steps))
+    check_header(path, layout)
     read_only = to_read or not (os.access(path, os.W_OK) and os.access(path.parent, os.W_OK))
     with storage_errors(path):
         connection = connect(path, "ro" if read_only else "rw")
         try:
-            _check_contents(connection, path, steps)
-            if version_of(connection) < len(steps):
+            _check_contents(connection, path, layout)
+            if version_of(connection) < len(layout.steps):
                 if read_only:
                     raise StorageError("read only", path=str(path))
                 if before_migrating is not None:
                     before_migrating(path)
-                migrate(connection, steps)
-                _check_contents(connection, path, steps)
+                migrate(connection, layout.steps, layout.application_id)
+                _check_contents(connection, path, layout)
         except BaseException:
             connection.close()
             raise
@@ -194,21 +188,22 @@ def open_database(
     return database
 
 
-def create_file(path: Path, fill: Callable[[sqlite3.Connection], None]) -> None:
-    """Make a journal file, complete or not at all.
+def create_file(path: Path, fill: Callable[[sqlite3.Connection], None], layout: Layout[Any] = JOURNAL) -> None:
+    """Make a file, complete or not at all.
 
     It is made under another name beside its place, so a file half made is never found there.
 
     Args:
         path: where; nothing may be there yet.
         fill: writes the first rows, inside a transaction.
+        layout: the kind of file.
 
     Raises:
         StorageError: something is there already, or the file cannot be made.
     """
     path = path.absolute()
     with making(path) as part, storage_errors(path), contextlib.closing(connect(part, "rw")) as connection:
-        migrate(connection)
+        migrate(connection, layout.steps, layout.application_id)
         connection.execute("BEGIN IMMEDIATE")
         fill(connection)
         connection.execute("COMMIT")
@@ -261,8 +256,17 @@ def _identity(path: Path) -> tuple[int, int]:
     return found.st_dev, found.st_ino
 
 
-def check_header(path: Path, newest: int) -> None:
-    """Refuse what is no journal, or one of a newer version, by its first bytes alone.
+def application_id_of(path: Path) -> int | None:
+    """What kind of file it says it is, by its first bytes alone; None for what is no file of SQLite's, or none."""
+    with contextlib.suppress(OSError), path.open("rb") as file:
+        header = file.read(_HEADER_BYTES)
+        if header.startswith(_MAGIC):
+            return int.from_bytes(header[68:72], "big")
+    return None
+
+
+def check_header(path: Path, layout: Layout[Any] = JOURNAL) -> None:
+    """Refuse what is no file of the kind, or one of a newer version, by its first bytes alone.
 
     Raises:
         StorageError: it is refused, or cannot be read.
@@ -273,16 +277,17 @@ def check_header(path: Path, newest: int) -> None:
     except OSError as error:
         raise StorageError("cannot open", path=str(path), detail=error.strerror) from error
     version = int.from_bytes(header[60:64], "big")
-    ours = header.startswith(_MAGIC) and int.from_bytes(header[68:72], "big") == APPLICATION_ID
+    ours = header.startswith(_MAGIC) and int.from_bytes(header[68:72], "big") == layout.application_id
     if not ours or version < 1:
         raise StorageError("not a journal", path=str(path))
+    newest = len(layout.steps)
     if version > newest:
         raise StorageError("newer version", path=str(path), version=version, newest=newest)
 
 
-def _check_contents(connection: sqlite3.Connection, path: Path, steps: Sequence[Migration]) -> None:
+def _check_contents(connection: sqlite3.Connection, path: Path, layout: Layout[Any]) -> None:
     version = version_of(connection)
-    if schema_of(connection) != expected_schema(tuple(steps[:version])):
+    if schema_of(connection) != expected_schema(layout.steps[:version]):
         raise StorageError("damaged", path=str(path), detail="the tables are not those of a journal")
     found = connection.execute("PRAGMA quick_check(1)").fetchone()
     if found != ("ok",):

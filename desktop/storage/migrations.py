@@ -20,8 +20,24 @@ def create_version_1(connection: sqlite3.Connection) -> None:
         connection.execute(statement)
 
 
-MIGRATIONS: tuple[Migration, ...] = (create_version_1,)
-"""Migration number n makes version n; their count is the newest version."""
+def bring_to_version_2(connection: sqlite3.Connection) -> None:
+    """Measures can have the limits that the person's clinic gave them."""
+    for statement in schema.VERSION_2:
+        connection.execute(statement)
+
+
+MIGRATIONS: tuple[Migration, ...] = (create_version_1, bring_to_version_2)
+"""Migration number n makes version n of a journal; their count is the newest version."""
+
+
+def create_caseload_version_1(connection: sqlite3.Connection) -> None:
+    """Make the tables of an empty caseload."""
+    for statement in schema.CASELOAD_VERSION_1:
+        connection.execute(statement)
+
+
+CASELOAD_MIGRATIONS: tuple[Migration, ...] = (create_caseload_version_1,)
+"""The same of a caseload."""
 
 
 def version_of(connection: sqlite3.Connection) -> int:
@@ -29,7 +45,11 @@ def version_of(connection: sqlite3.Connection) -> int:
     return int(connection.execute("PRAGMA user_version").fetchone()[0])
 
 
-def migrate(connection: sqlite3.Connection, steps: Sequence[Migration] = MIGRATIONS) -> None:
+def migrate(
+    connection: sqlite3.Connection,
+    steps: Sequence[Migration] = MIGRATIONS,
+    application_id: int = schema.APPLICATION_ID,
+) -> None:
     """Bring a file to the newest version.
 
     Each step is one transaction with its version number inside, so a file is always of one version or the next.
@@ -37,6 +57,7 @@ def migrate(connection: sqlite3.Connection, steps: Sequence[Migration] = MIGRATI
     Args:
         connection: open for writing, no transaction begun.
         steps: the migrations, version 1 first.
+        application_id: of the kind of file.
 
     Raises:
         sqlite3.Error: a step did not work; the file is as that step found it.
@@ -49,7 +70,7 @@ def migrate(connection: sqlite3.Connection, steps: Sequence[Migration] = MIGRATI
             steps[number - 1](connection)
             if connection.execute("PRAGMA foreign_key_check").fetchall():
                 raise sqlite3.IntegrityError(f"version {number} leaves references to nothing")
-            connection.execute(f"PRAGMA application_id = {schema.APPLICATION_ID}")
+            connection.execute(f"PRAGMA application_id = {application_id}")
             connection.execute(f"PRAGMA user_version = {number}")
             connection.execute("COMMIT")
         finally:

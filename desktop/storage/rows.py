@@ -9,11 +9,12 @@ import json
 import math
 import operator
 import types
-from collections.abc import Callable, Sequence
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass, fields
 from datetime import date
 from typing import Any, Literal, Union, get_args, get_origin, get_type_hints
 
+from desktop.journal.clients import Client, Coach, CoachingSession
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person, Plan, Record, Span
 from desktop.journal.row_change import key_of
 
@@ -39,7 +40,10 @@ class Table:
         select_one, insert, update, delete: for one row; ``update`` takes the cells, then the key.
     """
 
-    def __init__(self, name: str, record: type[Record], key: tuple[str, ...]) -> None:
+    def __init__(
+        self, name: str, record: type[Record], key: tuple[str, ...], added: Mapping[str, Cell] | None = None
+    ) -> None:
+        """A table; ``added`` are the columns of later versions, the last ones, with what they hold before."""
         hints = get_type_hints(record)
         self._record = record
         self._columns = [_column(field.name, hints[field.name]) for field in fields(record)]
@@ -48,11 +52,14 @@ class Table:
             for index, column in enumerate(self._columns)
             if column.to_field is not None
         ]
+        self._added = dict(added or {})
         self.name = name
         self.columns = tuple(column.name for column in self._columns)
         listed = ", ".join(f'"{column}"' for column in self.columns)
+        # A name that is no column of the table would be taken for a text if the table did not stand before it.
+        chosen = ", ".join(f'"{name}"."{column}"' for column in self.columns)
         found = " AND ".join(f'"{column}" = ?' for column in key) or "1"
-        self.select = f'SELECT {listed} FROM "{name}"'
+        self.select = f'SELECT {chosen} FROM "{name}"'
         self.select_one = f"{self.select} WHERE {found}"
         self.insert = f'INSERT INTO "{name}" ({listed}) VALUES ({", ".join("?" * len(self.columns))})'
         assigned = ", ".join(f'"{column}" = ?' for column in self.columns)
@@ -97,10 +104,24 @@ class Table:
             ValueError: the text is not one.
             TypeError: a value is of another type than its column.
         """
+        return self.record(list(self._named(text).values()))
+
+    def completed(self, text: str) -> str:
+        """A text of :meth:`json` of this or an older version as this version writes it.
+
+        Raises:
+            ValueError: the text is not one.
+        """
+        return self.json(list(self._named(text).values())) if self._added else text
+
+    def _named(self, text: str) -> dict[str, Cell]:
         named = json.loads(text)
+        if isinstance(named, dict):
+            # The history keeps what was written, so a row of an older version lacks what came later.
+            named |= {column: value for column, value in self._added.items() if column not in named}
         if not isinstance(named, dict) or tuple(named) != self.columns:
             raise ValueError(f"these are not the columns of {self.name}")
-        return self.record(list(named.values()))
+        return named
 
 
 def key_cells(record: Record) -> tuple[str | int, ...]:
@@ -115,7 +136,16 @@ def key_text(key: tuple[str | int, ...]) -> str:
 
 def table_of(record: Record) -> Table:
     """The table a record belongs to."""
-    return TABLES[str(key_of(record)[0])]
+    return table_named(str(key_of(record)[0]))
+
+
+def table_named(name: str) -> Table:
+    """The table of a journal or a caseload with this name.
+
+    Raises:
+        KeyError: neither has one.
+    """
+    return TABLES[name] if name in TABLES else CASELOAD_TABLES[name]
 
 
 def _column(name: str, hint: object) -> _Column:
@@ -177,7 +207,7 @@ TABLES: dict[str, Table] = {
     table.name: table
     for table in (
         Table("person", Person, ()),
-        Table("measure", Measure, ("id",)),
+        Table("measure", Measure, ("id",), {"limit_low": None, "limit_high": None, "limit_words": ""}),
         Table("entry", Entry, ("measure", "day", "slot")),
         Table("change", Change, ("id",)),
         Table("span", Span, ("id",)),
@@ -185,4 +215,14 @@ TABLES: dict[str, Table] = {
         Table("note", DayNote, ("day",)),
     )
 }
-"""Every table of records, by name; measures before what refers to them."""
+"""Every table of a journal's records, by name; measures before what refers to them."""
+
+CASELOAD_TABLES: dict[str, Table] = {
+    table.name: table
+    for table in (
+        Table("coach", Coach, ()),
+        Table("client", Client, ("id",)),
+        Table("session", CoachingSession, ("client", "day")),
+    )
+}
+"""Every table of a caseload's records, by name; clients before what refers to them."""

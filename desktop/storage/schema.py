@@ -1,6 +1,6 @@
-"""The tables of a journal file, version 1.
+"""The tables of a journal file and of a caseload file, as each version declares them.
 
-This text is what every version-1 file holds and is compared with at opening, so it never changes: a new
+This text is what every file of a version holds and is compared with at opening, so it never changes: a new
 version is a new migration.
 """
 
@@ -8,6 +8,9 @@ from __future__ import annotations
 
 APPLICATION_ID = int.from_bytes(b"DyFc", "big")
 """Bytes 68 to 71 of the header of every journal."""
+
+CASELOAD_ID = int.from_bytes(b"DyFk", "big")
+"""The same of every caseload."""
 
 _SHORT_TEXT = 400
 _LONG_TEXT = 16_000
@@ -63,6 +66,35 @@ _MEASURES = (
 
 def _table(name: str, *parts: str, options: str = "STRICT") -> str:
     return f'CREATE TABLE "{name}" (\n    ' + ",\n    ".join(parts) + f"\n) {options}"
+
+
+def _history(tables: str) -> tuple[str, ...]:
+    return (
+        _table(
+            "history",
+            '"seq" INTEGER PRIMARY KEY AUTOINCREMENT',
+            '"step" INTEGER NOT NULL CHECK ("step" BETWEEN 1 AND "seq")',
+            _clock("at"),
+            _word("kind", "'do', 'undo', 'redo'"),
+            _text("act"),
+            '"of" INTEGER CHECK ("of" BETWEEN 1 AND "step" - 1)',
+            _word("tbl", tables),
+            _text("key", 1000),
+            '"before" TEXT',
+            '"after" TEXT',
+            '"chain" BLOB NOT NULL CHECK (length("chain") = 16)',
+            'CHECK (("of" IS NULL) = ("kind" = \'do\'))',
+            'CHECK ("before" IS NOT NULL OR "after" IS NOT NULL)',
+        ),
+        """CREATE TRIGGER "history_stays" BEFORE DELETE ON "history"
+BEGIN SELECT RAISE(ABORT, 'the history only grows'); END""",
+        """CREATE TRIGGER "history_as_written" BEFORE UPDATE ON "history"
+BEGIN SELECT RAISE(ABORT, 'the history only grows'); END""",
+        # INSERT OR REPLACE takes a row away without asking the trigger on DELETE.
+        """CREATE TRIGGER "history_in_order" BEFORE INSERT ON "history"
+WHEN EXISTS (SELECT 1 FROM "history" WHERE "seq" >= NEW."seq")
+BEGIN SELECT RAISE(ABORT, 'the history only grows'); END""",
+    )
 
 
 VERSION_1: tuple[str, ...] = (
@@ -144,29 +176,64 @@ BEGIN SELECT RAISE(ABORT, 'the person record stays'); END""",
         _whole("spare", 0, 7),
     ),
     _table("note", _day("day"), _text("text", _LONG_TEXT), 'PRIMARY KEY ("day")'),
-    _table(
-        "history",
-        '"seq" INTEGER PRIMARY KEY AUTOINCREMENT',
-        '"step" INTEGER NOT NULL CHECK ("step" BETWEEN 1 AND "seq")',
-        _clock("at"),
-        _word("kind", "'do', 'undo', 'redo'"),
-        _text("act"),
-        '"of" INTEGER CHECK ("of" BETWEEN 1 AND "step" - 1)',
-        _word("tbl", "'person', 'measure', 'entry', 'change', 'span', 'plan', 'note'"),
-        _text("key", 1000),
-        '"before" TEXT',
-        '"after" TEXT',
-        '"chain" BLOB NOT NULL CHECK (length("chain") = 16)',
-        'CHECK (("of" IS NULL) = ("kind" = \'do\'))',
-        'CHECK ("before" IS NOT NULL OR "after" IS NOT NULL)',
-    ),
-    """CREATE TRIGGER "history_stays" BEFORE DELETE ON "history"
-BEGIN SELECT RAISE(ABORT, 'the history only grows'); END""",
-    """CREATE TRIGGER "history_as_written" BEFORE UPDATE ON "history"
-BEGIN SELECT RAISE(ABORT, 'the history only grows'); END""",
-    # INSERT OR REPLACE takes a row away without asking the trigger on DELETE.
-    """CREATE TRIGGER "history_in_order" BEFORE INSERT ON "history"
-WHEN EXISTS (SELECT 1 FROM "history" WHERE "seq" >= NEW."seq")
-BEGIN SELECT RAISE(ABORT, 'the history only grows'); END""",
+    *_history("'person', 'measure', 'entry', 'change', 'span', 'plan', 'note'"),
 )
 """The statements that make a version-1 journal, in order."""
+
+VERSION_2: tuple[str, ...] = (
+    f'ALTER TABLE "measure" ADD COLUMN {_number("limit_low")}',
+    f'ALTER TABLE "measure" ADD COLUMN {_number("limit_high")}',
+    f"ALTER TABLE \"measure\" ADD COLUMN {_text('limit_words', _LONG_TEXT)} DEFAULT ''",
+)
+"""From version 1: the limits the person's clinic gave them."""
+
+CASELOAD_VERSION_1: tuple[str, ...] = (
+    _table(
+        "coach",
+        '"caseload_id" TEXT NOT NULL CHECK (length(CAST("caseload_id" AS BLOB)) = 32'
+        " AND instr(CAST(\"caseload_id\" AS BLOB), x'00') = 0"
+        " AND \"caseload_id\" NOT GLOB '*[^0-9a-f]*')",
+        _text("name"),
+        _text("folder", _LONG_TEXT),
+    ),
+    'CREATE UNIQUE INDEX "one_coach" ON "coach" ((1))',
+    """CREATE TRIGGER "coach_stays" BEFORE DELETE ON "coach"
+BEGIN SELECT RAISE(ABORT, 'the coach record stays'); END""",
+    _table(
+        "client",
+        _ID,
+        '"journal_id" TEXT NOT NULL UNIQUE CHECK (length(CAST("journal_id" AS BLOB)) = 32'
+        " AND instr(CAST(\"journal_id\" AS BLOB), x'00') = 0"
+        " AND \"journal_id\" NOT GLOB '*[^0-9a-f]*')",
+        _text("code"),
+        '"doing" INTEGER CHECK ("doing" BETWEEN 1 AND 2000000000)',
+        '"outcome" INTEGER CHECK ("outcome" BETWEEN 1 AND 2000000000)',
+        _day("next_session", null=""),
+        _day("looked_on", null=""),
+        _text("looked_answer"),
+        _whole("ended", 0, 1),
+    ),
+    _table(
+        "session",
+        '"client" INTEGER NOT NULL REFERENCES "client" ("id") DEFERRABLE INITIALLY DEFERRED',
+        _day("day"),
+        _text("agreed", _LONG_TEXT),
+        _whole("times", 0, 7),
+        _whole("spare", 0, 7),
+        _text("note", _LONG_TEXT),
+        'PRIMARY KEY ("client", "day")',
+        options="STRICT, WITHOUT ROWID",
+    ),
+    *_history("'coach', 'client', 'session'"),
+    # What was made out of each file the last time, so that it is not read again while it stays as it is.
+    # It can be made again at any time, so it is in no history.
+    _table(
+        "seen",
+        _text("file", 1000),
+        _text("stamp", 1000),
+        _text("facts", 1_000_000),
+        'PRIMARY KEY ("file")',
+        options="STRICT, WITHOUT ROWID",
+    ),
+)
+"""The statements that make a version-1 caseload, in order."""

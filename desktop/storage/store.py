@@ -3,21 +3,24 @@
 from __future__ import annotations
 
 import sqlite3
-from collections.abc import Callable, Iterable, Sequence
+from collections.abc import Callable, Iterable, Mapping, Sequence
 from dataclasses import dataclass
 from datetime import datetime
 from itertools import groupby
 from pathlib import Path
+from typing import Any, ClassVar, Generic, Self
 
 from desktop.errors import StorageError
+from desktop.journal.caseload import Caseload
 from desktop.journal.journal import Journal
-from desktop.journal.records import Person, Record
+from desktop.journal.records import Record
 from desktop.journal.row_change import Act, RowChange, Step, StepKind, key_of
 from desktop.storage.alone import Alone
 from desktop.storage.backups import take_copy
 from desktop.storage.chain import HISTORY, HistoryRow, Position, check_whole, damaged, position
 from desktop.storage.database import Database, create_file, open_database
-from desktop.storage.rows import TABLES, Cell, Table, key_cells, key_text, table_of
+from desktop.storage.layout import CASELOAD, JOURNAL, Layout, State
+from desktop.storage.rows import Cell, Table, key_cells, key_text, table_of
 
 Clock = Callable[[], datetime]
 
@@ -41,8 +44,8 @@ class Held:
     record: Record | None
 
 
-class Store:
-    """One open journal file.
+class FileStore(Generic[State]):
+    """One open file, a journal or a caseload.
 
     Exactly one thread uses a store at a time; it may be handed from the thread that opened it to another.
 
@@ -50,6 +53,8 @@ class Store:
     very end of a write may the step be there all the same; the next write then says "stale" and
     :meth:`read` gives what is there.
     """
+
+    layout: ClassVar[Layout[Any]]
 
     def __init__(self, database: Database, clock: Clock, alone: Alone | None = None) -> None:
         """Of an open database; use :meth:`create` or :meth:`open`."""
@@ -63,38 +68,38 @@ class Store:
     def create(
         cls,
         path: Path,
-        records: Person | Iterable[Record],
+        records: Record | Iterable[Record],
         *,
         clock: Clock = datetime.now,
         alone: bool = False,
-    ) -> Store:
-        """Make a new journal; its first step is "start journal".
+    ) -> Self:
+        """Make a new file; its first step says that it was started.
 
         Args:
             path: where; nothing may be there yet.
-            records: the person, or the person and other records to begin with.
+            records: the person or the coach, alone or with other records to begin with.
             clock: gives local time.
             alone: as for :meth:`open`.
 
         Raises:
-            ValueError: not exactly one person among the records.
+            ValueError: not exactly one person or coach among the records.
             StorageError: something is there already, the file cannot be made, or a record is refused.
         """
-        listed = [records] if isinstance(records, Person) else list(records)
-        if sum(isinstance(record, Person) for record in listed) != 1:
-            raise ValueError("a journal is started with exactly one person record")
+        listed = list(records) if isinstance(records, Iterable) else [records]
+        if sum(isinstance(record, cls.layout.root) for record in listed) != 1:
+            raise ValueError(f"a file is started with exactly one {cls.layout.root.__name__.lower()} record")
         changes = tuple(RowChange(None, record) for record in listed)
-        step = Step(1, _text_of(clock()), "do", "start journal", None, changes)
+        step = Step(1, _text_of(clock()), "do", cls.layout.first_act, None, changes)
 
         def fill(connection: sqlite3.Connection) -> None:
             append_step(connection, step, Position(), path)
 
-        create_file(path, fill)
+        create_file(path, fill, cls.layout)
         return cls.open(path, clock=clock, alone=alone)
 
     @classmethod
-    def open(cls, path: Path, *, clock: Clock = datetime.now, to_read: bool = False, alone: bool = False) -> Store:
-        """Open a journal; in a place that cannot be written it opens for reading.
+    def open(cls, path: Path, *, clock: Clock = datetime.now, to_read: bool = False, alone: bool = False) -> Self:
+        """Open a file; in a place that cannot be written it opens for reading.
 
         A file of an older version is copied before it is brought to this one.
 
@@ -109,7 +114,10 @@ class Store:
                 newer version, or is open already.
         """
         database = open_database(
-            path, to_read=to_read, before_migrating=lambda old: take_copy(old, clock(), before_version=True)
+            path,
+            cls.layout,
+            to_read=to_read,
+            before_migrating=lambda old: take_copy(old, clock(), before_version=True, layout=cls.layout),
         )
         held: Alone | None = None
         try:
@@ -158,21 +166,23 @@ class Store:
         """Number of the last row change seen or written."""
         return self._last.seq
 
-    def read(self) -> Journal:
-        """The journal as it stands in the file; from here on this is the state writing goes on from.
+    def read(self) -> State:
+        """What stands in the file; from here on this is the state writing goes on from.
 
         Raises:
             StorageError: the file cannot be read.
         """
         with self._database.reading() as connection:
             last = position(connection)
-            rows = [(table, row) for table in TABLES.values() for row in connection.execute(table.select)]
+            rows = [
+                (table, row) for table in self.layout.tables.values() for row in connection.execute(table.select)
+            ]
         try:
-            journal = Journal.of(table.record(row) for table, row in rows)
+            state: State = self.layout.state(table.record(row) for table, row in rows)
         except (ValueError, TypeError) as error:
             raise damaged(self.path, "a row is not a record") from error
         self._last = last
-        return journal
+        return state
 
     def write(self, act: Act, changes: Sequence[RowChange], kind: StepKind = "do", of: int | None = None) -> Step:
         """Make the changes and note them in the history: all of it, on the disk, or nothing.
@@ -254,7 +264,7 @@ class Store:
         with self._database.reading() as connection:
             rows = connection.execute(
                 'SELECT "tbl", max(CAST("key" AS INTEGER)) FROM "history"'
-                " WHERE \"tbl\" IN ('measure', 'change', 'span', 'plan') GROUP BY \"tbl\""
+                " WHERE \"tbl\" IN ('measure', 'change', 'span', 'plan', 'client') GROUP BY \"tbl\""
             ).fetchall()
         return dict(rows)
 
@@ -267,7 +277,7 @@ class Store:
             StorageError: the file is damaged or cannot be read.
         """
         with self._database.reading() as connection:
-            check_whole(connection, self.path)
+            check_whole(connection, self.path, self.layout.tables)
 
     def close(self) -> None:
         """Let go of the file; closing twice does nothing."""
@@ -276,11 +286,63 @@ class Store:
             self._alone.release()
             self._alone = None
 
-    def __enter__(self) -> Store:
+    def __enter__(self) -> Self:
         return self
 
     def __exit__(self, *_: object) -> None:
         self.close()
+
+
+class Store(FileStore[Journal]):
+    """One open journal."""
+
+    layout = JOURNAL
+
+
+@dataclass(frozen=True)
+class SeenFile:
+    """What a caseload remembers of a file in the clients' folder.
+
+    Attributes:
+        stamp: tells whether the file, or what was asked of it, is another by now.
+        facts: what was made out of it, as text.
+    """
+
+    stamp: str
+    facts: str
+
+
+class CaseloadStore(FileStore[Caseload]):
+    """One open caseload, with what it remembers of each journal."""
+
+    layout = CASELOAD
+
+    def remembered(self) -> dict[str, SeenFile]:
+        """What is remembered, by the name of the file.
+
+        Raises:
+            StorageError: the file cannot be read.
+        """
+        with self._database.reading() as connection:
+            rows = connection.execute('SELECT "file", "stamp", "facts" FROM "seen"').fetchall()
+        return {file: SeenFile(stamp, facts) for file, stamp, facts in rows}
+
+    def remember(self, seen: Mapping[str, SeenFile], gone: Iterable[str] = ()) -> None:
+        """Remember what was made out of some files, in place of what was remembered of them.
+
+        Args:
+            seen: by the name of the file.
+            gone: names of files that are no longer there.
+
+        Raises:
+            StorageError: nothing is remembered.
+        """
+        with self._database.writing() as connection:
+            connection.executemany(
+                'INSERT OR REPLACE INTO "seen" ("file", "stamp", "facts") VALUES (?, ?, ?)',
+                [(file, one.stamp, one.facts) for file, one in seen.items()],
+            )
+            connection.executemany('DELETE FROM "seen" WHERE "file" = ?', [(file,) for file in gone])
 
 
 def append_step(connection: sqlite3.Connection, step: Step, last: Position, path: Path) -> Position:

@@ -5,6 +5,7 @@ from __future__ import annotations
 import contextlib
 import sqlite3
 import time
+from dataclasses import dataclass
 from pathlib import Path
 
 from desktop.errors import StorageError
@@ -37,8 +38,28 @@ _READING = {sqlite3.SQLITE_SELECT, sqlite3.SQLITE_READ}
 _BESIDE = ("-journal", "-wal")
 
 
+@dataclass(frozen=True)
+class Stranger:
+    """A journal that came from elsewhere.
+
+    Attributes:
+        journal: its values, each checked again.
+        last_at: local clock time of its last step, ISO 8601; ``""`` without a history.
+        last_change: number of its last row change; 0 without a history.
+    """
+
+    journal: Journal
+    last_at: str
+    last_change: int
+
+
 def read_stranger(path: Path) -> Journal:
-    """The values of a journal that came from elsewhere, each checked again.
+    """The values of a journal that came from elsewhere, as :func:`look_at_stranger` reads them."""
+    return look_at_stranger(path).journal
+
+
+def look_at_stranger(path: Path) -> Stranger:
+    """A journal that came from elsewhere: its values, each checked again, and how far its history reaches.
 
     The file is read once, as bytes; SQLite sees only a memory with limits, and only tables declared exactly
     as ours.
@@ -52,7 +73,7 @@ def read_stranger(path: Path) -> Journal:
             raise StorageError("missing" if not path.exists() else "not a journal", path=str(path))
         if path.stat().st_size > MOST_BYTES:
             raise damaged(path, "larger than a journal")
-        check_header(path, newest=len(MIGRATIONS))
+        check_header(path)
         if any(path.with_name(path.name + end).exists() for end in _BESIDE):
             raise damaged(path, "a step of it is not finished")
         contents = path.read_bytes()
@@ -67,10 +88,12 @@ def read_stranger(path: Path) -> Journal:
         connection.execute("PRAGMA trusted_schema = OFF")
         if schema_of(connection) != expected_schema(MIGRATIONS[: version_of(connection)]):
             raise damaged(path, "the tables are not those of a journal")
+        migrate(connection)
         check_whole(connection, path)
+        last = connection.execute('SELECT "at", "seq" FROM "history" ORDER BY "seq" DESC LIMIT 1').fetchone()
         connection.set_authorizer(_allow)
         rows = [(table, row) for table in TABLES.values() for row in connection.execute(table.select)]
-        return Journal.of(_checked([(table.name, row) for table, row in rows]))
+        return Stranger(Journal.of(_checked([(table.name, row) for table, row in rows])), *(last or ("", 0)))
 
 
 def _guard(connection: sqlite3.Connection) -> None:

@@ -33,6 +33,13 @@ _PHRASES: dict[Act, str] = {
     "restore copy": "the earlier copy put in place",
     "put earlier back": "the earlier value put back",
     "win back": "the days won back",
+    "start caseload": "the new caseload",
+    "set coach": "the caseload's settings",
+    "add clients": "the new clients",
+    "set client": "the client's settings",
+    "write session": "the session",
+    "remove session": "the removed session",
+    "mark looked at": "the mark that a client was looked at",
 }
 """For acts whose records say no more."""
 

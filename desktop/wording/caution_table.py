@@ -5,7 +5,7 @@ from __future__ import annotations
 import json
 import re
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from datetime import date, timedelta
 from functools import cache
 from typing import Any, Literal
@@ -52,6 +52,7 @@ class OwnCautions:
         heart_failure: they have heart failure.
         gain: the gain of weight their clinic named, over ``gain_days`` days.
         gain_days: the days of ``gain``.
+        words: what their clinic said to do beyond their own limits, in its words.
     """
 
     off: bool = False
@@ -60,6 +61,13 @@ class OwnCautions:
     heart_failure: bool = False
     gain: float | None = None
     gain_days: int = 1
+    words: str = ""
+
+    def with_limits_of(self, measure: Measure) -> OwnCautions:
+        """The same with the limits that the journal holds, where it holds any."""
+        if measure.limit_low is None and measure.limit_high is None:
+            return self
+        return replace(self, low=measure.limit_low, high=measure.limit_high, words=measure.limit_words)
 
 
 @dataclass(frozen=True)

@@ -8,7 +8,7 @@ from pathlib import Path
 
 from desktop.journal.differences import Difference
 from desktop.journal.journal import Journal
-from desktop.journal.records import Change, DayNote, Entry, Measure, Person, Plan, Record, Span
+from desktop.journal.records import Change, DayNote, Entry, Measure, Plan, Record, Span
 from desktop.wording.days import full_day
 from desktop.wording.entry import number_text
 from desktop.wording.numbers import count
@@ -88,7 +88,7 @@ def _what(record: Record, journal: Journal, earlier: Journal) -> str:
             return f"the named days from {full_day(record.first)}"
         case Plan():
             return f"the plan from {full_day(record.first)}"
-        case Person():
+        case _:
             return "the name or question"
 
 

@@ -119,4 +119,5 @@ def caution_for(journal: Journal, measure: int, day: date, slot: str, own: OwnCa
     if met is None or entry is None or entry.value is None:
         return None
     title = journal.measures[measure].title
-    return f"{title}: {caution_sentences(met, entry.value, number)}"
+    words = f" Your clinic's words: “{own.words}”." if own.words and met.words in ("own low", "own high") else ""
+    return f"{title}: {caution_sentences(met, entry.value, number)}{words}"

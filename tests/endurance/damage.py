@@ -67,7 +67,7 @@ def _says(path: Path) -> set[str] | None:
 def _quick_check_passes(path: Path) -> bool:
     connection = connect_still(path)
     try:
-        check_header(path, 1)
+        check_header(path)
         return connection.execute("PRAGMA quick_check(1)").fetchone() == ("ok",)
     except (sqlite3.Error, StorageError, UnicodeDecodeError):
         return False

@@ -14,7 +14,7 @@ from desktop.errors import ExchangeError
 from desktop.exchange.package import package_files, package_place, read_package
 from desktop.exchange.package_tables import TABLES
 from desktop.journal.journal import Journal
-from desktop.journal.records import Record
+from desktop.journal.records import JournalRecord, Record
 from tests.desktop.exchange.journals import FULL, journals
 
 
@@ -27,7 +27,7 @@ def written(journal: Journal, folder: Path) -> Path:
 
 def test_every_field_of_every_record_has_its_column():
     assert [table.record for table in TABLES] != []
-    assert {table.record for table in TABLES} == set(get_args(Record))
+    assert {table.record for table in TABLES} == set(get_args(JournalRecord))
     for table in TABLES:
         assert [field.name for field in table.fields] == [field.name for field in fields(table.record)]
 

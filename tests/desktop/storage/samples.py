@@ -10,6 +10,7 @@ from pathlib import Path
 import pytest
 
 from desktop.errors import StorageError
+from desktop.journal.clients import Client, Coach, CoachingSession
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person, Plan, Record, Span
 from desktop.journal.row_change import RowChange
 
@@ -38,6 +39,9 @@ FULL: tuple[Record, ...] = (
         worth=0.1,
         look_day=date(2026, 12, 31),
         archived=True,
+        limit_low=88.5,
+        limit_high=170.25,
+        limit_words="call the ward, before noon",
     ),
     Entry(
         7,
@@ -54,6 +58,22 @@ FULL: tuple[Record, ...] = (
     Span(5, date(2026, 1, 2), date(2199, 12, 31), "device", "new cuff", (7,)),
     Plan(6, 7, date(2026, 1, 5), 5, 2),
     DayNote(date(2026, 1, 6), "slept badly"),
+)
+
+CASELOAD_FULL: tuple[Record, ...] = (
+    Coach("fedcba9876543210" * 2, "Coach Ünal", "/home/coach/logs"),
+    Client(
+        3,
+        "0123456789abcdef" * 2,
+        "K7 ↑",
+        2,
+        5,
+        date(2026, 4, 1),
+        date(2026, 3, 2),
+        "fairly sure: more",
+        ended=True,
+    ),
+    CoachingSession(3, date(2026, 3, 1), "stairs, not the lift", 5, 2, 'said "fine"\nand laughed'),
 )
 
 

@@ -6,12 +6,14 @@ import os
 import sqlite3
 import stat
 from collections.abc import Callable
+from dataclasses import replace
 from datetime import UTC, datetime, timedelta, timezone
 from pathlib import Path
 from random import Random
 
 import pytest
 
+from desktop.journal.journal import Journal
 from desktop.journal.records import Person
 from desktop.storage import backups
 from desktop.storage.backups import (
@@ -29,7 +31,7 @@ from desktop.storage.backups import (
     take_copy,
 )
 from desktop.storage.database import open_database
-from desktop.storage.migrations import create_version_1
+from desktop.storage.layout import JOURNAL, Layout
 from desktop.storage.store import Store
 from tests.desktop.storage.samples import PERSON, added, minutes, names, refusal
 from tests.desktop.storage.test_migrations import add_mood
@@ -268,15 +270,15 @@ def test_a_file_of_an_older_version_is_copied_before_it_is_changed(
 ) -> None:
     store.write("put value", added(minutes(1)))
     store.close()
-    steps = (create_version_1, add_mood)
+    newer = replace(JOURNAL, steps=(*JOURNAL.steps, add_mood))
     with monkeypatch.context() as patch:
         patch.setattr(backups, "_check", _damaged)
-        refused = lambda: open_database(path, steps, before_migrating=lambda old: take_copy(old, NOON))  # noqa: E731
+        refused = lambda: open_database(path, newer, before_migrating=lambda old: take_copy(old, NOON))  # noqa: E731
         assert refusal(refused).reason == "damaged"
-    database = open_database(path, steps, before_migrating=lambda old: take_copy(old, NOON, before_version=True))
+    database = open_database(path, newer, before_migrating=lambda old: take_copy(old, NOON, before_version=True))
     database.close()
     (copy,) = copies_of(path)
-    assert copy.path.name == "20260310T120000Z-3-v1.dayfence"
+    assert copy.path.name == "20260310T120000Z-3-v2.dayfence"
     assert copy.before_version
     assert len(read_copy(copy.path).entries[1]) == 1
     with Store.open(copy.path, clock=clock) as opened:
@@ -293,10 +295,12 @@ def test_the_store_takes_that_copy_by_itself(
     store.close()
     asked: list[Path] = []
 
-    def older(path: Path, *, to_read: bool, before_migrating: Callable[[Path], object]) -> object:
+    def older(
+        path: Path, layout: Layout[Journal], *, to_read: bool, before_migrating: Callable[[Path], object]
+    ) -> object:
         before_migrating(path)
         asked.append(path)
-        return open_database(path, to_read=to_read)
+        return open_database(path, layout, to_read=to_read)
 
     monkeypatch.setattr("desktop.storage.store.open_database", older)
     Store.open(path, clock=clock).close()

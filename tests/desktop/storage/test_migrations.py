@@ -1,13 +1,21 @@
 from __future__ import annotations
 
+import json
+import shutil
 import sqlite3
 from collections.abc import Iterator
+from dataclasses import replace
 from pathlib import Path
 
 import pytest
 
+from desktop.edits.history import UndoHistory
 from desktop.errors import StorageError
+from desktop.journal.row_change import RowChange
+from desktop.storage.backups import copies_of, read_copy
+from desktop.storage.chain import HISTORY, HistoryRow, Position, check_whole
 from desktop.storage.database import open_database
+from desktop.storage.layout import JOURNAL
 from desktop.storage.migrations import (
     MIGRATIONS,
     Migration,
@@ -19,7 +27,8 @@ from desktop.storage.migrations import (
 )
 from desktop.storage.schema import APPLICATION_ID, VERSION_1
 from desktop.storage.store import Store
-from tests.desktop.storage.samples import added, minutes
+from desktop.storage.stranger import read_stranger
+from tests.desktop.storage.samples import EXERCISE, PERSON, added, minutes
 
 
 def add_mood(connection: sqlite3.Connection) -> None:
@@ -84,7 +93,7 @@ def test_a_step_cut_short_leaves_the_version_before(
     journal = store.read()
     store.close()
     with pytest.raises(error):
-        open_database(path, (create_version_1, step))
+        open_database(path, replace(JOURNAL, steps=(*MIGRATIONS, step)))
     with Store.open(path) as reopened:
         assert reopened.read() == journal
         reopened.verify()
@@ -93,17 +102,72 @@ def test_a_step_cut_short_leaves_the_version_before(
 def test_an_older_file_is_brought_to_the_newest_version_at_opening(store: Store, path: Path) -> None:
     store.write("put value", added(minutes(1)))
     store.close()
-    steps = (create_version_1, add_mood)
+    newer = replace(JOURNAL, steps=(*MIGRATIONS, add_mood))
     for _ in range(2):
-        database = open_database(path, steps)
+        database = open_database(path, newer)
         with database.reading() as connection:
-            assert header(connection) == (2, APPLICATION_ID)
+            assert header(connection) == (len(MIGRATIONS) + 1, APPLICATION_ID)
             assert connection.execute("SELECT count(*) FROM entry").fetchone() == (1,)
             assert connection.execute("PRAGMA foreign_keys").fetchone() == (1,)
         database.close()
     with pytest.raises(StorageError) as caught:
         Store.open(path)
     assert caught.value.reason == "newer version"
+
+
+VERSION_1_FILE = Path(__file__).parents[2] / "old_journals" / "version_1.dayfence"
+"""As the program of that version wrote it: its history holds a measure set, and set back."""
+
+
+def test_a_journal_of_version_1_is_opened_checked_and_written_on(path: Path) -> None:
+    shutil.copyfile(VERSION_1_FILE, path)
+    with Store.open(path) as store:
+        store.verify()
+        journal = store.read()
+        assert [len(entries) for entries in journal.entries.values()] == [8, 8]
+        pressure = journal.measures[1]
+        assert (pressure.title, pressure.worth, pressure.limit_high, pressure.limit_words) == (
+            "Upper pressure",
+            None,
+            None,
+            "",
+        )
+        assert [held.record for held in store.history_of(("measure", 1))][1] == replace(pressure, worth=5.0)
+        limits = replace(pressure, limit_high=170.0, limit_words="call the ward")
+        store.write("set measure", [RowChange(pressure, limits)])
+        store.verify()
+    with Store.open(path) as again:
+        assert again.read().measures[1] == limits
+        assert UndoHistory(again.steps()).undoable.changes == (RowChange(pressure, limits),)
+    (copy,) = copies_of(path)
+    assert copy.before_version
+    assert read_copy(copy.path) == journal
+
+
+def test_somebody_elses_journal_of_version_1_is_read(path: Path) -> None:
+    shutil.copyfile(VERSION_1_FILE, path)
+    before = path.read_bytes()
+    assert len(read_stranger(path).entries[1]) == 8
+    assert path.read_bytes() == before
+
+
+def test_a_row_of_the_history_that_is_no_record_is_noticed(path: Path) -> None:
+    with Store.create(path, PERSON) as store:
+        store.write("add measure", added(EXERCISE))
+    rewritten = json.dumps({"id": 1, "title": "Exercise"})
+    connection = sqlite3.connect(path)
+    connection.execute("DROP TRIGGER history_as_written")
+    chain = Position().chain
+    for cells in connection.execute(f"SELECT {HISTORY} FROM history ORDER BY seq").fetchall():
+        row = HistoryRow.of_cells(cells)
+        if row.tbl == "measure":
+            row = row._replace(after=rewritten)
+        chain = row.chained(chain)
+        connection.execute("UPDATE history SET after = ?, chain = ? WHERE seq = ?", (row.after, chain, row.seq))
+    with pytest.raises(StorageError) as caught:
+        check_whole(connection, path)
+    connection.close()
+    assert caught.value.fields["detail"] == "a row of the history is not a record"
 
 
 def test_statistics_of_another_program_do_not_count(store: Store, path: Path) -> None:

@@ -9,12 +9,14 @@ import subprocess
 import sys
 import textwrap
 from collections.abc import Callable
+from dataclasses import replace
 from pathlib import Path
 
 import pytest
 
 from desktop.journal.records import Measure
 from desktop.storage import database
+from desktop.storage.layout import JOURNAL
 from desktop.storage.migrations import MIGRATIONS
 from desktop.storage.schema import APPLICATION_ID
 from desktop.storage.store import Store
@@ -159,7 +161,7 @@ def test_a_folder(journal_folder: Path) -> None:
     assert refusal(lambda: Store.open(journal_folder)).reason == "not a journal"
 
 
-@pytest.mark.parametrize("version", [2, 99, 2**31 - 1])
+@pytest.mark.parametrize("version", [len(MIGRATIONS) + 1, 99, 2**31 - 1])
 def test_a_newer_version_is_left_alone(store: Store, path: Path, version: int) -> None:
     store.close()
     connection = sqlite3.connect(path)
@@ -168,7 +170,11 @@ def test_a_newer_version_is_left_alone(store: Store, path: Path, version: int) -
     before = path.read_bytes()
     os.utime(path, ns=(5, 5))
     error = refusal(lambda: Store.open(path))
-    assert (error.reason, error.fields["version"], error.fields["newest"]) == ("newer version", version, 1)
+    assert (error.reason, error.fields["version"], error.fields["newest"]) == (
+        "newer version",
+        version,
+        len(MIGRATIONS),
+    )
     assert path.read_bytes() == before
     assert path.stat().st_mtime_ns == 5
     assert names(path.parent) == [path.name]
@@ -375,7 +381,7 @@ def test_where_the_system_says_it_cannot_be_written(
         # And SQLite itself would not write either.
         with pytest.raises(sqlite3.OperationalError, match="readonly"):
             opened._database._connection.execute("DELETE FROM entry")
-    newer = (*MIGRATIONS, lambda _: None)
+    newer = replace(JOURNAL, steps=(*JOURNAL.steps, lambda _: None))
     assert refusal(lambda: database.open_database(path, newer)).reason == "read only"
 
 
@@ -420,9 +426,10 @@ def test_an_older_version_where_nothing_can_be_written(store: Store, path: Path,
     path.chmod(0o444)
     code = """
         from desktop.storage.database import open_database
-        from desktop.storage.migrations import MIGRATIONS
+        from dataclasses import replace
+        from desktop.storage.layout import JOURNAL
         try:
-            open_database(Path(sys.argv[1]), (*MIGRATIONS, lambda connection: None))
+            open_database(Path(sys.argv[1]), replace(JOURNAL, steps=(*JOURNAL.steps, lambda connection: None)))
         except StorageError as error:
             print(error.reason)
     """

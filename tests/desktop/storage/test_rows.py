@@ -8,19 +8,20 @@ from typing import get_args
 import numpy as np
 import pytest
 
-from desktop.journal.records import Change, Entry, Person, Record
+from desktop.journal.records import CaseloadRecord, Change, Entry, JournalRecord, Person, Record
 from desktop.storage.rows import TABLES, key_text, table_of
-from tests.desktop.storage.samples import EXERCISE, FULL, PERSON
+from tests.desktop.storage.samples import CASELOAD_FULL, EXERCISE, FULL, PERSON
 
 
 def test_the_samples_hold_every_kind_of_record_and_no_default() -> None:
-    assert {type(record) for record in FULL} == set(get_args(Record))
-    for record in FULL:
+    assert {type(record) for record in FULL} == set(get_args(JournalRecord))
+    assert {type(record) for record in CASELOAD_FULL} == set(get_args(CaseloadRecord))
+    for record in (*FULL, *CASELOAD_FULL):
         for field in fields(record):
             assert getattr(record, field.name) != field.default, (record, field.name)
 
 
-@pytest.mark.parametrize("record", FULL, ids=lambda record: type(record).__name__)
+@pytest.mark.parametrize("record", [*FULL, *CASELOAD_FULL], ids=lambda record: type(record).__name__)
 def test_every_field_survives_as_row_and_as_json(record: Record) -> None:
     table = table_of(record)
     cells = table.cells(record)
@@ -31,7 +32,7 @@ def test_every_field_survives_as_row_and_as_json(record: Record) -> None:
     assert tuple(json.loads(text)) == table.columns
 
 
-@pytest.mark.parametrize("record", FULL, ids=lambda record: type(record).__name__)
+@pytest.mark.parametrize("record", [*FULL, *CASELOAD_FULL], ids=lambda record: type(record).__name__)
 def test_a_change_of_any_field_changes_the_row(record: Record) -> None:
     table = table_of(record)
     for index, field in enumerate(fields(record)):
