@@ -36,7 +36,7 @@ class Client:
             program's guess.
         next_session: the day agreed on, or None.
         looked_on: the day the coach last marked the client as looked at, or None.
-        looked_answer: what the answer was on that day, as ``Facts.answer`` names it; "" before.
+        looked_reasons: the marks of the reasons that were there on that day, a space between them.
         ended: the coaching has ended; no longer in the queue.
     """
 
@@ -47,7 +47,7 @@ class Client:
     outcome: int | None = None
     next_session: date | None = None
     looked_on: date | None = None
-    looked_answer: str = ""
+    looked_reasons: str = ""
     ended: bool = False
 
 

@@ -210,7 +210,7 @@ BEGIN SELECT RAISE(ABORT, 'the coach record stays'); END""",
         '"outcome" INTEGER CHECK ("outcome" BETWEEN 1 AND 2000000000)',
         _day("next_session", null=""),
         _day("looked_on", null=""),
-        _text("looked_answer"),
+        _text("looked_reasons", 1000),
         _whole("ended", 0, 1),
     ),
     _table(

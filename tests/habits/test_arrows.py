@@ -33,6 +33,7 @@ ALLOWED: dict[str, set[str]] = {
     "desktop.journal": {"analysis"},
     "desktop.storage": {"desktop.errors", "desktop.journal", "sqlite3"},
     "desktop.exchange": {"analysis", "desktop.errors", "desktop.journal"},
+    "desktop.caseload": {"analysis", "desktop.errors", "desktop.journal", "desktop.wording"},
     "desktop.wording": {"analysis", "desktop.errors", "desktop.journal", "desktop.resource_files", "numpy"},
     "desktop.edits": {"analysis", "desktop.journal", "desktop.storage"},
     "desktop.command": BELOW_THE_WINDOW,

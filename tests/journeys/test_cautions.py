@@ -49,6 +49,7 @@ def test_the_bar_can_be_closed(window):
 def test_own_limits_are_kept_and_used(person, window):
     def settles(dialog: CautionSettings) -> None:
         dialog.high.setText("150")
+        dialog.words.setText("call the ward before noon")
         dialog.region.setCurrentIndex(2)
         dialog.accept()
 
@@ -56,7 +57,15 @@ def test_own_limits_are_kept_and_used(person, window):
     window.log.caution_settings()
     assert window.settings.emergency_number == "999"
     assert types(window, "150") == ""
-    assert "your own limit of 150 mmHg" in types(window, "151")
+    said = types(window, "151")
+    assert "your own limit of 150 mmHg" in said
+    assert said.endswith("Your clinic's words: “call the ward before noon”.")
+    measure = window.session.current
+    assert (measure.limit_low, measure.limit_high) == (None, 150.0)
+    for _ in ("151", "150", "the limits"):
+        window.session.undo()
+    assert "your own limit" not in types(window, "152")
+    assert (window.session.current.limit_high, window.session.current.limit_words) == (None, "")
 
 
 def test_numbers_from_a_table_or_another_unit_are_not_spoken_of(qtbot):

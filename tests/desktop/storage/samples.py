@@ -70,7 +70,7 @@ CASELOAD_FULL: tuple[Record, ...] = (
         5,
         date(2026, 4, 1),
         date(2026, 3, 2),
-        "fairly sure: more",
+        "moved-2-more firm-more",
         ended=True,
     ),
     CoachingSession(3, date(2026, 3, 1), "stairs, not the lift", 5, 2, 'said "fine"\nand laughed'),

@@ -18,6 +18,7 @@ from desktop.journal.row_change import RowChange
 from desktop.storage.backups import EarlierCopy, copies_folder, copies_of, take_copy
 from desktop.storage.salvage import WonBack, copy_to, put_in_place, win_back, write_won_back
 from desktop.storage.store import Store
+from desktop.storage.stranger import read_stranger
 from tests.desktop.storage.samples import EXERCISE, FULL, PERSON, names, refusal
 
 PAGE = 4096
@@ -125,6 +126,25 @@ def test_the_first_pages_destroyed(damaged: Path, grown: tuple[Path, Journal]) -
         won = win_back(damaged, copies)
         assert share(won, grown[1]) == 1
         assert won.journal.person == PERSON
+
+
+@pytest.mark.parametrize("page", range(16))
+def test_a_damaged_journal_of_an_older_version(journal_folder: Path, page: int) -> None:
+    whole = Path(__file__).parents[2] / "old_journals" / "version_1.dayfence"
+    path = journal_folder / "log.dayfence"
+    shutil.copyfile(whole, path)
+    harm(path, page)
+    won = win_back(path, [])
+    wanted = read_stranger(whole)
+    kept = [
+        key for measure in wanted.entries for key in wanted.entries[measure] if _same(won, wanted, measure, key)
+    ]
+    assert len(kept) >= 8
+    assert won.journal.measures[1].limit_words == ""
+
+
+def _same(won: WonBack, wanted: Journal, measure: int, key: tuple[date, str]) -> bool:
+    return won.journal.entries.get(measure, {}).get(key) == wanted.entries[measure][key]
 
 
 def test_cut_short(damaged: Path, grown: tuple[Path, Journal]) -> None:
