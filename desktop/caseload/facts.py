@@ -174,8 +174,11 @@ def measures_of(journal: Journal, client: Client | None) -> tuple[int | None, in
 
 def marks_of(journal: Journal, measure: int, sessions: Sequence[CoachingSession]) -> list[analysis.Change]:
     """The changes of a measure: those the client marked, and what was agreed in sessions."""
-    agreed = [analysis.Change(one.day, one.agreed) for one in sessions if one.agreed]
-    return [*journal.analysis_changes(measure), *agreed]
+    own = journal.analysis_changes(measure)
+    # What the client marked on the same day in the same words is the same change.
+    marked = {(one.day, one.label.casefold()) for one in own}
+    agreed = [one for one in sessions if one.agreed and (one.day, one.agreed.casefold()) not in marked]
+    return [*own, *(analysis.Change(one.day, one.agreed) for one in agreed)]
 
 
 def review_overall(

@@ -161,11 +161,14 @@ def _reasons(client: Client, facts: Facts | None, error: DayfenceError | None, t
 
 
 def _of_facts(facts: Facts, today: date) -> list[Reason | None]:
+    moved, firm = _moved(facts), _firm(facts)
+    if moved is not None and firm is not None and firm.said[0].headline in {one.headline for one in moved.said}:
+        firm = None
     return [
         _gone_quiet(facts, today),
         _plan_missed(facts, today),
-        _moved(facts),
-        _firm(facts),
+        moved,
+        firm,
         _past_limit(facts),
         Reason("device", f"device-{facts.devices[-1]}", (-facts.devices[-1],), days=facts.devices)
         if facts.devices

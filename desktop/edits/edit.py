@@ -6,6 +6,7 @@ from collections.abc import Iterable
 from dataclasses import dataclass
 from datetime import date
 
+from desktop.journal.caseload import Caseload
 from desktop.journal.journal import Journal
 from desktop.journal.records import Record
 from desktop.journal.row_change import Act, RowChange
@@ -37,13 +38,13 @@ class DayCell:
     slot: str = ""
 
 
-def edit_putting(journal: Journal, act: Act, records: Iterable[Record]) -> Edit:
-    """The edit that puts each record where the journal has another, or none, under its key.
+def edit_putting(kept: Journal | Caseload, act: Act, records: Iterable[Record]) -> Edit:
+    """The edit that puts each record where the journal or caseload has another, or none, under its key.
 
     Args:
-        journal: as it stands.
+        kept: as it stands.
         act: what the person did.
         records: no two with the same key.
     """
-    pairs = ((journal.find(record), record) for record in records)
+    pairs = ((kept.find(record), record) for record in records)
     return Edit(act, tuple(RowChange(before, after) for before, after in pairs if before != after))

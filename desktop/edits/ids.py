@@ -1,11 +1,11 @@
-"""Ids for new records: never one that the journal has used before, even for a record that is gone."""
+"""Ids for new records: never one that the file has used before, even for a record that is gone."""
 
 from __future__ import annotations
 
 from collections.abc import Mapping
 from typing import Literal
 
-IdTable = Literal["measure", "change", "span", "plan"]
+IdTable = Literal["measure", "change", "span", "plan", "client"]
 
 
 class Ids:

@@ -38,7 +38,7 @@ from desktop.wording.page import (
     title_with_unit,
     unit_words,
 )
-from desktop.wording.telling import speech_of
+from desktop.wording.telling import Section, speech_of
 
 LATELY = 14
 MOST_AFTER = 4
@@ -107,6 +107,7 @@ class PageContent:
         doubts: what to know before trusting it, worst first; the last ones give way where room is short.
         always: what is said there in any case.
         foot: the rule, the version, the caution.
+        sections: the coach's form of the page has these in place of question and answers.
     """
 
     title: str
@@ -121,6 +122,7 @@ class PageContent:
     doubts: tuple[str, ...]
     always: tuple[str, ...]
     foot: str
+    sections: tuple[Section, ...] = ()
 
 
 def content_of(
@@ -167,6 +169,27 @@ def content_of(
         always=always_lines(reviews),
         foot=foot_line(reviews[0]),
     )
+
+
+def coach_content_of(
+    journal: Journal, subject: Subject, printed: date, code: str, sections: Sequence[Section]
+) -> PageContent:
+    """The coach's form of the page: agreed, kept, moved, missing and a question to ask, then numbers and chart.
+
+    Args:
+        journal: the client's.
+        subject: the measure that the answer is about.
+        printed: the day of printing.
+        code: the coach's word for the client.
+        sections: of the session card.
+    """
+    content = content_of(journal, [subject], printed, "")
+    bounded = tuple(
+        Section(section.title, tuple(shortened(line, LONGEST_QUESTION) for line in section.sentences))
+        for section in sections
+    )
+    title = f"{shortened(code, _LONGEST_TITLE)}: {content.title}"
+    return replace(content, title=title, answers=(), sections=bounded)
 
 
 def _title(review: Review) -> str:

@@ -34,8 +34,13 @@ def page_layout(page: Page) -> QPageLayout:
     return QPageLayout(size, QPageLayout.Orientation.Portrait, QMarginsF(), QPageLayout.Unit.Point)
 
 
-def pdf_of(page: Page) -> bytes:
-    """The page as a PDF: drawn, not an image; its text can be searched and copied, its typeface is inside."""
+def pdf_of(page: Page, *more: Page) -> bytes:
+    """The page as a PDF: drawn, not an image; its text can be searched and copied, its typeface is inside.
+
+    Args:
+        page: the first.
+        more: further pages behind it, on the same paper.
+    """
     buffer = _opened()
     writer = QPdfWriter(buffer)
     writer.setTitle(page.title)
@@ -43,10 +48,11 @@ def pdf_of(page: Page) -> bytes:
     writer.setResolution(72)
     writer.setPageLayout(page_layout(page))
     with QPainter(writer) as painter:
-        for sheet in range(len(page.sheets)):
-            if sheet:
-                writer.newPage()
-            paint_sheet(painter, page, sheet)
+        for place, one in enumerate((page, *more)):
+            for sheet in range(len(one.sheets)):
+                if place or sheet:
+                    writer.newPage()
+                paint_sheet(painter, one, sheet)
     return _taken(buffer)
 
 

@@ -39,8 +39,13 @@ def html_of(content: PageContent) -> bytes:
     parts = [
         f"<header><h1>{escape(content.title)}{unit}</h1>",
         f'<p class="facts">{_said(" · ".join(content.facts))}</p></header>',
-        f'<section class="question"><strong>{QUESTION}:</strong> {asked}</section>',
+        *(
+            []
+            if content.sections
+            else [f'<section class="question"><strong>{QUESTION}:</strong> {asked}</section>']
+        ),
         "<main>",
+        *_sections(content),
         *_answers(content),
         *_table(content),
         '<div class="notes">',
@@ -77,6 +82,13 @@ def faces_css() -> str:
 
 def _said(text: str) -> str:
     return escape(text.replace("\u00a0", " "))
+
+
+def _sections(content: PageContent) -> list[str]:
+    parts = []
+    for section in content.sections:
+        parts += [f"<h2>{escape(section.title)}</h2>", *(f"<p>{_said(line)}</p>" for line in section.sentences)]
+    return parts
 
 
 def _answers(content: PageContent) -> list[str]:

@@ -147,6 +147,8 @@ class _Layout:
         return Page(self.paper, self.content.title, tuple(sheets))
 
     def _first(self, shown: _Shown) -> list[Box]:
+        if self.content.sections:
+            return [self._title(), *self._sections(), *self._tables(shown)]
         return [self._title(), self._question(), *self._answers(shown), *self._tables(shown)]
 
     def _second(self, shown: _Shown) -> list[Box]:
@@ -256,6 +258,12 @@ class _Layout:
         # A short fact, such as a date, is not parted by the end of a line.
         facts = (fact.replace(" ", "\u00a0") if len(fact) < _SHORT_FACT else fact for fact in self.content.facts)
         return self._text("title", [title, [(" · ".join(facts), self.quiet)]])
+
+    def _sections(self) -> list[Box]:
+        return [
+            self._text(f"section {place}", [[(f"{one.title}:", self.bold), (" ".join(one.sentences), self.plain)]])
+            for place, one in enumerate(self.content.sections, start=1)
+        ]
 
     def _question(self) -> Box:
         pad = self.sizes.body * 0.8

@@ -2,11 +2,13 @@
 
 from __future__ import annotations
 
+from pathlib import Path
 from typing import TYPE_CHECKING
 
 from PySide6.QtWidgets import QMessageBox
 
 from desktop.errors import StorageError
+from desktop.screens.caseload_opening import CASELOAD_ENDING, open_caseload
 from desktop.screens.file_questions import ask_journal, ask_new_journal
 from desktop.storage.backups import save_copy
 from desktop.storage.store import Store
@@ -33,6 +35,30 @@ def open_stranger(window: MainWindow) -> None:
         QMessageBox.warning(window, "Dayfence", stranger_sentence(error))
         return
     window.open_journal(path)
+
+
+def show_own_caseload(window: MainWindow) -> None:
+    """Show the coach's own caseload, started where there is none yet."""
+    show_caseload(window, window.folder / f"clients{CASELOAD_ENDING}")
+
+
+def show_caseload(window: MainWindow, path: Path) -> bool:
+    """Show a caseload in a window of its own; one that is shown already comes to the front."""
+    # What a coach needs is not needed to show the window of a journal.
+    from desktop.screens.caseload_window import CaseloadWindow
+
+    for shown in window.findChildren(CaseloadWindow):
+        if shown.desk.path == path.absolute():
+            shown.raise_()
+            shown.activateWindow()
+            return True
+    store = open_caseload(window, path, window.now)
+    if store is None:
+        return False
+    caseload = CaseloadWindow(store, window.folder, now=window.now, parent=window)
+    caseload.show()
+    caseload.begin()
+    return True
 
 
 def keep_elsewhere(window: MainWindow) -> None:

@@ -22,9 +22,10 @@ from desktop.models.keeping import Keeping
 from desktop.models.ready_made import make_sample, new_person
 from desktop.models.session import Session
 from desktop.screens.bring_in_dialog import BringInDialog
+from desktop.screens.caseload_opening import is_caseload
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.dialogs import MeasureDialog, ask_day, ask_if_right, ask_to_leave_unread
-from desktop.screens.file_commands import keep_elsewhere
+from desktop.screens.file_commands import keep_elsewhere, show_caseload
 from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_journal, ask_table
 from desktop.screens.log_commands import LogCommands
 from desktop.screens.menus import Menus
@@ -58,7 +59,7 @@ class MainWindow(QMainWindow):
         self.folder = folder
         self.session: Session | None = None
         self.keeping: Keeping | None = None
-        self._now = now
+        self.now = now
         self.settings = Settings(folder)
         self.setWindowTitle("Dayfence")
         self.start_screen = StartScreen()
@@ -92,11 +93,13 @@ class MainWindow(QMainWindow):
 
     def open_journal(self, path: Path) -> bool:
         """Open a journal in place of the one that is open; says so when it cannot be."""
+        if is_caseload(path):
+            return show_caseload(self, path)
         if self.session is not None and self.session.path == path:
             return True
         if not self.let_go():
             return False
-        return self._show_opened(open_with_questions(self, path, self._now))
+        return self._show_opened(open_with_questions(self, path, self.now))
 
     def show_start(self) -> None:
         """Show the start screen where no journal is open."""
@@ -107,7 +110,7 @@ class MainWindow(QMainWindow):
         path = self.folder / f"sample{JOURNAL_ENDING}"
         if not path.exists():
             try:
-                make_sample(path, self._now)
+                make_sample(path, self.now)
             except StorageError as error:
                 self._warn(error)
                 return
@@ -159,9 +162,8 @@ class MainWindow(QMainWindow):
         if session is None:
             return
         dialog = BringInDialog(path, reading, session, self)
-        if dialog.exec() != QDialog.DialogCode.Accepted or dialog.brought is None:
-            return
-        self.say_brought(dialog.brought)
+        if dialog.exec() == QDialog.DialogCode.Accepted and dialog.brought is not None:
+            self.say_brought(dialog.brought)
 
     def say_brought(self, brought: BroughtIn) -> None:
         """Show what was brought in, and say how much it was."""
@@ -264,7 +266,7 @@ class MainWindow(QMainWindow):
 
     def _start_journal(self, path: Path) -> Session | None:
         try:
-            store = Store.create(path, new_person(), clock=self._now, alone=True)
+            store = Store.create(path, new_person(), clock=self.now, alone=True)
         except StorageError as error:
             self._warn(error)
             return None
@@ -283,7 +285,7 @@ class MainWindow(QMainWindow):
 
     def _take(self, store: Store) -> Session:
         """Show a store's journal; no other is open."""
-        session = Session(store, now=self._now, parent=self)
+        session = Session(store, now=self.now, parent=self)
         self.session = session
         table = DaysTable(session)
         table.unread.connect(self.say)
@@ -436,7 +438,7 @@ class MainWindow(QMainWindow):
         if self.let_go():
             store = None
             try:
-                store = mend(self, path, self._now)
+                store = mend(self, path, self.now)
             except StorageError as error:
                 self._warn(error)
             self._show_opened(store)

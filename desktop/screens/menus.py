@@ -14,7 +14,7 @@ from desktop.edits.days import EmptyKind
 from desktop.screens.chart_pane import PERIOD_WORDS
 from desktop.screens.earlier_copies import show_earlier_copies
 from desktop.screens.erase_dialog import erase_for_good
-from desktop.screens.file_commands import keep_elsewhere, open_stranger
+from desktop.screens.file_commands import keep_elsewhere, open_stranger, show_own_caseload
 from desktop.screens.hand_over_dialog import hand_over
 from desktop.screens.held_dialog import show_held
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
@@ -68,6 +68,7 @@ class Menus:
         _add(file, "&Open a journal…", window.open_file, Keys.Open)
         _add(file, "Open somebody &else's journal…", partial(open_stranger, window))
         _add(file, "Open the &sample journal", window.open_sample)
+        _add(file, "A coach's &caseload…", partial(show_own_caseload, window))
         file.addSeparator()
         _add(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")
         self._reading.append(_add(file, "The &page…", partial(_show_page, window), Keys.Print))

@@ -54,6 +54,11 @@ def act_phrase(step: Step, journal: Journal) -> str:
     return _record_phrase(step.changes[0], journal) or _PHRASES[step.act]
 
 
+def plain_act_phrase(act: Act) -> str:
+    """What an act did, without the record: ``the session``, ``the client's settings``."""
+    return _PHRASES[act]
+
+
 def _record_phrase(change: RowChange, journal: Journal) -> str:
     match change.record:
         case Entry() as entry:

@@ -49,6 +49,16 @@ def not_copied_sentence(error: Exception) -> str:
     return f"No new copy of the journal could be made{':' if reason else ''}{reason}. The journal itself is saved."
 
 
+def damaged_caseload_sentence(path: Path, made: str, *, is_gone: bool) -> str:
+    """That a caseload cannot be opened, but a copy of it can."""
+    if is_gone:
+        return f"{path.name} is not where it was. The copy of {made} is whole. Open that copy in its place?"
+    return (
+        f"{path.name} is damaged. It was not changed. The copy of {made} is whole. Go on with that copy? The "
+        "damaged file stays beside it under another name."
+    )
+
+
 def stranger_sentence(error: StorageError) -> str:
     """Why a journal that came from elsewhere was not read."""
     if error.reason in ("damaged", "refused value"):

@@ -132,8 +132,8 @@ def told(mondays: list[Monday]) -> list[str]:
     """The means in words and numbers."""
     mean = lambda name: float(np.mean([getattr(one, name) for one in mondays]))  # noqa: E731
     return [
-        f"H. Forty clients on a Monday, {len(mondays)} caseloads: 28 unchanged, 4 up, 3 down, 2 faded, 2 silent, 1 new",
-        "   device; 14 days before, 21 to 35 after.",
+        f"H. Forty clients on a Monday, {len(mondays)} caseloads: 28 unchanged, 4 up, 3 down, 2 faded, 2 silent,",
+        "   1 with a new device; 14 days before, 21 to 35 after; moves of 1.25 standard deviations of a day.",
         f"   true cases among the first {FIRST_ROWS} rows, of 12 (10 asked)   {mean('true_in_first'):.1f}",
         f"   the silent two on top, in 100                     {100 * mean('silent_on_top'):.0f}",
         f"   unchanged clients flagged a Monday (1.5 at most)  {mean('unchanged_flagged'):.2f}",
