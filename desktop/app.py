@@ -25,7 +25,9 @@ def main(arguments: Sequence[str]) -> int:
         description="Keep a daily log, mark a change, and see whether it moved.",
         epilog="Without a window: dayfence review FILE and dayfence page FILE -o page.pdf (each has its --help).",
     )
-    parser.add_argument("journal", nargs="?", type=Path, help="a journal to open in place of your own")
+    parser.add_argument(
+        "journal", nargs="?", type=Path, help="a journal to open in place of your own, or a coach's caseload"
+    )
     parser.add_argument("--sample", action="store_true", help="open the sample journal of invented logs")
     options = parser.parse_args(arguments)
     lacking = missing_for_window()
@@ -43,6 +45,8 @@ def _run(options: argparse.Namespace) -> int:
     from desktop.faces import load_faces
     from desktop.models.collector import Collector
     from desktop.resource_files import resource
+    from desktop.screens.caseload_opening import is_caseload
+    from desktop.screens.file_commands import show_caseload
     from desktop.screens.main_window import MainWindow
 
     app = QApplication(sys.argv[:1])
@@ -59,6 +63,8 @@ def _run(options: argparse.Namespace) -> int:
         return 2
     Collector(app)
     window = MainWindow(folder)
+    if options.journal is not None and is_caseload(options.journal) and show_caseload(window, options.journal):
+        return app.exec()
     window.show()
     if options.sample:
         window.open_sample()

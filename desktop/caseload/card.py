@@ -65,8 +65,9 @@ class Card:
 
     @property
     def main(self) -> MeasureSince | None:
-        """The measure that the answer is about: the outcome, else what was done."""
-        return self.outcome or self.doing
+        """The measure that the answer is about: the outcome where it has values, else what was done."""
+        known = [one for one in (self.outcome, self.doing) if one is not None]
+        return next((one for one in known if one.overall.stretches), known[0] if known else None)
 
 
 def card_of(journal: Journal, row: QueueRow, sessions: Sequence[CoachingSession], today: date) -> Card:

@@ -146,7 +146,7 @@ class Facts:
                     "past": tuple(PastLimit(**(one | {"days": tuple(one["days"])})) for one in held["past"]),
                 }
             )
-        except (TypeError, KeyError) as error:
+        except (TypeError, KeyError, ValueError) as error:
             raise ValueError("these are not facts") from error
 
 
@@ -258,7 +258,7 @@ def facts_of(
     last = said_days[-1] if said_days else None
     usual = quiet(said_days, last) if last is not None else None
     since = session.toordinal() if session is not None else None
-    main = chosen[1] if chosen[1] is not None else chosen[0]
+    main = next((one for one in reversed(chosen) if one is not None and journal.entries.get(one)), None)
     logged = {day for day in said_days if since is not None and day >= since}
     lately = []
     for measure in looked_at:

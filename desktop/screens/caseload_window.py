@@ -68,8 +68,7 @@ class CaseloadWindow(QMainWindow):
         parent: QWidget | None = None,
     ) -> None:
         """A window for an open caseload; the settings are those kept in ``folder``."""
-        super().__init__(parent, Qt.WindowType.Window)
-        self.setAttribute(Qt.WidgetAttribute.WA_DeleteOnClose)
+        super().__init__(parent)
         self.settings = Settings(folder)
         self.desk = CaseloadDesk(store, now=now, parent=self)
         self.queue, self.card, self.form = QueuePane(), CardPane(), SessionForm()

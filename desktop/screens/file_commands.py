@@ -47,15 +47,16 @@ def show_caseload(window: MainWindow, path: Path) -> bool:
     # What a coach needs is not needed to show the window of a journal.
     from desktop.screens.caseload_window import CaseloadWindow
 
-    for shown in window.findChildren(CaseloadWindow):
-        if shown.desk.path == path.absolute():
-            shown.raise_()
-            shown.activateWindow()
-            return True
+    path = path.absolute()
+    shown = window.caseloads.get(path)
+    if shown is not None and shown.isVisible():
+        shown.activateWindow()
+        return True
     store = open_caseload(window, path, window.now)
     if store is None:
         return False
-    caseload = CaseloadWindow(store, window.folder, now=window.now, parent=window)
+    # Without a parent, so that the program ends with the last window whichever that is.
+    caseload = window.caseloads[path] = CaseloadWindow(store, window.folder, now=window.now)
     caseload.show()
     caseload.begin()
     return True

@@ -6,6 +6,7 @@ from collections.abc import Callable
 from datetime import date, datetime, timedelta
 from functools import partial
 from pathlib import Path
+from typing import TYPE_CHECKING
 
 from PySide6.QtCore import Qt, QTimer
 from PySide6.QtGui import QCloseEvent
@@ -43,6 +44,9 @@ from desktop.wording.damage import abrupt_sentence, clock_sentence
 from desktop.wording.numbers import count
 from desktop.wording.problems import not_copied_sentence, problem_sentence
 
+if TYPE_CHECKING:
+    from desktop.screens.caseload_window import CaseloadWindow
+
 _MEND_LATER = 500
 _CLOCK_LOOK = 60_000
 """Milliseconds between two looks at the calendar."""
@@ -57,8 +61,10 @@ class MainWindow(QMainWindow):
         """A window that keeps its own journal and its settings in ``folder``."""
         super().__init__(parent)
         self.folder = folder
+        self.own_journal = folder / f"journal{JOURNAL_ENDING}"
         self.session: Session | None = None
         self.keeping: Keeping | None = None
+        self.caseloads: dict[Path, CaseloadWindow] = {}
         self.now = now
         self.settings = Settings(folder)
         self.setWindowTitle("Dayfence")
@@ -80,11 +86,6 @@ class MainWindow(QMainWindow):
         self._follow_session()
 
     # Opening and starting.
-
-    @property
-    def own_journal(self) -> Path:
-        """Where the person's own journal is, made or not."""
-        return self.folder / f"journal{JOURNAL_ENDING}"
 
     def open_own(self) -> None:
         """Open the person's own journal when there is one; else the start screen stays."""
@@ -184,10 +185,7 @@ class MainWindow(QMainWindow):
     def go_to_day(self) -> None:
         """Ask for a day and make it current; the table begins earlier where it must."""
         session = self.session
-        if session is None:
-            return
-        day = ask_day(self, "Go to a day", self.current_day(session))
-        if day is not None:
+        if session is not None and (day := ask_day(self, "Go to a day", self.current_day(session))) is not None:
             self.workspace.days.days.show_from(day - timedelta(7))
             self._go_to(min(day, session.today))
 

@@ -72,6 +72,11 @@ class Desk:
         self.sees("Dayfence")
         return program
 
+    def starts_with(self, path: Path, title: str) -> subprocess.Popen:
+        program = self._start([sys.executable, "-m", "desktop", str(path)], self.environment)
+        self.sees(title)
+        return program
+
     def sees(self, title: str) -> None:
         """Wait until a window of this title has the keys."""
         wait_for(f"the window {title!r}", lambda: self._ask("getactivewindow", "getwindowname").startswith(title))

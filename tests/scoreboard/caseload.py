@@ -45,8 +45,10 @@ class Monday:
     naive_true: int
 
 
-def client_journal(number: int, truth: str, rng: np.random.Generator) -> tuple[Journal, list[CoachingSession]]:
-    """A client's journal, and the session in which the change was agreed."""
+def client_journal(
+    number: int, truth: str, rng: np.random.Generator, today: date = MONDAY
+) -> tuple[Journal, list[CoachingSession]]:
+    """A client's journal up to yesterday, and the session in which the change was agreed."""
     after = int(rng.integers(21, 36))
     days = BASELINE + after
     noise = np.empty(days)
@@ -55,14 +57,14 @@ def client_journal(number: int, truth: str, rng: np.random.Generator) -> tuple[J
         noise[day] = _CARRY_OVER * noise[day - 1] + np.sqrt(1 - _CARRY_OVER**2) * rng.normal()
     level = np.zeros(days)
     spans: list[Record] = []
-    first = MONDAY - timedelta(days)
+    first = today - timedelta(days)
     if truth in ("up", "down"):
         level[BASELINE:] = _MOVE if truth == "up" else -_MOVE
     elif truth == "faded":
         level[BASELINE : BASELINE + 14] = 1.2 * _MOVE
     elif truth == "device":
         level[-10:] = _MOVE
-        spans.append(Span(1, first + timedelta(days - 10), MONDAY + timedelta(60), "device", "new watch"))
+        spans.append(Span(1, first + timedelta(days - 10), today + timedelta(60), "device", "new watch"))
     values = np.maximum(0, np.round(_MIDDLE + _SPREAD * (noise + level)))
     kept = rng.random(days) >= _BLANK
     kept[[0, -1]] = True
