@@ -4,16 +4,18 @@ from __future__ import annotations
 
 import os
 from collections.abc import Callable, Generator, Iterable, Mapping, Sequence
-from concurrent.futures import Future, ProcessPoolExecutor
 from dataclasses import replace
 from datetime import date, timedelta
 from itertools import islice
-from multiprocessing import get_context
+from typing import TYPE_CHECKING
 
 from analysis.answer import Review
 from analysis.log import Log
 from analysis.pipeline import chance_of, review
 from analysis.points import first_logged_day
+
+if TYPE_CHECKING:
+    from concurrent.futures import Future
 
 Asked = tuple[Log, Mapping[str, object]]
 """A log, and what else ``review`` is told of it, by name."""
@@ -70,6 +72,10 @@ def _one_by_one(asked: Sequence[Asked], budget: float) -> Generator[Review, None
 
 def _shared(asked: Sequence[Asked], budget: float, cores: int) -> Generator[Review, None, None]:
     """The same on every core; a few chunks ahead are handed out, so that stopping is quick and memory bounded."""
+    # Other processes are only needed where there are many logs, and not to import the analysis.
+    from concurrent.futures import ProcessPoolExecutor
+    from multiprocessing import get_context
+
     chunks = (asked[start : start + _CHUNK] for start in range(0, len(asked), _CHUNK))
     # Spawned: a forked child of a program with a window may hang on a lock that another thread held.
     with ProcessPoolExecutor(cores, mp_context=get_context("spawn")) as pool:

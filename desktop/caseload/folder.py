@@ -5,11 +5,10 @@ from __future__ import annotations
 import hashlib
 import os
 from collections.abc import Callable, Generator, Iterator, Mapping, Sequence
-from concurrent.futures import Future, ProcessPoolExecutor
 from dataclasses import dataclass
 from itertools import islice
-from multiprocessing import get_context
 from pathlib import Path
+from typing import TYPE_CHECKING
 
 from analysis import AnalysisError
 from desktop.caseload.facts import FACTS_VERSION, Facts, facts_of
@@ -18,6 +17,9 @@ from desktop.journal.clients import Client, CoachingSession
 from desktop.storage.new_files import file_errors
 from desktop.storage.store import SeenFile
 from desktop.storage.stranger import look_at_stranger
+
+if TYPE_CHECKING:
+    from concurrent.futures import Future
 
 JOURNAL_ENDING = ".dayfence"
 
@@ -152,6 +154,10 @@ def _one_by_one(paths: Sequence[Path], known: Known) -> Generator[FileSeen, None
 
 def _shared(paths: Sequence[Path], known: Known) -> Generator[FileSeen, None, None]:
     """The same on every core; the first few are read here, while the others start."""
+    # Other processes are only needed where many files are read, and not to show the window.
+    from concurrent.futures import ProcessPoolExecutor
+    from multiprocessing import get_context
+
     chunks = (paths[start : start + _CHUNK] for start in range(_CHUNK, len(paths), _CHUNK))
     cores = os.cpu_count() or 1
     # Spawned: a forked child of a program with a window may hang on a lock that another thread held.

@@ -201,7 +201,7 @@ class CaseloadDesk(QObject):
         """Called on the reader's thread; gives the names of the files there are."""
         paths = journals_in(folder)
         waiting: list[FileSeen] = []
-        told = time.monotonic()
+        told = -_AT_LEAST  # The first is shown at once.
         for count, one in enumerate(look_through(paths, remembered, known, self._stop.is_set), start=1):
             waiting.append(one)
             if time.monotonic() - told >= _AT_LEAST or count == len(paths):

@@ -17,6 +17,9 @@ HISTORY = '"seq", "step", "at", "kind", "act", "of", "tbl", "key", "before", "af
 """The columns of the history, in the order of ``HistoryRow`` with the chain after it."""
 
 
+_AS_JSON = json.JSONEncoder(ensure_ascii=False, separators=(",", ":"))
+
+
 class HistoryRow(NamedTuple):
     """One row of the history without its chain."""
 
@@ -38,7 +41,7 @@ class HistoryRow(NamedTuple):
 
     def chained(self, previous: bytes) -> bytes:
         """The mark that ties this row to all rows before it."""
-        row = json.dumps(list(self), ensure_ascii=False, separators=(",", ":")).encode()
+        row = _AS_JSON.encode(list(self)).encode()
         return hashlib.blake2b(previous + row, digest_size=16).digest()
 
     def change(self) -> RowChange:

@@ -22,6 +22,9 @@ Cell = str | int | float | None
 """What one column of one row holds."""
 
 
+_AS_JSON = json.JSONEncoder(ensure_ascii=False, separators=(",", ":"), allow_nan=False)
+
+
 @dataclass(frozen=True)
 class _Column:
     name: str
@@ -95,7 +98,7 @@ class Table:
     def json(self, cells: Sequence[Cell]) -> str:
         """A row as the history keeps it; the same record always gives the same text."""
         named = dict(zip(self.columns, cells, strict=True))
-        return json.dumps(named, ensure_ascii=False, separators=(",", ":"), allow_nan=False)
+        return _AS_JSON.encode(named)
 
     def from_json(self, text: str) -> Record:
         """The record a text of :meth:`json` stands for.

@@ -13,7 +13,7 @@ from datetime import date
 
 import numpy as np
 
-from tests.bench import analysis_rows, exchange_rows, page_rows, window_rows
+from tests.bench import analysis_rows, caseload_rows, exchange_rows, page_rows, window_rows
 from tests.bench.measuring import Row
 
 PARTS: Mapping[str, Callable[[], Iterator[Row]]] = {
@@ -21,6 +21,7 @@ PARTS: Mapping[str, Callable[[], Iterator[Row]]] = {
     "exchange": exchange_rows.rows,
     "page": page_rows.rows,
     "window": window_rows.rows,
+    "caseload": caseload_rows.rows,
 }
 
 
