@@ -32,6 +32,7 @@ from desktop.errors import DayfenceError, StorageError
 from desktop.journal.clients import Client
 from desktop.journal.journal import Journal
 from desktop.models.caseload_desk import CaseloadDesk
+from desktop.screens import theme
 from desktop.screens.card_pane import CardPane
 from desktop.screens.caseload_menus import CaseloadMenus
 from desktop.screens.caseload_opening import ask_clients_folder
@@ -39,7 +40,6 @@ from desktop.screens.client_dialog import ClientDialog
 from desktop.screens.queue_pane import QueuePane
 from desktop.screens.session_form import SessionForm
 from desktop.screens.settings import TEXT_SIZES, Settings
-from desktop.screens.theme import apply_theme
 from desktop.storage.store import CaseloadStore
 from desktop.wording.caseload import (
     CASELOAD_KEYS,
@@ -87,7 +87,7 @@ class CaseloadWindow(QMainWindow):
         self._clock.start(_CALENDAR_LOOK)
         self._today = self.desk.today
         self.resize(1360, 820)
-        self._apply_theme()
+        self.apply_theme()
         self._follow()
         self.queue.view.setFocus()
 
@@ -227,6 +227,14 @@ class CaseloadWindow(QMainWindow):
         self.desk.close()
         event.accept()
 
+    def apply_theme(self) -> None:
+        """Take the theme and the size of text that are in force."""
+        app = QApplication.instance()
+        assert isinstance(app, QApplication)
+        look = theme.apply_theme(app, self.settings.theme, self.settings.text_percent)
+        self.card.set_face(app.font())
+        self.card.set_look(look)
+
     # Inside.
 
     def _lay_out(self) -> None:
@@ -358,11 +366,4 @@ class CaseloadWindow(QMainWindow):
 
     def _set_text_size(self, percent: int) -> None:
         self.settings.set_text_percent(percent)
-        self._apply_theme()
-
-    def _apply_theme(self) -> None:
-        app = QApplication.instance()
-        assert isinstance(app, QApplication)
-        look = apply_theme(app, self.settings.theme, self.settings.text_percent)
-        self.card.set_face(app.font())
-        self.card.set_look(look)
+        self.apply_theme()

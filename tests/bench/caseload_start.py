@@ -1,4 +1,4 @@
-"""Opens a caseload and says when its first rows were painted, when all files were read, and how much memory it took.
+"""Opens a caseload and says when its first rows were painted, when all files were read, and the memory it took.
 
 ``python -m tests.bench.caseload_start CASELOAD`` prints seconds from the start of Python to the first rows
 painted and to the last file read, and the peak memory of the program and of its largest helper in megabytes.

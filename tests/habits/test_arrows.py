@@ -23,6 +23,8 @@ BELOW_THE_WINDOW = {
     "desktop.edits",
 }
 
+CASELOAD = {"desktop.caseload", "desktop.caseload.folder", "desktop.wording.caseload"}
+
 ALLOWED: dict[str, set[str]] = {
     "analysis": {"numpy"},
     "desktop": set(),
@@ -33,7 +35,7 @@ ALLOWED: dict[str, set[str]] = {
     "desktop.journal": {"analysis"},
     "desktop.storage": {"desktop.errors", "desktop.journal", "sqlite3"},
     "desktop.exchange": {"analysis", "desktop.errors", "desktop.journal"},
-    "desktop.caseload": {"analysis", "desktop.errors", "desktop.journal", "desktop.wording"},
+    "desktop.caseload": {"analysis", "desktop.errors", "desktop.journal", "desktop.wording", "numpy"},
     "desktop.caseload.folder": {
         "analysis",
         "desktop.caseload",
@@ -52,7 +54,7 @@ ALLOWED: dict[str, set[str]] = {
     "desktop.edits": {"analysis", "desktop.journal", "desktop.storage"},
     "desktop.command": BELOW_THE_WINDOW,
     "desktop.export": BELOW_THE_WINDOW | {"desktop.command"},
-    "desktop.models": BELOW_THE_WINDOW | {"PySide6"},
+    "desktop.models": BELOW_THE_WINDOW | CASELOAD | {"PySide6"},
     "desktop.chart.picture": {"analysis", "desktop.chart.spoken", "desktop.journal", "desktop.wording", "numpy"},
     "desktop.chart.spoken": set(),
     "desktop.chart.ticks": {"desktop.wording"},
@@ -88,6 +90,7 @@ ALLOWED: dict[str, set[str]] = {
     },
     # The screens hand edits to the session, files to the importer and the store, errors to the wording.
     "desktop.screens": BELOW_THE_WINDOW
+    | CASELOAD
     | {
         "desktop.chart",
         "desktop.chart.picture",

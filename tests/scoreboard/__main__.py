@@ -13,9 +13,13 @@ from datetime import date
 from multiprocessing import get_context
 from pathlib import Path
 
+from tests.scoreboard import caseload
 from tests.scoreboard.cells import SIZES, count
 from tests.scoreboard.families import CONTINUOUS
 from tests.scoreboard.tables import TABLES, Counts, oracle_of
+
+CASELOAD_TABLE, CASELOADS = "H", 50
+"""The table of the coach's queue, and over how many caseloads it is counted."""
 
 KEPT = Path(__file__).parents[2] / "resources" / "how_often_wrong.txt"
 
@@ -76,7 +80,7 @@ def told(counts: Counts, logs: int) -> str:
     )
     lines += _table(
         counts,
-        "   on the day forecast, of 100 logs with a forecast: the answer is the right one",
+        "F. On the day forecast, of 100 logs with a forecast: the answer is the right one",
         "F",
         None,
         lambda held: 100 * held["right then"] / max(held["number"], 1),
@@ -142,10 +146,13 @@ def main() -> None:
     """Count and print."""
     parser = argparse.ArgumentParser(prog="python -m tests.scoreboard")
     parser.add_argument("--logs", type=int, default=2000)
-    parser.add_argument("--tables", default=",".join(TABLES))
+    parser.add_argument("--tables", default=",".join([*TABLES, CASELOAD_TABLE]))
     parser.add_argument("--keep", action="store_true")
     options = parser.parse_args()
-    text = told(count_all(options.tables.split(","), options.logs), options.logs)
+    names = options.tables.split(",")
+    text = told(count_all([name for name in names if name in TABLES], options.logs), options.logs)
+    if CASELOAD_TABLE in names:
+        text += "\n" + "\n".join(caseload.told([caseload.monday(seed) for seed in range(CASELOADS)])) + "\n"
     print(text, end="")
     if options.keep:
         KEPT.write_text(text, "utf-8")

@@ -24,13 +24,19 @@ def write_journal(path: Path, journal: Journal, today: date = MONDAY) -> None:
         store.write("bring in table", [RowChange(None, record) for record in others])
 
 
-def forty(folder: Path, seed: int = 1, today: date = MONDAY) -> dict[str, tuple[str, list[CoachingSession]]]:
-    """Write forty clients' journals; gives what is true of each, and its session, by the journal's id."""
+def forty(
+    folder: Path, seed: int = 1, today: date = MONDAY, most: int = 40
+) -> dict[str, tuple[str, list[CoachingSession]]]:
+    """Write forty clients' journals, or the first of them.
+
+    Returns:
+        What is true of each, and its session, by the journal's id.
+    """
     folder.mkdir(parents=True, exist_ok=True)
     rng = np.random.default_rng(seed)
     truths = rng.permutation([truth for truth, many in TRUTHS.items() for _ in range(many)]).tolist()
     told = {}
-    for number, truth in enumerate(truths, start=1):
+    for number, truth in enumerate(truths[:most], start=1):
         journal, sessions = client_journal(number, truth, rng, today)
         write_journal(folder / f"client {number:02}.dayfence", journal, today)
         told[journal.person.journal_id] = (truth, sessions)

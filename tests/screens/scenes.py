@@ -16,6 +16,7 @@ from desktop.journal.records import Change, DayNote, Entry, Measure, Person, Rec
 from desktop.screens.main_window import MainWindow
 from desktop.screens.theme import ThemeName
 from desktop.storage.store import Store
+from tests.screens.caseload_scenes import visit_caseload
 
 NOW = datetime(2031, 3, 30, 20, 15)
 SETTLED = 700
@@ -104,6 +105,7 @@ def visit(folder: Path, look: str, see: Callable[[Scene], object]) -> None:
             if journal == "four weeks":
                 for command in COMMANDS:
                     _see_dialog(window, command, see)
+    visit_caseload(folder / "caseload", *LOOKS[look], lambda name, shown: see(Scene(name, shown)))
 
 
 def menu_action(window: QMainWindow, *texts: str):  # type: ignore[no-untyped-def]

@@ -367,3 +367,9 @@ def test_times_are_told_and_never_order(path: Path) -> None:
         store.write("write note", added(DayNote(minutes(2).day, "b")))
         assert [step.at[:4] for step in store.steps()] == ["2026", "1999", "2026"]
         assert [step.number for step in store.steps()] == [1, 2, 3]
+
+
+def test_the_same_place_may_be_written_by_its_owner(store: Store) -> None:
+    assert not store.read_only
+    store.write("put value", added(minutes(1)))
+    assert store.last_step_number == 2
