@@ -153,7 +153,8 @@ def _one_by_one(paths: Sequence[Path], known: Known) -> Generator[FileSeen, None
 
 
 def _shared(paths: Sequence[Path], known: Known) -> Generator[FileSeen, None, None]:
-    """The same on every core; the first few are read here, while the others start."""
+    """The same on every core; the very first is read before the others start, so that there is something to see."""
+    yield from _one_by_one(paths[:1], known)
     # Other processes are only needed where many files are read, and not to show the window.
     from concurrent.futures import ProcessPoolExecutor
     from multiprocessing import get_context
@@ -166,8 +167,7 @@ def _shared(paths: Sequence[Path], known: Known) -> Generator[FileSeen, None, No
             pool.submit(_look_at_all, chunk) for chunk in islice(chunks, 2 * cores)
         ]
         try:
-            for path in paths[:_CHUNK]:
-                yield look_at(path, known)
+            yield from _one_by_one(paths[1:_CHUNK], known)
             while waiting:
                 chunk = waiting.pop(0).result()
                 waiting += [pool.submit(_look_at_all, more) for more in islice(chunks, 1)]
