@@ -153,7 +153,7 @@ def _one_by_one(paths: Sequence[Path], known: Known) -> Generator[FileSeen, None
 
 
 def _shared(paths: Sequence[Path], known: Known) -> Generator[FileSeen, None, None]:
-    """The same on every core; the very first is read before the others start, so that there is something to see."""
+    """The same on every core; the very first is read before the others start, to have something to see."""
     yield from _one_by_one(paths[:1], known)
     # Other processes are only needed where many files are read, and not to show the window.
     from concurrent.futures import ProcessPoolExecutor
