@@ -6,7 +6,15 @@ from datetime import date
 from typing import cast
 
 from PySide6.QtCore import QEvent, QModelIndex, QObject, QPersistentModelIndex, Qt, Signal
-from PySide6.QtGui import QAction, QContextMenuEvent, QFontMetrics, QGuiApplication, QKeyEvent, QKeySequence
+from PySide6.QtGui import (
+    QAction,
+    QContextMenuEvent,
+    QFontMetrics,
+    QGuiApplication,
+    QKeyEvent,
+    QKeySequence,
+    QResizeEvent,
+)
 from PySide6.QtWidgets import (
     QAbstractItemDelegate,
     QAbstractItemView,
@@ -25,6 +33,9 @@ from desktop.wording.entry import HOLDS_A_VALUE, LAST_DAY
 
 _ROW_HEIGHT = 1.7
 """Of a line of text; at least 24 pixels to press."""
+_LEAST_HEIGHT = 24
+_NOTE, _LEAST_NOTE = 14, 7
+"""Room for a note, in letters: wanted, and where the pane is narrow."""
 
 
 class DaysPane(QTableView):
@@ -56,6 +67,10 @@ class DaysPane(QTableView):
         self.verticalHeader().setDefaultAlignment(Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter)
         self.horizontalHeader().setHighlightSections(False)
         self.horizontalHeader().setSectionsMovable(False)
+        self.horizontalHeader().setStretchLastSection(False)
+        # Without these, rows would keep the least height of a larger text that was shown before.
+        self.verticalHeader().setMinimumSectionSize(_LEAST_HEIGHT)
+        self.setWordWrap(False)
         self.setCornerButtonEnabled(False)
         self.setAccessibleName("Days")
         self._settle_sizes()
@@ -166,6 +181,17 @@ class DaysPane(QTableView):
         super().changeEvent(event)
         if event.type() == QEvent.Type.FontChange:
             self._settle_sizes()
+            self._keep_in_view()
+
+    def resizeEvent(self, event: QResizeEvent) -> None:
+        """The note follows the width; the cell that is current stays in view."""
+        super().resizeEvent(event)
+        self._fit_note()
+        self._keep_in_view()
+
+    def _keep_in_view(self) -> None:
+        if self.model() is not None and self.currentIndex().isValid():
+            self.scrollTo(self.currentIndex())
 
     def _hold_values(self) -> bool:
         """Whether a number is written down on any of the chosen days: one letter must not take it away."""
@@ -193,36 +219,53 @@ class DaysPane(QTableView):
 
     def _settle_sizes(self) -> None:
         metrics = QFontMetrics(self.font())
-        height = max(24, round(metrics.height() * _ROW_HEIGHT))
-        self.verticalHeader().setDefaultSectionSize(height)
-        pad = 3 * metrics.averageCharWidth() + 12
-        self.verticalHeader().setFixedWidth(metrics.horizontalAdvance("Wed 28 Mar") + pad)
+        letter = metrics.averageCharWidth()
+        self.verticalHeader().setDefaultSectionSize(max(_LEAST_HEIGHT, round(metrics.height() * _ROW_HEIGHT)))
+        self.verticalHeader().setFixedWidth(metrics.horizontalAdvance("Wed 28 Mar") + 2 * letter + 12)
         if self.model() is None:
             return
-        last = self.model().columnCount() - 1
-        for column in range(last):
+        self.horizontalHeader().setMinimumSectionSize(letter * _LEAST_NOTE)
+        for column in range(self.model().columnCount() - 1):
             title = str(self.model().headerData(column, Qt.Orientation.Horizontal) or "")
             widest = max(metrics.horizontalAdvance(line) for line in [*title.split("\n"), "set aside"])
-            self.setColumnWidth(column, widest + 3 * metrics.averageCharWidth())
-        self.horizontalHeader().setStretchLastSection(True)
-        self.horizontalHeader().setMinimumSectionSize(metrics.averageCharWidth() * 6)
+            self.setColumnWidth(column, widest + 3 * letter)
+        self._fit_note()
         self.layout_changed.emit()
+
+    def _fit_note(self) -> None:
+        """The note takes what the measures leave, and is cut short where it is longer."""
+        if self.model() is not None:
+            # Qt's own stretching leaves the column as wide as it was after some changes of the text's size.
+            least = QFontMetrics(self.font()).averageCharWidth() * _LEAST_NOTE
+            left = self.viewport().width() - self._measures_width
+            self.setColumnWidth(self.model().columnCount() - 1, max(left, least))
 
     def set_paper(self, paper: str) -> None:
         """Give titles and days the paper of the cells, without the style's raised edges."""
-        flat = f"QHeaderView, QHeaderView::section {{ background: {paper}; border: none; padding: 0 6px; }}"
         self.setStyleSheet(f"QTableCornerButton::section {{ background: {paper}; border: none; }}")
-        self.horizontalHeader().setStyleSheet(flat)
-        self.verticalHeader().setStyleSheet(flat)
+        # Titles end where the numbers under them do; the padding of a section, not of its header.
+        for header, padding in ((self.horizontalHeader(), 3), (self.verticalHeader(), 12)):
+            header.setStyleSheet(
+                f"QHeaderView {{ background: {paper}; border: none; }}"
+                f"QHeaderView::section {{ background: {paper}; border: none; padding: 0 {padding}px; }}"
+            )
 
-    @property
-    def wanted_width(self) -> int:
-        """Wide enough for the days, every measure and a short note."""
+    def width_within(self, most: int) -> int:
+        """Wide enough for the days, every measure and a note; else for whole columns, never a part of one."""
         if self.model() is None:
             return self.minimumWidth()
-        measures = sum(self.columnWidth(column) for column in range(self.model().columnCount() - 1))
-        note = QFontMetrics(self.font()).averageCharWidth() * 9
-        return self.verticalHeader().width() + measures + note + self.verticalScrollBar().sizeHint().width()
+        letter = QFontMetrics(self.font()).averageCharWidth()
+        width = self.verticalHeader().width() + self.verticalScrollBar().sizeHint().width()
+        for column in range(self.model().columnCount() - 1):
+            wider = width + self.columnWidth(column)
+            if column and wider > most:
+                return width
+            width = wider
+        return min(most, width + _NOTE * letter) if width + _LEAST_NOTE * letter <= most else width
+
+    @property
+    def _measures_width(self) -> int:
+        return sum(self.columnWidth(column) for column in range(self.model().columnCount() - 1))
 
 
 class _CellDelegate(QStyledItemDelegate):

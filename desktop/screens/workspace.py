@@ -18,8 +18,10 @@ from desktop.screens.theme import PLAIN_SIZE
 _LEAST_WIDTHS = (200, 280, 240)
 _FIRST_WIDTHS = (350, 660, 350)
 _TITLE_PART = 1.35
-_DAYS_PART, _FINDINGS_PART = 0.31, 0.32
+_DAYS_PART, _FINDINGS_PART = 0.36, 0.3
 """The most of the width that each side may take; the rest is the chart's."""
+_CHART_PART = 0.36
+"""The least of the width for the chart: where the days need much, the findings are narrower."""
 
 
 class Workspace(QWidget):
@@ -74,9 +76,10 @@ class Workspace(QWidget):
         if self._moved_by_hand:
             return
         whole = self.width()
-        days = min(self.days.wanted_width, round(whole * _DAYS_PART))
+        days = self.days.width_within(round(whole * _DAYS_PART))
         larger = QFontInfo(self.font()).pixelSize() / PLAIN_SIZE
         findings = min(round(_FIRST_WIDTHS[2] * larger), round(whole * _FINDINGS_PART))
+        findings = max(min(findings, round(whole * (1 - _CHART_PART)) - days), _LEAST_WIDTHS[2])
         self.panes.setSizes([days, whole - days - findings, findings])
 
     def resizeEvent(self, event: QResizeEvent) -> None:
