@@ -9,7 +9,7 @@ from numpy.typing import NDArray
 from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
 from PySide6.QtGui import QBrush, QColor, QFontMetricsF, QPainter, QPen, QPolygonF
 
-from desktop.chart.picture import SHAPES, Picture
+from desktop.chart.pieces import SHAPES, Picture
 from desktop.chart.style import Style
 from desktop.chart.values import Places, paint_values
 from desktop.wording.numbers import count

@@ -12,7 +12,7 @@ from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
 from PySide6.QtGui import QBrush, QFont, QFontMetricsF, QPainter, QPen
 
 from desktop.chart.days import paint_days
-from desktop.chart.picture import EndLabel, LanePart, Line, Picture
+from desktop.chart.pieces import EndLabel, LanePart, Line, Picture
 from desktop.chart.style import Style
 from desktop.chart.ticks import day_ticks, value_ticks
 
@@ -24,6 +24,13 @@ BELOW_LINES = 3.6
 
 BELOW_LINES_BARE = 2.0
 """The same without the days, where another chart stands under this one."""
+
+BELOW_LINES_SHORT = 2.3
+"""The same without the bracket, where a chart is too low for everything; the findings say when it began."""
+
+_BRACKET = 0.7
+_MOST_FOR_NAMES = 0.25
+"""The most of a chart's width for the names of its levels."""
 
 _TICK_STRIP = 0.7
 _FIRST_NAME = 0.6
@@ -144,18 +151,32 @@ def paint_end_labels(painter: QPainter, rect: QRectF, frame: Frame, picture: Pic
     height = QFontMetricsF(style.face()).height()
     shown = [label for label in picture.end_labels if frame.y0 <= label.y <= frame.y1]
     shown.sort(key=lambda label: (frame.y(label.y), label.strong))
+    # Half a pixel: a side is given whole ones.
+    is_brief = end_labels_width(picture.end_labels, style) > rect.width() + 0.5
     for label, middle in zip(shown, _parted([frame.y(one.y) for one in shown], height, frame.rect), strict=True):
         painter.setFont(style.face(bold=label.strong))
         painter.setPen(style.side(label.side))
         box = QRectF(rect.left() + style.size * 0.5, middle - height / 2, rect.width(), height)
-        painter.drawText(box, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, label.text)
+        words = label.number if is_brief else label.text
+        painter.drawText(box, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, words)
     painter.restore()
 
 
-def end_labels_width(labels: Iterable[EndLabel], style: Style) -> float:
-    """How wide the right side must be for these labels."""
+def end_labels_width(labels: Iterable[EndLabel], style: Style, within: float | None = None) -> float:
+    """How wide the right side must be for these labels.
+
+    Args:
+        labels: the names of the levels.
+        style: with the type.
+        within: the width of the whole chart; where the names would take much of it, their numbers stand alone.
+    """
     metrics = QFontMetricsF(style.face(bold=True))
-    return max((metrics.horizontalAdvance(label.text) for label in labels), default=0.0) + style.size
+    labels = list(labels)
+    widths = [
+        max(map(metrics.horizontalAdvance, words), default=0.0) + style.size
+        for words in ([label.text for label in labels], [label.number for label in labels])
+    ]
+    return widths[0] if within is None or widths[0] <= within * _MOST_FOR_NAMES else widths[1]
 
 
 def paint_below(
@@ -175,7 +196,8 @@ def paint_below(
     below = rect.top() + strip
     if with_days:
         below += _days_axis(painter, rect, below, frame, style)
-    _bracket(painter, below, frame, picture, style)
+    if below + style.size * _BRACKET <= rect.bottom():
+        _bracket(painter, below, frame, picture, style)
     painter.restore()
 
 

@@ -1,12 +1,8 @@
-"""What the chart draws, from a review: places, shapes and words, and nothing about ink or Qt.
-
-Across, a place is a day number; an observation stands in the middle of its period. Up, it is the measure's unit.
-"""
+"""What the chart draws, from a review: places, shapes and words, and nothing about ink or Qt."""
 
 from __future__ import annotations
 
 from collections.abc import Iterable, Sequence
-from dataclasses import dataclass
 from datetime import date
 from typing import Literal
 
@@ -15,9 +11,21 @@ from numpy.typing import NDArray
 
 from analysis.answer import Review, Stretch
 from analysis.batch.fences import FEWEST_TO_DRAW
-from analysis.log import Period
 from analysis.points import Points
 from analysis.questions.did_it_move import CLAIMS
+from desktop.chart.pieces import (
+    SHAPES,
+    Band,
+    Bracket,
+    EndLabel,
+    LanePart,
+    Line,
+    Marks,
+    Picture,
+    Side,
+    Tick,
+    TickKind,
+)
 from desktop.chart.spoken import Spoken
 from desktop.journal.journal import Journal
 from desktop.journal.records import Measure
@@ -25,10 +33,6 @@ from desktop.wording.days import DayWords, long_day
 from desktop.wording.findings import findings_of
 from desktop.wording.numbers import Speech, count
 from desktop.wording.telling import day_words_of, speech_of
-
-Side = Literal["before", "after"]
-Shape = Literal["before", "after", "uncounted", "above", "below", "set aside"]
-TickKind = Literal["blank", "ill", "away", "late"]
 
 _ROOM = 0.06
 """Empty part above and below the days, of their range."""
@@ -40,125 +44,6 @@ _EDGE_ROOM = 0.09
 """Room for a line of words at the upper edge, of the values' range."""
 
 _MOST_LABELS = 40
-
-
-@dataclass(frozen=True, eq=False)
-class Marks:
-    """The observations, in order of day; all arrays of shape (k,).
-
-    Attributes:
-        x, y: where they stand.
-        shape: how each is drawn, as an index into ``SHAPES``.
-        is_zero: whether it is drawn hollow, as a counted zero.
-        joined: whether a thin line joins it to the one before, which is its neighbour in time.
-        labels: the value beside a mark outside the fences, by its place in the arrays.
-        spoken: one sentence a mark.
-    """
-
-    x: NDArray[np.float64]
-    y: NDArray[np.float64]
-    shape: NDArray[np.int8]
-    is_zero: NDArray[np.bool_]
-    joined: NDArray[np.bool_]
-    labels: dict[int, str]
-    spoken: Sequence[str]
-
-
-SHAPES: tuple[Shape, ...] = ("before", "after", "uncounted", "above", "below", "set aside")
-
-
-@dataclass(frozen=True)
-class Band:
-    """A filled part of the plot; ``inner`` for the fourths, else for the fences."""
-
-    x0: float
-    x1: float
-    y0: float
-    y1: float
-    side: Side
-    inner: bool
-
-
-LineRole = Literal["median", "fence", "carried fence", "carried median"]
-
-
-@dataclass(frozen=True)
-class Line:
-    """A level line."""
-
-    x0: float
-    x1: float
-    y: float
-    side: Side
-    role: LineRole
-
-
-@dataclass(frozen=True)
-class EndLabel:
-    """A word with its number at the right end of a line."""
-
-    y: float
-    text: str
-    side: Side
-    strong: bool
-
-
-@dataclass(frozen=True)
-class LanePart:
-    """A part of the lane above the plot: a stretch or named days."""
-
-    x0: float
-    x1: float
-    text: str
-    kind: Literal["stretch", "change", "span", "settling in"]
-
-
-@dataclass(frozen=True)
-class Tick:
-    """A mark in the lane below the plot."""
-
-    x: float
-    kind: TickKind
-
-
-@dataclass(frozen=True)
-class Bracket:
-    """The days the new level may have begun on."""
-
-    x0: float
-    x1: float
-    text: str
-
-
-@dataclass(frozen=True)
-class Picture:
-    """Everything on one chart.
-
-    Attributes:
-        x0, x1: the days from edge to edge.
-        y0, y1: the lowest and highest value shown.
-        axis_words: word at the lower end of the upright axis, what it counts, word at the upper end.
-        edge_words: fences beyond the picture, told in words at its upper and lower edge.
-        uprights: where a change stands.
-        told: the whole chart in sentences, for those who do not see it.
-    """
-
-    period: Period
-    x0: float
-    x1: float
-    y0: float
-    y1: float
-    axis_words: tuple[str, str, str]
-    marks: Marks
-    bands: tuple[Band, ...] = ()
-    lines: tuple[Line, ...] = ()
-    end_labels: tuple[EndLabel, ...] = ()
-    lane: tuple[LanePart, ...] = ()
-    uprights: tuple[float, ...] = ()
-    ticks: tuple[Tick, ...] = ()
-    bracket: Bracket | None = None
-    edge_words: tuple[tuple[Literal["above", "below"], str], ...] = ()
-    told: str = ""
 
 
 def picture_of(review: Review, journal: Journal, measure: int) -> Picture:
@@ -311,7 +196,7 @@ class _Composer:
             bands.append(Band(x0, x1, stretch.lower_fourth, stretch.upper_fourth, side, inner=True))
             lines.append(Line(x0, x1, stretch.median, side, "median"))
             if place == len(self.stretches) - 1:
-                labels.append(EndLabel(stretch.median, f"middle {self.speech.number(stretch.median)}", side, True))
+                labels.append(self._end_label("middle", stretch.median, side, strong=True))
             if stretch.lower_fence is None or stretch.upper_fence is None:
                 continue
             bottom, top = max(stretch.lower_fence, low), min(stretch.upper_fence, high)
@@ -332,13 +217,17 @@ class _Composer:
         _, x0 = self._edges(baseline)
         if not is_alone:
             lines.append(Line(x0, self.last_day, baseline.median, "before", "carried median"))
-            labels.append(EndLabel(baseline.median, f"was {self.speech.number(baseline.median)}", "before", False))
+            labels.append(self._end_label("was", baseline.median, "before"))
         for fence in (baseline.lower_fence, baseline.upper_fence):
             if fence is None or not low <= fence <= high:
                 continue
             if not is_alone:
                 lines.append(Line(x0, self.last_day, fence, "before", "carried fence"))
-            labels.append(EndLabel(fence, f"fence {self.speech.number(fence)}", "before", False))
+            labels.append(self._end_label("fence", fence, "before"))
+
+    def _end_label(self, word: str, y: float, side: Side, *, strong: bool = False) -> EndLabel:
+        number = self.speech.number(y)
+        return EndLabel(y, f"{word} {number}", number, side, strong)
 
     def _beyond(
         self, stretch: Stretch, low: float, high: float, side: Side

@@ -13,6 +13,7 @@ from PySide6.QtWidgets import QGraphicsItem, QStyleOptionGraphicsItem, QWidget
 from desktop.chart.look import LIGHT, Look
 from desktop.chart.painter import (
     BELOW_LINES,
+    BELOW_LINES_SHORT,
     LANE_LINES,
     Frame,
     end_labels_width,
@@ -23,12 +24,14 @@ from desktop.chart.painter import (
     paint_value_axis,
     value_axis_width,
 )
-from desktop.chart.picture import Picture
+from desktop.chart.pieces import Picture
 from desktop.chart.style import Style
 
 _FEWEST_DAYS_SHOWN = 5
 _ZOOM = 1.5
 _PAN = 0.15
+_LOW = 16
+"""Lines of text; a chart lower than this keeps its room for the plot."""
 
 
 class Chart(pg.PlotWidget):
@@ -183,10 +186,12 @@ class Chart(pg.PlotWidget):
             return
         style = self.style_of_chart()
         frame = self._frame(self.getViewBox().rect())
+        names = end_labels_width(self._picture.end_labels, style, self.width())
         self._sides["left"].setWidth(value_axis_width(frame, style))
-        self._sides["right"].setWidth(max(end_labels_width(self._picture.end_labels, style), style.size))
+        self._sides["right"].setWidth(max(names, style.size))
         self._sides["top"].setHeight(style.size * LANE_LINES)
-        self._sides["bottom"].setHeight(style.size * BELOW_LINES)
+        is_low = self.height() < style.size * _LOW
+        self._sides["bottom"].setHeight(style.size * (BELOW_LINES_SHORT if is_low else BELOW_LINES))
         for side in self._sides.values():
             side.update()
         if self._at is not None and self._at >= len(self._picture.marks.spoken):

@@ -7,7 +7,7 @@ from dataclasses import dataclass
 from PySide6.QtGui import QColor, QFont
 
 from desktop.chart.look import Look
-from desktop.chart.picture import Side
+from desktop.chart.pieces import Side
 
 
 @dataclass(frozen=True)

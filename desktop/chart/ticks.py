@@ -10,6 +10,7 @@ from desktop.wording.days import MONTHS
 _ROUND = (1.0, 2.0, 2.5, 5.0, 10.0)
 _DAY_STEPS = (1, 2, 7, 14)
 _MONTH_STEPS = (1, 2, 3, 6)
+_FEWEST_VALUES = 2
 _YEAR_STEPS = (1, 2, 5, 10, 20, 50, 100)
 
 
@@ -77,9 +78,18 @@ def value_ticks(y0: float, y1: float, most: int) -> list[tuple[float, str]]:
     span = y1 - y0
     if not (math.isfinite(span) and span > 0):
         return []
-    rough = span / max(most, 2)
+    most = max(most, 2)
+    step, digits, places = _value_steps(y0, y1, span / most)
+    while len(places) < _FEWEST_VALUES:
+        # One number alone gives no scale.
+        most += 1
+        step, digits, places = _value_steps(y0, y1, span / most)
+    return [(place * step, f"{place * step:,.{digits}f}".replace("-", "−").replace(",", " ")) for place in places]
+
+
+def _value_steps(y0: float, y1: float, rough: float) -> tuple[float, int, range]:
+    """The round step next to a rough one, its decimals, and the multiples of it in between."""
     power = 10.0 ** math.floor(math.log10(rough))
     step = next(power * part for part in _ROUND if power * part >= rough * 0.999)
     digits = max(0, -math.floor(math.log10(step) + 1e-9)) + (1 if step / power == 2.5 and power <= 1 else 0)
-    places = range(math.ceil(y0 / step - 1e-9), math.floor(y1 / step + 1e-9) + 1)
-    return [(place * step, f"{place * step:,.{digits}f}".replace("-", "−").replace(",", " ")) for place in places]
+    return step, digits, range(math.ceil(y0 / step - 1e-9), math.floor(y1 / step + 1e-9) + 1)

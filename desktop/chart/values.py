@@ -9,7 +9,7 @@ from numpy.typing import NDArray
 from PySide6.QtCore import QRectF, Qt
 from PySide6.QtGui import QFontMetricsF, QPainter
 
-from desktop.chart.picture import SHAPES, Picture
+from desktop.chart.pieces import SHAPES, Picture
 from desktop.chart.style import Style
 
 

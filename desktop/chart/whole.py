@@ -20,7 +20,7 @@ from desktop.chart.painter import (
     paint_value_axis,
     value_axis_width,
 )
-from desktop.chart.picture import Picture
+from desktop.chart.pieces import Picture
 from desktop.chart.style import Style
 
 LEAST_PLOT = 5.5

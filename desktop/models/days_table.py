@@ -23,6 +23,9 @@ Index = QModelIndex | QPersistentModelIndex
 DAYS_BEFORE_TODAY = 27
 """A new log shows four weeks, so that the days before today can be filled in."""
 
+LONGEST_LINE = 14
+"""Letters of one line of a title; a longer one would take the room of the other columns."""
+
 KIND_LETTERS: dict[str, EmptyKind] = {"r": "rest", "i": "ill", "a": "away"}
 
 
@@ -341,10 +344,12 @@ class DaysTable(QAbstractTableModel):
                 if measure is None:
                     return "Note"
                 unit = "" if measure.unit.casefold() == measure.title.casefold() else measure.unit
-                return "\n".join([*measure.title.split(maxsplit=1), unit]).strip()
+                return "\n".join(map(_cut, [*measure.title.split(maxsplit=1), unit])).strip()
             case Qt.ItemDataRole.TextAlignmentRole:
                 side = Qt.AlignmentFlag.AlignLeft if measure is None else Qt.AlignmentFlag.AlignRight
                 return side | Qt.AlignmentFlag.AlignVCenter
+            case Qt.ItemDataRole.ToolTipRole | Qt.ItemDataRole.AccessibleTextRole if measure is not None:
+                return measure.title
             case Qt.ItemDataRole.FontRole if measure is not None and measure.id == self._session.measure:
                 return _font(bold=True)
         return None
@@ -403,3 +408,7 @@ def _font(*, bold: bool = False, italic: bool = False, struck: bool = False) -> 
     font.setItalic(italic)
     font.setStrikeOut(struck)
     return font
+
+
+def _cut(line: str) -> str:
+    return line if len(line) <= LONGEST_LINE else f"{line[: LONGEST_LINE - 1].rstrip()}…"

@@ -13,7 +13,8 @@ from analysis import Log, Review
 from analysis.answer import Stretch
 from analysis.batch.fourths import fourths
 from analysis.log import COUNTED_KINDS
-from desktop.chart.picture import Picture, empty_picture, picture_of
+from desktop.chart.picture import empty_picture, picture_of
+from desktop.chart.pieces import Picture
 from desktop.journal.journal import Journal
 from desktop.wording.days import full_day
 from desktop.wording.findings import findings_of

@@ -13,7 +13,7 @@ from typing import Literal
 from PySide6.QtCore import QLineF, QRectF
 
 from desktop.chart.look import LIGHT
-from desktop.chart.picture import Picture
+from desktop.chart.pieces import Picture
 from desktop.chart.style import Style
 from desktop.chart.whole import WHOLE, Parts, least_height, side_widths
 from desktop.page.content import PageContent, Row

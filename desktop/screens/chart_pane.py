@@ -10,7 +10,8 @@ from PySide6.QtWidgets import QComboBox, QHBoxLayout, QLabel, QSizePolicy, QVBox
 from analysis import Review
 from analysis.log import PERIODS, Period
 from desktop.chart.look import LIGHT, Look
-from desktop.chart.picture import Picture, empty_picture, picture_of
+from desktop.chart.picture import empty_picture, picture_of
+from desktop.chart.pieces import Picture
 from desktop.models.session import Session
 
 if TYPE_CHECKING:

@@ -9,6 +9,7 @@ from PySide6.QtCore import QEvent, QModelIndex, QObject, QPersistentModelIndex, 
 from PySide6.QtGui import (
     QAction,
     QContextMenuEvent,
+    QFont,
     QFontMetrics,
     QGuiApplication,
     QKeyEvent,
@@ -34,6 +35,8 @@ from desktop.wording.entry import HOLDS_A_VALUE, LAST_DAY
 _ROW_HEIGHT = 1.7
 """Of a line of text; at least 24 pixels to press."""
 _LEAST_HEIGHT = 24
+_BESIDE = "\N{EN SPACE}"
+"""Parts a number from the note beside it."""
 _NOTE, _LEAST_NOTE = 14, 7
 """Room for a note, in letters: wanted, and where the pane is narrow."""
 
@@ -220,6 +223,9 @@ class DaysPane(QTableView):
     def _settle_sizes(self) -> None:
         metrics = QFontMetrics(self.font())
         letter = metrics.averageCharWidth()
+        strong = QFont(self.font())
+        strong.setBold(True)
+        bold = QFontMetrics(strong)
         self.verticalHeader().setDefaultSectionSize(max(_LEAST_HEIGHT, round(metrics.height() * _ROW_HEIGHT)))
         self.verticalHeader().setFixedWidth(metrics.horizontalAdvance("Wed 28 Mar") + 2 * letter + 12)
         if self.model() is None:
@@ -227,7 +233,7 @@ class DaysPane(QTableView):
         self.horizontalHeader().setMinimumSectionSize(letter * _LEAST_NOTE)
         for column in range(self.model().columnCount() - 1):
             title = str(self.model().headerData(column, Qt.Orientation.Horizontal) or "")
-            widest = max(metrics.horizontalAdvance(line) for line in [*title.split("\n"), "set aside"])
+            widest = max(bold.horizontalAdvance(line) for line in [*title.split("\n"), "set aside"])
             self.setColumnWidth(column, widest + 3 * letter)
         self._fit_note()
         self.layout_changed.emit()
@@ -244,7 +250,8 @@ class DaysPane(QTableView):
         """Give titles and days the paper of the cells, without the style's raised edges."""
         self.setStyleSheet(f"QTableCornerButton::section {{ background: {paper}; border: none; }}")
         # Titles end where the numbers under them do; the padding of a section, not of its header.
-        for header, padding in ((self.horizontalHeader(), 3), (self.verticalHeader(), 12)):
+        inside = 3 + QFontMetrics(self.font()).horizontalAdvance(_BESIDE)
+        for header, padding in ((self.horizontalHeader(), inside), (self.verticalHeader(), 12)):
             header.setStyleSheet(
                 f"QHeaderView {{ background: {paper}; border: none; }}"
                 f"QHeaderView::section {{ background: {paper}; border: none; padding: 0 {padding}px; }}"
@@ -284,6 +291,12 @@ class _CellDelegate(QStyledItemDelegate):
                 self.closeEditor.emit(editor, QAbstractItemDelegate.EndEditHint.SubmitModelCache)
                 return True
         return super().eventFilter(editor, event)
+
+    def initStyleOption(self, option: QStyleOptionViewItem, index: QModelIndex | QPersistentModelIndex) -> None:
+        """A number ends, and a note begins, a little inside its column."""
+        super().initStyleOption(option, index)
+        is_note = cast(DaysTable, index.model()).measure(index.column()) is None
+        option.text = f"{_BESIDE}{option.text}" if is_note else f"{option.text}{_BESIDE}"
 
     def createEditor(
         self, parent: QWidget, option: QStyleOptionViewItem, index: QModelIndex | QPersistentModelIndex

@@ -92,6 +92,10 @@ class EraseDialog(QDialog):
         self.sure.toggled.connect(self._offer)
         self._offer()
         give_room(self, 70)
+        # Large text in a small window: the dialog's own guess of its height is too low.
+        inside = layout.contentsMargins()
+        room = self.minimumWidth() - inside.left() - inside.right()
+        limits.setMinimumHeight(limits.heightForWidth(room))
 
     @property
     def chosen(self) -> str:

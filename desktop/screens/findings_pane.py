@@ -1,4 +1,4 @@
-"""The right pane: the answer in words, and the caution that never goes away."""
+"""The right pane: the answer in words."""
 
 from __future__ import annotations
 
@@ -6,56 +6,46 @@ from collections.abc import Sequence
 from html import escape
 
 from PySide6.QtCore import QEvent, QUrl
-from PySide6.QtGui import QFont, QFontInfo
-from PySide6.QtWidgets import QFrame, QLabel, QTextBrowser, QVBoxLayout, QWidget
+from PySide6.QtGui import QFontInfo, QResizeEvent
+from PySide6.QtWidgets import QFrame, QTextBrowser, QVBoxLayout, QWidget
 
 from analysis import Choice, Review
-from desktop.screens.theme import CAUTION_INK
-from desktop.wording.cautions import CAUTION
 from desktop.wording.findings import findings_of
 from desktop.wording.telling import Section
 from desktop.wording.what_if import TITLE, what_if_sentences
 from desktop.wording.worked_out import worked_out
 
 _HOW = "how"
-_CAUTION_PART = 0.9
-"""The caution is a little smaller than the rest, so that it leaves the findings room in large text."""
+_HEADLINE = 1.5
+"""The headline's letters, of the plain ones; in a pane of fewer than so many letters across they are smaller."""
+_LEAST_HEADLINE = 1.1
+_ACROSS = 11
 
 
 class FindingsPane(QWidget):
-    """Headline, the four questions, what would settle it, how it was worked out; below, the caution."""
+    """Headline, the four questions, what would settle it, how it was worked out."""
 
     def __init__(self, parent: QWidget | None = None) -> None:
         super().__init__(parent)
         self._review: Review | None = None
         self._choices: Sequence[Choice] = ()
         self._shows_how = False
+        self._headline = 0
         self._text = QTextBrowser()
         self._text.setOpenLinks(False)
         self._text.setFrameShape(QFrame.Shape.NoFrame)
         self._text.setAccessibleName("Findings")
         self._text.anchorClicked.connect(self._follow)
-        self._caution = QLabel(CAUTION)
-        self._caution.setWordWrap(True)
-        self._caution.setMargin(10)
-        self._caution.setAccessibleName("Caution")
         layout = QVBoxLayout(self)
         layout.setContentsMargins(0, 0, 0, 0)
         layout.setSpacing(0)
         layout.addWidget(self._text, 1)
-        layout.addWidget(self._caution)
-        self.set_dark(False)
+        self._fill()
 
     @property
     def text(self) -> str:
         """What is read in the pane."""
         return self._text.toPlainText()
-
-    def set_dark(self, dark: bool) -> None:
-        """Take the colours of the theme."""
-        paper, ink = CAUTION_INK["dark" if dark else "light"]
-        self._caution.setStyleSheet(f"background: {paper}; color: {ink};")
-        self._fill()
 
     def show_review(self, review: Review | None) -> None:
         """Tell a review; None where there is no measure yet."""
@@ -74,10 +64,17 @@ class FindingsPane(QWidget):
         """Follow the text size."""
         super().changeEvent(event)
         if event.type() == QEvent.Type.FontChange:
-            small = QFont(self.font())
-            small.setPixelSize(round(QFontInfo(self.font()).pixelSize() * _CAUTION_PART))
-            self._caution.setFont(small)
             self._fill()
+
+    def resizeEvent(self, event: QResizeEvent) -> None:
+        """A narrow pane has a smaller headline."""
+        super().resizeEvent(event)
+        if self._headline_size() != self._headline:
+            self._fill()
+
+    def _headline_size(self) -> int:
+        size = QFontInfo(self.font()).pixelSize()
+        return round(min(size * _HEADLINE, max(size * _LEAST_HEADLINE, self.width() / _ACROSS)))
 
     def _fill(self) -> None:
         if self._review is None:
@@ -86,7 +83,8 @@ class FindingsPane(QWidget):
         at = self._text.verticalScrollBar().value()
         told = findings_of(self._review)
         size = QFontInfo(self.font()).pixelSize()
-        parts = [f'<p style="font-size:{round(size * 1.5)}px; font-weight:bold;">{escape(told.headline)}</p>']
+        self._headline = self._headline_size()
+        parts = [f'<p style="font-size:{self._headline}px; font-weight:bold;">{escape(told.headline)}</p>']
         weighed = what_if_sentences(self._choices)
         for section in (*told.sections, *([Section(TITLE, weighed)] if weighed else [])):
             if section.title:

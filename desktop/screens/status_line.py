@@ -7,6 +7,7 @@ from PySide6.QtWidgets import QHBoxLayout, QLabel, QPushButton, QSizePolicy, QWi
 
 from desktop.errors import DayfenceError, StorageError
 from desktop.models.session import Session
+from desktop.screens.cut_label import CutLabel
 from desktop.wording.numbers import count
 from desktop.wording.problems import problem_sentence
 
@@ -26,7 +27,7 @@ class StatusLine(QWidget):
 
     def __init__(self, parent: QWidget | None = None) -> None:
         super().__init__(parent)
-        self.saved, self._counted, self.said, self._place = QLabel(), QLabel(), QLabel(), QLabel()
+        self.saved, self._counted, self.said, self._place = QLabel(), QLabel(), CutLabel(), CutLabel()
         self.saved.setAccessibleName("Saved")
         self.said.setAccessibleName("Message")
         self._place.setAccessibleName("Journal file")

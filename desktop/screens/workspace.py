@@ -4,11 +4,13 @@ from __future__ import annotations
 
 from PySide6.QtCore import QByteArray, Qt
 from PySide6.QtGui import QFont, QFontInfo, QResizeEvent
-from PySide6.QtWidgets import QHBoxLayout, QLabel, QSplitter, QVBoxLayout, QWidget
+from PySide6.QtWidgets import QHBoxLayout, QSplitter, QVBoxLayout, QWidget
 
 from desktop.models.session import Session
 from desktop.screens.caution_bar import CautionBar
+from desktop.screens.caution_line import CautionLine
 from desktop.screens.chart_pane import ChartPane
+from desktop.screens.cut_label import CutLabel
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.findings_pane import FindingsPane
 from desktop.screens.gap_bar import GapBar
@@ -35,7 +37,8 @@ class Workspace(QWidget):
         self.status = StatusLine()
         self.gap = GapBar()
         self.caution = CautionBar()
-        self._title, self._subtitle = QLabel(), QLabel()
+        self.caution_line = CautionLine()
+        self._title, self._subtitle = CutLabel(), CutLabel()
         top = QHBoxLayout()
         top.setContentsMargins(14, 8, 14, 6)
         top.setSpacing(14)
@@ -59,6 +62,7 @@ class Workspace(QWidget):
         layout.addWidget(self.caution)
         layout.addWidget(self.gap)
         layout.addWidget(self.panes, 1)
+        layout.addWidget(self.caution_line)
         layout.addWidget(self.status)
 
     def restore_panes(self, widths: QByteArray | None) -> None:
@@ -94,6 +98,7 @@ class Workspace(QWidget):
         """Say whose log and which measure it is, and how things stand."""
         measure = session.current
         self._title.setText(measure.title if measure else "No measure yet")
+        self._title.setToolTip(measure.title if measure else "")
         unit = measure.unit if measure else ""
         if measure is not None and unit and measure.kind in ("amount", "count"):
             unit = f"{unit} a {session.period or measure.period}"
@@ -112,3 +117,9 @@ class Workspace(QWidget):
         largest.setPixelSize(round(QFontInfo(face).pixelSize() * _TITLE_PART))
         largest.setBold(True)
         self._title.setFont(largest)
+        self.caution_line.set_face(face)
+
+    def set_dark(self, dark: bool) -> None:
+        """Take the colours of the theme."""
+        self.caution.set_dark(dark)
+        self.caution_line.set_dark(dark)

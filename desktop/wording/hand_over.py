@@ -9,7 +9,7 @@ from desktop.wording.days import full_day
 from desktop.wording.numbers import count
 
 STAYS = "The history, earlier copies, and every measure and day that is not listed stay here."
-SAME = "The journal's own mark, so that the copy is known as the same journal"
+SAME = "Let the copy be known as the same journal"
 NOT_SECRET = "The copy is an ordinary file: whoever has it can read it."
 
 

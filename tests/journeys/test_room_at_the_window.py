@@ -3,10 +3,12 @@
 from datetime import timedelta
 
 import pytest
+from PySide6.QtCore import Qt
 from PySide6.QtWidgets import QApplication
 
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person
 from desktop.storage.store import Store
+from desktop.wording.cautions import CAUTION
 
 DEFAULT, SMALL = (1360, 820), (1024, 640)
 TITLES = [("Walking", "minutes"), ("Upper pressure", "mmHg"), ("Lower pressure", "mmHg")]
@@ -60,3 +62,63 @@ def test_no_column_of_values_is_seen_in_part(person, opens, size, text):
     columns = [person.days.visualRect(person.days.model().index(0, place)) for place in range(3)]
     assert columns[0].right() <= room
     assert not [one for one in columns if one.left() < room - 1 and one.right() > room]
+
+
+def in_view(person) -> bool:
+    shown = person.days.visualRect(person.days.currentIndex())
+    return shown.isValid() and person.days.viewport().rect().contains(shown)
+
+
+def test_the_current_day_stays_in_view_when_the_window_or_the_text_change(person, opens):
+    window = opens(2, DEFAULT)
+    for size, text in ((SMALL, 100), (DEFAULT, 200), (SMALL, 200), (DEFAULT, 150), (SMALL, 100)):
+        window.resize(*size)
+        window._set_text_size(text)
+        settle()
+        assert in_view(person), (size, text)
+
+
+def test_rows_are_as_low_as_before_after_a_larger_text(person, opens):
+    window = opens(1, DEFAULT)
+    before = person.days.rowHeight(0), person.days.verticalHeader().width()
+    window._set_text_size(200)
+    settle()
+    assert person.days.rowHeight(0) > before[0]
+    window._set_text_size(100)
+    settle()
+    assert (person.days.rowHeight(0), person.days.verticalHeader().width()) == before
+
+
+def test_the_chart_keeps_room_in_a_small_window_with_large_text(person, opens):
+    window = opens(1, SMALL, 200)
+    person.qtbot.waitUntil(lambda: window.session.review is not None)
+    settle()
+    plot = window.workspace.chart_pane.chart.getViewBox().rect()
+    letter = person.days.fontInfo().pixelSize()
+    assert plot.width() >= window.width() * 0.16
+    assert plot.height() >= 7 * letter
+
+
+@pytest.mark.parametrize("text", [100, 150, 200])
+def test_the_caution_is_whole_and_takes_little_of_a_small_window(person, opens, text):
+    window = opens(1, SMALL, text)
+    line = window.workspace.caution_line
+    assert line.isVisible()
+    assert line.text() == CAUTION
+    assert line.height() >= line.heightForWidth(line.width())
+    assert line.height() < window.height() / 8
+    # 9 points of 96 to the inch are 12 pixels.
+    assert line.fontInfo().pixelSize() >= 12 * text / 100
+
+
+def test_a_long_title_is_cut_and_said_whole_elsewhere(person, opens, monkeypatch):
+    long = "Minutes of slow walking on the way home from the bus, as was suggested in spring"
+    monkeypatch.setattr(f"{__name__}.TITLES", [(long, "minutes")])
+    window = opens(1, SMALL)
+    assert window.width() == SMALL[0]
+    titles = [
+        person.days.model().headerData(0, Qt.Orientation.Horizontal, role)
+        for role in (Qt.ItemDataRole.DisplayRole, Qt.ItemDataRole.ToolTipRole, Qt.ItemDataRole.AccessibleTextRole)
+    ]
+    assert titles == ["Minutes\nof slow walki…\nminutes", long, long]
+    assert person.days.columnWidth(0) < SMALL[0] / 4

@@ -27,6 +27,7 @@ LOOKS: dict[str, tuple[ThemeName, int, tuple[int, int]]] = {
     "dark": ("dark", 100, (1360, 820)),
     "small": ("light", 100, (1024, 640)),
     "large text": ("light", 200, (1360, 820)),
+    "small and large": ("light", 200, (1024, 640)),
 }
 """Theme, size of text in 100, size of the window."""
 

@@ -6,7 +6,8 @@ from collections.abc import Sequence
 from typing import Any
 
 from analysis import Review, review
-from desktop.chart.picture import SHAPES, Picture, picture_of
+from desktop.chart.picture import picture_of
+from desktop.chart.pieces import SHAPES, Picture
 from desktop.journal.journal import Journal
 from desktop.journal.records import Change, Entry, Measure, Person, Span
 from tests.builders import day

@@ -18,7 +18,8 @@ from desktop.chart.painter import (
     paint_value_axis,
     value_axis_width,
 )
-from desktop.chart.picture import Picture, empty_picture
+from desktop.chart.picture import empty_picture
+from desktop.chart.pieces import Picture
 from desktop.chart.style import Style
 from desktop.journal.records import Span
 from desktop.screens.theme import CAUTION_INK

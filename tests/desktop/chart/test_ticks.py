@@ -84,3 +84,8 @@ def test_thousands_are_parted_and_halves_keep_their_digit():
 @pytest.mark.parametrize(("low", "high"), [(1, 1), (2, 1), (0, float("nan")), (0, float("inf"))])
 def test_a_range_that_is_none_has_no_value(low, high):
     assert value_ticks(low, high, 5) == []
+
+
+@pytest.mark.parametrize(("y0", "y1"), [(-0.9, 49.8), (0.2, 9.9), (101.0, 148.0)])
+def test_the_lowest_chart_has_two_numbers_to_read_a_scale_from(y0, y1):
+    assert len(value_ticks(y0, y1, 1)) >= 2

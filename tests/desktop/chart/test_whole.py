@@ -8,7 +8,7 @@ from PySide6.QtCore import QRectF
 from PySide6.QtGui import QImage, QPainter
 
 from desktop.chart.look import LIGHT
-from desktop.chart.picture import SHAPES, Picture
+from desktop.chart.pieces import SHAPES, Picture
 from desktop.chart.style import Style
 from desktop.chart.values import Places, paint_values
 from desktop.chart.whole import WHOLE, Parts, least_height, paint_chart, side_widths
