@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from math import ceil
 
 import numpy as np
@@ -9,7 +10,7 @@ from numpy.typing import NDArray
 from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
 from PySide6.QtGui import QBrush, QColor, QFontMetricsF, QPainter, QPen, QPolygonF
 
-from desktop.chart.pieces import SHAPES, Picture
+from desktop.chart.pieces import SHAPES, Picture, Shape
 from desktop.chart.style import Style
 from desktop.chart.values import Places, paint_values
 from desktop.wording.numbers import count
@@ -65,7 +66,7 @@ def paint_days(painter: QPainter, rect: QRectF, edges: _Edges, picture: Picture,
     for place, name in enumerate(SHAPES):
         chosen = told_apart & (marks.shape == place)
         if chosen.any():
-            _shapes(painter, name, x[chosen], y[chosen], marks.is_zero[chosen], radius, style)
+            draw_shapes(painter, name, x[chosen], y[chosen], marks.is_zero[chosen], radius, style)
     paint_values(painter, rect, picture, Places(x, y, radius), style)
 
 
@@ -95,17 +96,22 @@ def _middles(
     for which in np.unique(sides).tolist():
         of_side = sides == which
         columns = [row[of_side].tolist() for row in (places, low, middle, high)]
-        lines = [QLineF(place, top, place, foot) for place, top, _, foot in zip(*columns, strict=True)]
-        dots = QPolygonF([QPointF(place, at) for place, _, at, _ in zip(*columns, strict=True)])
-        ink = style.look.colour("after" if SHAPES[which] == "after" else "before")
-        faint = QColor(ink)
-        faint.setAlpha(110)
-        painter.setPen(QPen(faint, style.size / 7))
-        painter.drawLines(lines)
-        pen = QPen(ink, style.size / 3.6)
-        pen.setCapStyle(Qt.PenCapStyle.RoundCap if SHAPES[which] == "before" else Qt.PenCapStyle.SquareCap)
-        painter.setPen(pen)
-        painter.drawPoints(dots)
+        draw_middles(painter, list(zip(*columns, strict=True)), SHAPES[which], style)
+
+
+def draw_middles(
+    painter: QPainter, bars: Sequence[tuple[float, float, float, float]], shape: Shape, style: Style
+) -> None:
+    """Middles with their middle halves: for each its place across, one end, the middle, the other end."""
+    ink = style.look.colour("after" if shape == "after" else "before")
+    faint = QColor(ink)
+    faint.setAlpha(110)
+    painter.setPen(QPen(faint, style.size / 7))
+    painter.drawLines([QLineF(place, top, place, foot) for place, top, _, foot in bars])
+    pen = QPen(ink, style.size / 3.6)
+    pen.setCapStyle(Qt.PenCapStyle.RoundCap if shape == "before" else Qt.PenCapStyle.SquareCap)
+    painter.setPen(pen)
+    painter.drawPoints(QPolygonF([QPointF(place, at) for place, _, at, _ in bars]))
 
 
 def _say_what_they_are(painter: QPainter, rect: QRectF, weeks: int, beneath: int, style: Style) -> None:
@@ -140,7 +146,7 @@ def _joins(
             painter.drawPolyline(QPolygonF([QPointF(x[at], y[at]) for at in run]))
 
 
-def _shapes(
+def draw_shapes(
     painter: QPainter,
     name: str,
     x: NDArray[np.float64],

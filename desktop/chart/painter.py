@@ -224,9 +224,7 @@ def _bracket(painter: QPainter, top: float, frame: Frame, picture: Picture, styl
         return
     left = max(frame.x(picture.bracket.x0), frame.rect.left())
     right = min(max(frame.x(picture.bracket.x1), left + 2), frame.rect.right())
-    up, down = top + style.size * 0.15, top + style.size * 0.6
-    painter.setPen(QPen(style.look.colour("ink"), style.size / 9))
-    painter.drawPolyline([QPointF(left, up), QPointF(left, down), QPointF(right, down), QPointF(right, up)])
+    down = draw_bracket(painter, left, right, top, style)
     face = style.face(part=0.92)
     painter.setFont(face)
     metrics = QFontMetricsF(face)
@@ -238,6 +236,14 @@ def _bracket(painter: QPainter, top: float, frame: Frame, picture: Picture, styl
         return  # No room beside the bracket; the findings say it too.
     box = QRectF(begin, down - metrics.height() * 0.7, width + 2, metrics.height())
     painter.drawText(box, Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter, picture.bracket.text)
+
+
+def draw_bracket(painter: QPainter, left: float, right: float, top: float, style: Style) -> float:
+    """The bracket alone; returns the height of its foot."""
+    up, down = top + style.size * 0.15, top + style.size * 0.6
+    painter.setPen(QPen(style.look.colour("ink"), style.size / 9))
+    painter.drawPolyline([QPointF(left, up), QPointF(left, down), QPointF(right, down), QPointF(right, up)])
+    return down
 
 
 def _value_ticks(frame: Frame, style: Style) -> list[tuple[float, str]]:
@@ -279,17 +285,20 @@ def _bands(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> N
 def _levels(painter: QPainter, frame: Frame, lines: Iterable[Line], style: Style) -> None:
     # The medians come last: a fence at the same value must not hide one.
     for line in sorted(lines, key=lambda one: one.role == "median"):
-        if line.role == "median":
-            pen = QPen(style.side(line.side), style.size / 4.2)
-            pen.setCapStyle(Qt.PenCapStyle.FlatCap)
-            if line.side == "after":
-                # A second line style, so that the two medians differ without colour.
-                pen.setDashPattern([6.0, 0.7])
-        else:
-            dashes = Qt.PenStyle.DotLine if line.role == "fence" and line.side == "after" else _DASHES[line.role]
-            pen = QPen(style.side(line.side), style.size / 11, dashes)
-        painter.setPen(pen)
+        painter.setPen(level_pen(line, style))
         painter.drawLine(QLineF(frame.x(line.x0), frame.y(line.y), frame.x(line.x1), frame.y(line.y)))
+
+
+def level_pen(line: Line, style: Style) -> QPen:
+    """The line style of a level: by it, too, old and new, median and fence differ without colour."""
+    if line.role != "median":
+        dashes = Qt.PenStyle.DotLine if line.role == "fence" and line.side == "after" else _DASHES[line.role]
+        return QPen(style.side(line.side), style.size / 11, dashes)
+    pen = QPen(style.side(line.side), style.size / 4.2)
+    pen.setCapStyle(Qt.PenCapStyle.FlatCap)
+    if line.side == "after":
+        pen.setDashPattern([6.0, 0.7])
+    return pen
 
 
 def _edge_words(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from typing import Any
+from typing import Any, cast
 
 import numpy as np
 import pyqtgraph as pg
@@ -41,9 +41,11 @@ class Chart(pg.PlotWidget):
 
     Signals:
         day_read: the sentence of the day the keys or the mouse are on.
+        key_wanted: F1 was pressed here: what do the marks mean?
     """
 
     day_read = Signal(str)
+    key_wanted = Signal()
 
     def __init__(self, parent: QWidget | None = None) -> None:
         self._picture: Picture | None = None
@@ -109,6 +111,13 @@ class Chart(pg.PlotWidget):
         """Show ``factor`` times fewer days, around the middle."""
         self.getViewBox().scaleBy(x=1 / factor)
 
+    def event(self, event: QEvent) -> bool:
+        """F1 is the chart's here, not the window's."""
+        if event.type() == QEvent.Type.ShortcutOverride and cast(QKeyEvent, event).key() == Qt.Key.Key_F1:
+            event.accept()
+            return True
+        return bool(super().event(event))
+
     def keyPressEvent(self, event: QKeyEvent) -> None:
         """Zoom, move, and step from day to day."""
         with_control = bool(event.modifiers() & Qt.KeyboardModifier.ControlModifier)
@@ -117,6 +126,8 @@ class Chart(pg.PlotWidget):
                 self.zoom(_ZOOM)
             case Qt.Key.Key_Minus:
                 self.zoom(1 / _ZOOM)
+            case Qt.Key.Key_F1:
+                self.key_wanted.emit()
             case Qt.Key.Key_Home:
                 self.show_all()
             case Qt.Key.Key_Left | Qt.Key.Key_Right as key if with_control:

@@ -15,7 +15,7 @@ from PySide6.QtCore import QLineF, QRectF
 from desktop.chart.look import LIGHT
 from desktop.chart.pieces import Picture
 from desktop.chart.style import Style
-from desktop.chart.whole import WHOLE, Parts, least_height, side_widths
+from desktop.chart.whole import Parts, least_height, side_widths
 from desktop.page.content import PageContent, Row
 from desktop.page.table import tall_tables, wide_table
 from desktop.page.words import LINE, Face, Run, Words, plain_font, set_words, width_of
@@ -320,7 +320,7 @@ class _Layout:
     def _charts(self) -> list[Box]:
         charts = self.content.charts
         shares = len(charts) == 2 and charts[0].picture.lane == charts[1].picture.lane
-        parts = [Parts(days=False), Parts(lane=False)] if shares else [WHOLE] * len(charts)
+        parts = [Parts(days=False), Parts(lane=False, key=True)] if shares else [Parts(key=True)] * len(charts)
         boxes = []
         for place, (chart, around) in enumerate(zip(charts, parts, strict=True), start=1):
             words: list[Words] = []

@@ -11,7 +11,7 @@ from PySide6.QtWidgets import QMenu
 
 from analysis.log import PERIODS
 from desktop.edits.days import EmptyKind
-from desktop.screens.chart_pane import PERIOD_WORDS
+from desktop.screens.chart_pane import PERIOD_WORDS, show_key_of
 from desktop.screens.earlier_copies import show_earlier_copies
 from desktop.screens.erase_dialog import erase_for_good
 from desktop.screens.file_commands import keep_elsewhere, open_stranger, show_own_caseload
@@ -43,6 +43,7 @@ class Menus:
         self._fill_log(log)
         self._fill_view(view)
         _add(help_menu, "&Keys", partial(show_keys, window), Keys.HelpContents)
+        _add(help_menu, "&What the marks mean", partial(show_key_of, window.workspace.chart_pane))
         _add(help_menu, "How often is it &wrong?", partial(show_how_often_wrong, window))
         _add(help_menu, "&About Dayfence", partial(show_about, window))
 

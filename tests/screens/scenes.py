@@ -50,6 +50,7 @@ COMMANDS: tuple[tuple[str, ...], ...] = (
     ("File", "A copy to hand over…"),
     ("File", "Erase for good…"),
     ("Help", "Keys"),
+    ("Help", "What the marks mean"),
     ("Help", "How often is it wrong?"),
     ("Help", "About Dayfence"),
 )
