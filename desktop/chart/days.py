@@ -11,8 +11,9 @@ from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
 from PySide6.QtGui import QBrush, QColor, QFontMetricsF, QPainter, QPen, QPolygonF
 
 from desktop.chart.pieces import SHAPES, Picture, Shape
+from desktop.chart.places import Places, along
 from desktop.chart.style import Style
-from desktop.chart.values import Places, paint_values
+from desktop.chart.values import paint_values
 from desktop.wording.numbers import count
 
 _LEAST_JOINED = 7
@@ -30,44 +31,77 @@ _AMONG_MIDDLES = 5
 
 _WEEK = 7
 
-_Edges = tuple[float, float, float, float]
+_TRIANGLE = 1.55
+"""A mark outside the fences is so many times as large."""
+
+Edges = tuple[float, float, float, float]
 
 
-def paint_days(painter: QPainter, rect: QRectF, edges: _Edges, picture: Picture, style: Style) -> None:
-    """Draw the observations of a picture.
+def places_of(rect: QRectF, edges: Edges, picture: Picture, style: Style) -> Places:
+    """Where the days of a picture are drawn.
+
+    Args:
+        rect: the plot.
+        edges: the first and last day, the lowest and highest value that fill it.
+        picture: with the marks.
+        style: with the type.
+    """
+    marks = picture.marks
+    x0, x1, y0, y1 = edges
+    x = rect.left() + (marks.x - x0) / (x1 - x0) * rect.width()
+    y = rect.bottom() - (marks.y - y0) / (y1 - y0) * rect.height()
+    one = _room_of_one(rect, edges, picture)
+    radius = min(max(one * 0.4, style.size / 11), style.size / 3.1)
+    if _is_crowded(one, picture, style):
+        radius = style.size / _AMONG_MIDDLES
+    outside = np.isin(marks.shape, [SHAPES.index("above"), SHAPES.index("below")])
+    return Places(x, y, np.where(outside, radius * _TRIANGLE, radius), radius)
+
+
+def paint_days(
+    painter: QPainter, rect: QRectF, edges: Edges, picture: Picture, places: Places, style: Style
+) -> None:
+    """Draw the observations of a picture; its words keep off the marks and off the words that stand there.
 
     Args:
         painter: draws in the units of ``rect``.
         rect: the plot.
         edges: the first and last day, the lowest and highest value that fill it.
         picture: with the marks.
+        places: of its marks and words.
         style: inks and type.
     """
-    marks = picture.marks
-    x0, x1, y0, y1 = edges
+    marks, x, y = picture.marks, places.x, places.y
+    x0, x1 = edges[:2]
     seen = (marks.x >= x0 - 1) & (marks.x <= x1 + 1)
     if not seen.any():
         return
-    x = rect.left() + (marks.x - x0) / (x1 - x0) * rect.width()
-    y = rect.bottom() - (marks.y - y0) / (y1 - y0) * rect.height()
-    one = rect.width() / max(int(seen.sum()), 1)
-    radius = min(max(one * 0.4, style.size / 11), style.size / 3.1)
+    one = _room_of_one(rect, edges, picture)
     told_apart = seen
-    if one < style.size / _LEAST_EACH and picture.period == "day":
+    if _is_crowded(one, picture, style):
         weeks = ceil(style.size / _LEAST_MIDDLE / (rect.width() / (x1 - x0) * _WEEK))
         plain = seen & np.isin(marks.shape, [SHAPES.index("before"), SHAPES.index("after")])
         _middles(painter, marks.x, x, y, plain, marks.shape, weeks, style)
-        beneath = sum(edge == "above" for edge, _ in picture.edge_words)
-        _say_what_they_are(painter, rect, weeks, beneath, style)
+        _say_what_they_are(painter, rect, weeks, places, style)
         told_apart = seen & ~plain
-        radius = style.size / _AMONG_MIDDLES
     elif one >= style.size / _LEAST_JOINED:
         _joins(painter, x, y, marks.joined, seen, style)
     for place, name in enumerate(SHAPES):
         chosen = told_apart & (marks.shape == place)
         if chosen.any():
-            draw_shapes(painter, name, x[chosen], y[chosen], marks.is_zero[chosen], radius, style)
-    paint_values(painter, rect, picture, Places(x, y, radius), style)
+            draw_shapes(painter, name, x[chosen], y[chosen], marks.is_zero[chosen], places.radius, style)
+    paint_values(painter, rect, picture, places, style)
+
+
+def _room_of_one(rect: QRectF, edges: Edges, picture: Picture) -> float:
+    """The width that each mark in view has."""
+    x0, x1 = edges[:2]
+    seen = (picture.marks.x >= x0 - 1) & (picture.marks.x <= x1 + 1)
+    return rect.width() / max(int(seen.sum()), 1)
+
+
+def _is_crowded(one: float, picture: Picture, style: Style) -> bool:
+    return one < style.size / _LEAST_EACH and picture.period == "day"
 
 
 def _middles(
@@ -114,18 +148,21 @@ def draw_middles(
     painter.drawPoints(QPolygonF([QPointF(place, at) for place, _, at, _ in bars]))
 
 
-def _say_what_they_are(painter: QPainter, rect: QRectF, weeks: int, beneath: int, style: Style) -> None:
-    """In the upper corner, beneath so many lines of words about fences."""
+def _say_what_they_are(painter: QPainter, rect: QRectF, weeks: int, places: Places, style: Style) -> None:
+    """In a free place at the upper edge, else at the lower one; the key says it too."""
     face = style.face(italic=True, part=0.85)
     metrics = QFontMetricsF(face)
-    painter.setFont(face)
-    painter.setPen(style.look.colour("quiet"))
     span = "a week" if weeks == 1 else count(weeks, "week")
     words = f"each mark: the middle of {span}, its bar the middle half"
-    top = rect.top() + 2 + beneath * metrics.height()
-    box = QRectF(rect.left() + style.size * 0.5, top, rect.width() - style.size, metrics.height())
-    words = metrics.elidedText(words, Qt.TextElideMode.ElideRight, box.width())
-    painter.drawText(box, Qt.AlignmentFlag.AlignLeft, words)
+    width, height = metrics.horizontalAdvance(words) + 2, metrics.height()
+    inside = rect.adjusted(style.size * 0.5, 2, -style.size * 0.5, -2)
+    for top in (inside.top(), inside.top() + height, inside.bottom() - height):
+        box = places.take_first(along(inside, width, height, top, from_right=False), inside)
+        if box is not None:
+            painter.setFont(face)
+            painter.setPen(style.look.colour("quiet"))
+            painter.drawText(box, Qt.AlignmentFlag.AlignLeft, words)
+            return
 
 
 def _joins(
@@ -175,7 +212,7 @@ def draw_shapes(
                 side = radius * (1.3 if zero else 1.8)
                 painter.drawRect(QRectF(at_x - side / 2, at_y - side / 2, side, side))
             case "above" | "below":
-                _triangle(painter, at_x, at_y, radius * 1.55, up=name == "above", hollow=zero, style=style)
+                _triangle(painter, at_x, at_y, radius * _TRIANGLE, up=name == "above", hollow=zero, style=style)
             case "set aside":
                 painter.setPen(QPen(look.colour("ink"), thin))
                 for lean in (-radius, radius):

@@ -7,12 +7,14 @@ from __future__ import annotations
 
 from collections.abc import Iterable
 from dataclasses import dataclass
+from itertools import product
 
 from PySide6.QtCore import QLineF, QPointF, QRectF, Qt
 from PySide6.QtGui import QBrush, QFont, QFontMetricsF, QPainter, QPen
 
-from desktop.chart.days import paint_days
+from desktop.chart.days import paint_days, places_of
 from desktop.chart.pieces import EndLabel, LanePart, Line, Picture
+from desktop.chart.places import Places, along
 from desktop.chart.style import Style
 from desktop.chart.ticks import day_ticks, value_ticks
 
@@ -31,6 +33,9 @@ BELOW_LINES_SHORT = 2.3
 _BRACKET = 0.7
 _MOST_FOR_NAMES = 0.25
 """The most of a chart's width for the names of its levels."""
+
+_EDGE_ROWS = 3
+"""Lines from an edge of the plot in which words about a fence may stand."""
 
 _TICK_STRIP = 0.7
 _FIRST_NAME = 0.6
@@ -79,8 +84,10 @@ def paint_plot(painter: QPainter, frame: Frame, picture: Picture, style: Style) 
     painter.setPen(QPen(style.look.colour("ink"), style.size / 9))
     for day in picture.uprights:
         painter.drawLine(QLineF(frame.x(day), frame.rect.top(), frame.x(day), frame.rect.bottom()))
-    paint_days(painter, frame.rect, (frame.x0, frame.x1, frame.y0, frame.y1), picture, style)
-    _edge_words(painter, frame, picture, style)
+    edges = (frame.x0, frame.x1, frame.y0, frame.y1)
+    places = places_of(frame.rect, edges, picture, style)
+    _edge_words(painter, frame, picture, places, style)
+    paint_days(painter, frame.rect, edges, picture, places, style)
     painter.restore()
 
 
@@ -91,13 +98,18 @@ def paint_lane(painter: QPainter, rect: QRectF, frame: Frame, picture: Picture, 
     painter.fillRect(rect, style.look.colour("lane"))
     spans = [part for part in picture.lane if part.kind == "span"]
     named: list[tuple[float, float]] = []
+    newest = _before_its_line(picture, frame, style)
     for part in picture.lane:
         if part.kind in ("stretch", "change"):
             room = _lane_room(part, spans, frame)
             bold = part.kind == "change"
             painter.setPen(style.look.colour("ink" if bold else "quiet"))
             left = frame.x(part.x0)
-            named.append((left, _fitted(painter, rect, frame, left, room, part.text, style.face(bold=bold))))
+            if newest is not None and part is newest[0]:
+                _fitted(painter, rect, frame, newest[1], left, part.text, style.face(bold=True))
+            else:
+                room = min(room, newest[1]) if newest is not None else room
+                named.append((left, _fitted(painter, rect, frame, left, room, part.text, style.face(bold=bold))))
             if bold:
                 painter.setPen(QPen(style.look.colour("ink"), style.size / 9))
                 painter.drawLine(QLineF(frame.x(part.x0), rect.top(), frame.x(part.x0), rect.bottom()))
@@ -301,17 +313,41 @@ def level_pen(line: Line, style: Style) -> QPen:
     return pen
 
 
-def _edge_words(painter: QPainter, frame: Frame, picture: Picture, style: Style) -> None:
+def _edge_words(painter: QPainter, frame: Frame, picture: Picture, places: Places, style: Style) -> None:
+    """Fences beyond the picture, in words at its edges where no mark is; said shorter where room is short."""
     face = style.face(part=0.85)
     metrics = QFontMetricsF(face)
     painter.setFont(face)
-    heights = {"above": frame.rect.top() + 2, "below": frame.rect.bottom() - metrics.height() - 2}
+    height = metrics.height()
+    inside = frame.rect.adjusted(0, 2, -style.size * 0.6, -2)
     for edge, text in picture.edge_words:
-        painter.setPen(style.side("after" if text.startswith("own") else "before"))
-        box = QRectF(frame.rect.left(), heights[edge], frame.rect.width() - style.size * 0.6, metrics.height())
-        words = metrics.elidedText(text, Qt.TextElideMode.ElideRight, box.width())
-        painter.drawText(box, Qt.AlignmentFlag.AlignRight, words)
-        heights[edge] += metrics.height() if edge == "above" else -metrics.height()
+        rows = [inside.top() + height * row for row in range(_EDGE_ROWS)]
+        if edge == "below":
+            rows = [inside.bottom() - height * (row + 1) for row in range(_EDGE_ROWS)]
+        for words, top in product((text, text.partition(",")[0]), rows):
+            width = metrics.horizontalAdvance(words) + 1
+            box = places.take_first(along(inside, width, height, top, from_right=True), inside)
+            if box is not None:
+                painter.setPen(style.side("after" if text.startswith("own") else "before"))
+                painter.drawText(box, Qt.AlignmentFlag.AlignRight | Qt.TextFlag.TextDontClip, words)
+                break
+
+
+def _before_its_line(picture: Picture, frame: Frame, style: Style) -> tuple[LanePart, float] | None:
+    """A change so new that its name has no room after its line: it ends there, and begins at this place."""
+    changes = [part for part in picture.lane if part.kind == "change"]
+    if not changes:
+        return None
+    last = changes[-1]
+    metrics = QFontMetricsF(style.face(bold=True))
+    wanted = metrics.horizontalAdvance(last.text) + 3 * metrics.averageCharWidth()
+    line, edge = frame.x(last.x0), frame.x(last.x1)
+    room = min(edge, frame.rect.right()) - line
+    since = [frame.x(part.x0) for part in changes[:-1]]
+    before = line - max([frame.rect.left(), *since])
+    if not frame.rect.left() < line <= frame.rect.right() or room >= wanted or room >= before:
+        return None
+    return last, max(line - wanted, line - before)
 
 
 def _lane_room(part: LanePart, spans: Iterable[LanePart], frame: Frame) -> float:

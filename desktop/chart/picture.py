@@ -45,6 +45,9 @@ _EDGE_ROOM = 0.09
 
 _MOST_LABELS = 40
 
+_SOON = 7
+"""A change not further beyond the last day than so many days is on the chart."""
+
 
 def picture_of(review: Review, journal: Journal, measure: int) -> Picture:
     """The picture of a review.
@@ -80,6 +83,13 @@ class _Composer:
         self.stretches = review.stretches
         self.last_day = float(self.points.last[-1]) + 0.5
         self.first_day = float(self.points.first[0]) - 0.5
+        # Marked, and no day followed yet: it is to be seen at once, beyond the last day.
+        ends = float(self.points.last[-1])
+        self.next_changes = [
+            one.day.toordinal()
+            for one in journal.changes_of(measure)
+            if ends < one.day.toordinal() <= ends + _SOON and self.points.period == "day"
+        ]
 
     def compose(self) -> Picture:
         marks = self._marks()
@@ -92,7 +102,7 @@ class _Composer:
         return Picture(
             period=self.points.period,
             x0=self.first_day,
-            x1=self.last_day,
+            x1=max([self.last_day, *(one + 0.5 for one in self.next_changes)]),
             y0=low,
             y1=high,
             axis_words=self._axis_words(),
@@ -101,7 +111,10 @@ class _Composer:
             lines=tuple(lines),
             end_labels=tuple(labels),
             lane=tuple(self._lane()),
-            uprights=tuple(one.change - 0.5 for one in self.stretches if one.change is not None),
+            uprights=tuple(
+                one - 0.5
+                for one in (*(one.change for one in self.stretches if one.change is not None), *self.next_changes)
+            ),
             ticks=tuple(self._ticks()),
             bracket=self._bracket(),
             edge_words=tuple(edge_words),
@@ -262,6 +275,10 @@ class _Composer:
             if stretch.change is not None and stretch.first > stretch.change:
                 yield LanePart(begins, min(x0, self.last_day), "settling in", "settling in")
             yield LanePart(begins, max(x1, begins), stretch.label or "after", "change")
+        for change in self.journal.changes_of(self.measure):
+            day = change.day.toordinal()
+            if day in self.next_changes:
+                yield LanePart(day - 0.5, day + 0.5, change.label or "after", "change")
         for span in self.journal.spans_of(self.measure):
             yield LanePart(
                 span.first.toordinal() - 0.5, span.last.toordinal() + 0.5, span.label or span.kind, "span"

@@ -2,65 +2,45 @@
 
 from __future__ import annotations
 
-from dataclasses import dataclass
+from collections.abc import Iterable
 
 import numpy as np
-from numpy.typing import NDArray
 from PySide6.QtCore import QRectF, Qt
 from PySide6.QtGui import QFontMetricsF, QPainter
 
 from desktop.chart.pieces import SHAPES, Picture
+from desktop.chart.places import Places
 from desktop.chart.style import Style
 
 
-@dataclass(frozen=True, eq=False)
-class Places:
-    """Where the marks are drawn, arrays of shape (k,), and how large."""
-
-    x: NDArray[np.float64]
-    y: NDArray[np.float64]
-    radius: float
-
-
 def paint_values(painter: QPainter, plot: QRectF, picture: Picture, places: Places, style: Style) -> None:
-    """Write each value beside its mark; one that would touch another value or mark is left to its mark."""
+    """Write each value beside its mark; one that would touch a word or another mark is left to its mark."""
     if not picture.marks.labels:
         return
     face = style.face(bold=True, part=0.92)
     metrics = QFontMetricsF(face)
     painter.setFont(face)
     painter.setPen(style.look.colour("ink"))
-    taken: list[QRectF] = []
     # The farthest days first: where room is short, they keep their numbers.
     middle = float(np.median(places.y))
     for place in sorted(picture.marks.labels, key=lambda at: -abs(float(places.y[at]) - middle)):
+        if not plot.left() <= places.x[place] <= plot.right():
+            continue
         text = picture.marks.labels[place]
         width, height = metrics.horizontalAdvance(text) + 2, metrics.height() * 0.85
-        above, below = _beside(place, width, height, plot, places)
         is_high = SHAPES[int(picture.marks.shape[place])] == "above"
-        box = above if is_high else below
-        if not plot.contains(box):
-            box = below if is_high else above
-        if any(box.intersects(other) for other in taken) or _covers_a_mark(box, place, places):
-            continue
-        taken.append(box)
-        painter.drawText(box, Qt.AlignmentFlag.AlignCenter | Qt.TextFlag.TextDontClip, text)
+        box = places.take_first(_beside(place, width, height, plot, places, is_high=is_high), plot, place)
+        if box is not None:
+            painter.drawText(box, Qt.AlignmentFlag.AlignCenter | Qt.TextFlag.TextDontClip, text)
 
 
-def _beside(place: int, width: float, height: float, plot: QRectF, places: Places) -> tuple[QRectF, QRectF]:
-    """The boxes above and below a mark, moved inside the plot at its sides."""
-    x, y, away = float(places.x[place]), float(places.y[place]), places.radius * 1.9
+def _beside(
+    place: int, width: float, height: float, plot: QRectF, places: Places, *, is_high: bool
+) -> Iterable[QRectF]:
+    """The boxes beyond a mark, on its other side, and right and left of it; moved inside the plot at its sides."""
+    x, y, away = float(places.x[place]), float(places.y[place]), float(places.half[place]) * 1.2
     left = min(max(x - width / 2, plot.left()), plot.right() - width)
-    return QRectF(left, y - away - height, width, height), QRectF(left, y + away, width, height)
-
-
-def _covers_a_mark(box: QRectF, own: int, places: Places) -> bool:
-    room = places.radius * 0.6
-    inside = (
-        (places.x > box.left() - room)
-        & (places.x < box.right() + room)
-        & (places.y > box.top() - room)
-        & (places.y < box.bottom() + room)
-    )
-    inside[own] = False
-    return bool(inside.any())
+    above, below = QRectF(left, y - away - height, width, height), QRectF(left, y + away, width, height)
+    yield from (above, below) if is_high else (below, above)
+    yield QRectF(x + away, y - height / 2, width, height)
+    yield QRectF(x - away - width, y - height / 2, width, height)

@@ -12,11 +12,11 @@ from PySide6.QtGui import QColor, QFont
 from desktop.edits.days import EmptyKind, PastedValue, clear, paste_values, put_value, set_kind, write_note
 from desktop.edits.edit import DayCell
 from desktop.exchange.number_tokens import NumberToken, Refusal, read_number, read_typed
-from desktop.journal.records import DayNote, Entry, Measure
+from desktop.journal.records import Change, DayNote, Entry, Measure
 from desktop.journal.row_change import RowChange
 from desktop.models.session import Session
 from desktop.wording.days import long_day, short_day
-from desktop.wording.entry import KIND_WORDS, cell_text, refusal_sentence, spoken_cell
+from desktop.wording.entry import KIND_WORDS, cell_text, refusal_sentence, spoken_cell, with_changes
 
 Index = QModelIndex | QPersistentModelIndex
 
@@ -66,10 +66,12 @@ class DaysTable(QAbstractTableModel):
         self._unread: dict[DayCell, Unread] = {}
         self._measures: list[Measure] = []
         self._written: dict[int, tuple[date, date]] = {}
+        self._changes: dict[date, list[Change]] = {}
         self._first = session.today
         self._rows = 0
         self.quiet_colour = QColor(110, 110, 110)
         self._lay_out(session.today - timedelta(DAYS_BEFORE_TODAY))
+        self._find_changes()
         session.edited.connect(self._follow)
 
     @property
@@ -134,12 +136,13 @@ class DaysTable(QAbstractTableModel):
             return self._title(section, role)
         day = self.day(section)
         is_today = day == self._session.today
+        changes = self._changes.get(day, [])
         match role:
             case Qt.ItemDataRole.DisplayRole:
                 return "today" if is_today else short_day(day)
             case Qt.ItemDataRole.ToolTipRole | Qt.ItemDataRole.AccessibleTextRole:
-                return long_day(day)
-            case Qt.ItemDataRole.FontRole if is_today:
+                return with_changes(long_day(day), changes)
+            case Qt.ItemDataRole.FontRole if is_today or changes:
                 return _font(bold=True)
             case Qt.ItemDataRole.ForegroundRole if day.weekday() >= 5 and not is_today:
                 return self.quiet_colour
@@ -163,9 +166,10 @@ class DaysTable(QAbstractTableModel):
             case Qt.ItemDataRole.EditRole:
                 return _edit_text(entry)
             case Qt.ItemDataRole.AccessibleTextRole:
-                return spoken_cell(measure, entry, day)
+                return with_changes(spoken_cell(measure, entry, day), self._changes_of(day, measure))
             case Qt.ItemDataRole.ToolTipRole:
-                return entry.note or KIND_WORDS.get(entry.kind) if entry else None
+                said = entry.note or KIND_WORDS[entry.kind] if entry else ""
+                return with_changes(said, self._changes_of(day, measure)) or None
             case Qt.ItemDataRole.TextAlignmentRole:
                 return Qt.AlignmentFlag.AlignRight | Qt.AlignmentFlag.AlignVCenter
             case Qt.ItemDataRole.ForegroundRole if entry is None or entry.value is None:
@@ -315,6 +319,8 @@ class DaysTable(QAbstractTableModel):
         records = [change.record for change in changes]
         self._written.clear()
         days = [record.day for record in records if isinstance(record, Entry | DayNote)]
+        if not changes or any(isinstance(record, Change) for record in records):
+            self._find_changes()
         may_be_others = not changes or any(isinstance(record, Measure) for record in records)
         if may_be_others or (days and not self._holds(min(days), max(days))):
             self.beginResetModel()
@@ -323,6 +329,19 @@ class DaysTable(QAbstractTableModel):
         elif days:
             last_column = self.columnCount() - 1
             self.dataChanged.emit(self.index(self.row(min(days)), 0), self.index(self.row(max(days)), last_column))
+
+    def _changes_of(self, day: date, measure: Measure) -> list[Change]:
+        """The changes of a day that concern a measure."""
+        return [one for one in self._changes.get(day, []) if not one.measures or measure.id in one.measures]
+
+    def _find_changes(self) -> None:
+        """Keep the changes by their day, and show their marks."""
+        self._changes.clear()
+        for change in self._session.journal.changes.values():
+            self._changes.setdefault(change.day, []).append(change)
+        if self._rows:
+            self.dataChanged.emit(self.index(0, 0), self.index(self._rows - 1, self.columnCount() - 1))
+            self.headerDataChanged.emit(Qt.Orientation.Vertical, 0, self._rows - 1)
 
     def _holds(self, first: date, last: date) -> bool:
         return self.row(first) >= 0 and self.row(last) < self._rows
@@ -355,14 +374,20 @@ class DaysTable(QAbstractTableModel):
         return None
 
     def _note_data(self, day: date, role: int) -> object:
-        note = self._session.journal.note(day)
+        note, changes = self._session.journal.note(day), self._changes.get(day, [])
         match role:
-            case Qt.ItemDataRole.DisplayRole | Qt.ItemDataRole.EditRole:
+            case Qt.ItemDataRole.DisplayRole:
+                return note or with_changes("", changes)
+            case Qt.ItemDataRole.EditRole:
                 return note
             case Qt.ItemDataRole.ToolTipRole:
-                return note or None
+                return with_changes(note, changes) or None
             case Qt.ItemDataRole.AccessibleTextRole:
-                return f"{long_day(day)}: note, {note or 'none'}"
+                return with_changes(f"{long_day(day)}: note, {note or 'none'}", changes)
+            case Qt.ItemDataRole.ForegroundRole if changes and not note:
+                return self.quiet_colour
+            case Qt.ItemDataRole.FontRole if changes and not note:
+                return _font(italic=True)
         return None
 
     def _unread_data(self, unread: Unread, role: int) -> object:

@@ -5,7 +5,7 @@ from __future__ import annotations
 from datetime import date
 
 from analysis.log import DayKind
-from desktop.journal.records import Entry, Measure
+from desktop.journal.records import Change, Entry, Measure
 from desktop.wording.days import long_day, short_day
 from desktop.wording.numbers import plain
 
@@ -68,6 +68,12 @@ def spoken_cell(measure: Measure, entry: Entry | None, day: date) -> str:
         return f"{name}: {kind}"
     said = f"{number_text(measure, entry.value)} {measure.unit}".strip()
     return f"{name}: {said}, {kind}" if kind else f"{name}: {said}"
+
+
+def with_changes(said: str, changes: list[Change]) -> str:
+    """A cell's words, and after them the changes that begin on its day."""
+    marked = [f"change: {change.label}" if change.label else "change" for change in changes]
+    return "; ".join([*([said] if said else []), *marked])
 
 
 def unread_sentence(unread: list[tuple[date, str]]) -> str:

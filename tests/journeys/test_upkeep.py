@@ -7,7 +7,7 @@ from PySide6.QtCore import Qt
 from PySide6.QtTest import QTest
 from PySide6.QtWidgets import QApplication, QDialogButtonBox, QMessageBox
 
-from tests.journeys.test_first_four_weeks import AFTER, BEFORE, CHANGE, FIRST, starts_a_log
+from tests.journeys.test_first_four_weeks import AFTER, BEFORE, CHANGE, FIRST, marks_the_change, starts_a_log
 
 WEIGHT = 4
 """Its row among the ready-made measures."""
@@ -248,3 +248,29 @@ def test_other_choices_of_days_are_told_a_moment_after_the_answer(person):
     person.goes_to(FIRST)
     person.types("22⏎")
     assert "Would another choice" not in window.workspace.findings.text
+
+
+def test_a_change_is_marked_in_the_table_in_words_and_goes_when_it_is_taken_back(person):
+    person.starts_the_program()
+    starts_a_log(person)
+    types_days(person, BEFORE)
+    person.goes_to(CHANGE)
+    marks_the_change(person, "off the bus one stop early")
+    days = person.days.days
+    row = days.row(CHANGE)
+    said = "change: off the bus one stop early"
+    tip, spoken = Qt.ItemDataRole.ToolTipRole, Qt.ItemDataRole.AccessibleTextRole
+    assert days.index(row, 1).data() == said
+    assert days.index(row, 1).data(Qt.ItemDataRole.EditRole) == ""
+    for told in (
+        days.index(row, 0).data(tip),
+        days.index(row, 0).data(spoken),
+        days.headerData(row, Qt.Orientation.Vertical, tip),
+        days.headerData(row, Qt.Orientation.Vertical, spoken),
+    ):
+        assert told.endswith(said)
+    assert days.headerData(row, Qt.Orientation.Vertical, Qt.ItemDataRole.FontRole).bold()
+    assert days.index(row - 1, 1).data() == ""
+    person.holds_control_and_presses(Qt.Key.Key_Z)
+    assert days.index(row, 1).data() == ""
+    assert days.index(row, 0).data(tip) is None

@@ -7,7 +7,7 @@ import pytest
 from PySide6.QtCore import QRectF
 from PySide6.QtGui import QFont
 
-from desktop.chart.days import paint_days
+from desktop.chart.days import paint_days, places_of
 from desktop.chart.look import LIGHT
 from desktop.chart.style import Style
 from tests.desktop.chart.pictures import drawn
@@ -33,7 +33,8 @@ def _application(qapp):
 def noted(picture, x0=None, x1=None):
     painter = Noting()
     edges = (picture.x0 if x0 is None else x0, picture.x1 if x1 is None else x1, picture.y0, picture.y1)
-    paint_days(painter, RECT, edges, picture, Style(LIGHT, QFont(), 14))
+    style = Style(LIGHT, QFont(), 14)
+    paint_days(painter, RECT, edges, picture, places_of(RECT, edges, picture, style), style)
     return painter.drawn
 
 

@@ -192,3 +192,70 @@ def test_the_two_sides_differ_in_grey_too_by_shape_and_line_alone():
     picture = drawn(LOW + HIGH, 14)
     assert {line.side for line in picture.lines} == {"before", "after"}
     assert len(set(picture.marks.shape.tolist())) >= 3
+
+
+class Writing(QPainter):
+    """A painter that remembers which words it wrote where."""
+
+    def __init__(self, image):
+        super().__init__(image)
+        self.words = []
+
+    def drawText(self, box, flags, words):
+        super().drawText(box, flags, words)
+        self.words.append((words, self.boundingRect(box, int(flags), words)))
+
+
+@pytest.mark.parametrize(("width", "height"), [(240, 160), (420, 300), (900, 500)])
+@pytest.mark.parametrize(
+    "name", ["many outside", "fences beyond", "ten years", "a thousand million", "days in line"]
+)
+def test_no_word_of_the_plot_lies_over_a_mark_or_another_word(name, width, height):
+    more = {"days in line": lambda: drawn([*LOW, *[90 + place % 3 for place in range(30)], 20], 14)}
+    picture = (PICTURES | more)[name]()
+    image = QImage(width, height, QImage.Format.Format_RGB32)
+    image.fill(QColor("#ffffff"))
+    frame = Frame(QRectF(0, 0, width, height), picture.x0, picture.x1, picture.y0, picture.y1)
+    painter = Writing(image)
+    paint_plot(painter, frame, picture, Style(LIGHT, QFont(), 13))
+    painter.end()
+    marks = [(frame.x(x), frame.y(y)) for x, y in zip(picture.marks.x, picture.marks.y, strict=True)]
+    over = [(words, at) for words, box in painter.words for at in marks if box.contains(*at)]
+    both = [
+        (one, other)
+        for place, (one, box) in enumerate(painter.words)
+        for other, other_box in painter.words[:place]
+        if box.intersects(other_box)
+    ]
+    assert (over, both) == ([], [])
+    if name in ("many outside", "fences beyond") and width > 400:
+        assert painter.words
+
+
+def lane_words(picture, width=500):
+    image = QImage(width, 30, QImage.Format.Format_RGB32)
+    painter = Writing(image)
+    frame = Frame(QRectF(0, 0, width, 200), picture.x0, picture.x1, picture.y0, picture.y1)
+    paint_lane(painter, QRectF(0, 0, width, 26), frame, picture, Style(LIGHT, QFont(), 13))
+    painter.end()
+    return frame, dict(painter.words)
+
+
+@pytest.mark.parametrize("days_after", [0, 1, 2])
+def test_the_name_of_a_new_change_is_written_before_any_day_follows(days_after):
+    picture = drawn(LOW + HIGH[:days_after], 14)
+    assert number(14) - 0.5 in picture.uprights
+    assert picture.x1 >= number(14) + 0.5
+    frame, words = lane_words(picture)
+    box = words["off the bus one stop early"]
+    assert box.right() <= frame.x(number(14) - 0.5) + 1
+    assert all(other.right() <= box.left() for text, other in words.items() if other is not box)
+
+
+def test_the_name_of_a_change_with_room_stands_after_its_line():
+    frame, words = lane_words(drawn(LOW + HIGH, 14))
+    assert words["off the bus one stop early"].left() >= frame.x(number(14) - 0.5)
+
+
+def test_a_change_far_ahead_does_not_stretch_the_chart():
+    assert drawn(LOW, 40).uprights == ()

@@ -9,8 +9,9 @@ from PySide6.QtGui import QImage, QPainter
 
 from desktop.chart.look import LIGHT
 from desktop.chart.pieces import SHAPES, Picture
+from desktop.chart.places import Places
 from desktop.chart.style import Style
-from desktop.chart.values import Places, paint_values
+from desktop.chart.values import paint_values
 from desktop.chart.whole import WHOLE, Parts, least_height, paint_chart, side_widths
 from desktop.faces import load_faces
 from desktop.page.words import plain_font
@@ -69,7 +70,7 @@ def values_written(picture: Picture, x: list[float], y: list[float], plot: QRect
     found: list[object] = []
     image = QImage(400, 300, QImage.Format.Format_RGB32)
     with Counting(image) as painter:
-        paint_values(painter, plot, picture, Places(np.array(x), np.array(y), 3.0), style())
+        paint_values(painter, plot, picture, Places(np.array(x), np.array(y), np.full(len(x), 3.0), 3.0), style())
     return len(found)
 
 
@@ -80,9 +81,13 @@ def test_a_value_that_would_touch_another_mark_is_left_to_its_own():
     apart = [20.0 * place for place in range(16)]
     low = [200.0] * 16
     assert values_written(picture, apart, [*low[:14], 100.0, 200.0], plot) == 1
-    # Another mark stands where the value would be.
+    # Another mark stands where the value would be: it stands on another side.
     crowded = [*apart[:15], apart[14]]
-    assert values_written(picture, crowded, [*low[:14], 100.0, 88.0], plot) == 0
+    assert values_written(picture, crowded, [*low[:14], 100.0, 88.0], plot) == 1
+    # Marks on every side.
+    at = apart[14]
+    around = [*apart[:11], at - 10, at + 10, at, at, at]
+    assert values_written(picture, around, [*low[:11], 100.0, 100.0, 88.0, 100.0, 112.0], plot) == 0
 
 
 def test_a_value_without_room_above_stands_below_its_mark():
