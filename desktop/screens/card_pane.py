@@ -11,7 +11,7 @@ from PySide6.QtWidgets import QFrame, QLabel, QPushButton, QScrollArea, QSizePol
 from desktop.caseload.card import Card
 from desktop.caseload.queue import QueueRow
 from desktop.chart.look import LIGHT, Look
-from desktop.chart.picture import Picture
+from desktop.chart.pieces import Picture
 from desktop.chart.style import Style
 from desktop.chart.whole import least_height, paint_chart
 from desktop.wording.caseload import COVERED, COVERED_TITLES, card_sections, row_sentences
