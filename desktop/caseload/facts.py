@@ -20,6 +20,7 @@ from analysis.questions.plan_kept import PlannedDays
 from analysis.questions.quiet import quiet
 from desktop.journal.clients import Client, CoachingSession
 from desktop.journal.journal import Journal
+from desktop.journal.plans import days_done, pauses_of, plans_of
 from desktop.journal.records import Entry, Measure
 from desktop.wording.findings import findings_of
 
@@ -277,7 +278,7 @@ def facts_of(
         of=max(0, last - since + 1) if last is not None and since is not None else 0,
         done=_done(journal, chosen[0], last),
         plans=_plans(journal, chosen[0], sessions),
-        pauses=_pauses(journal),
+        pauses=tuple(pauses_of(journal)),
         answer=said_of(journal.measures[main], review_overall(journal, main, sessions)) if main else None,
         lately=tuple(lately),
         devices=_devices(journal, looked_at, since),
@@ -293,31 +294,22 @@ def _days_said(journal: Journal) -> list[int]:
         for entry in entries.values()
         if entry.kind != "blank"
     }
-    for first, last in _pauses(journal):
+    for first, last in pauses_of(journal):
         days.update(range(first, last + 1))
     return sorted(days)
-
-
-def _pauses(journal: Journal) -> tuple[tuple[int, int], ...]:
-    spans = sorted(journal.spans.values(), key=lambda span: (span.first, span.id))
-    return tuple((one.first.toordinal(), one.last.toordinal()) for one in spans if one.kind in ("ill", "away"))
 
 
 def _done(journal: Journal, doing: int | None, last: int | None) -> tuple[int, ...]:
     if doing is None or last is None:
         return ()
-    days = {
-        entry.day.toordinal()
-        for entry in journal.entries.get(doing, {}).values()
-        if entry.kind in COUNTED_KINDS and entry.value is not None and entry.value > 0
-    }
-    return tuple(sorted(day for day in days if day > last - DONE_KEPT))
+    return tuple(day for day in days_done(journal, doing) if day > last - DONE_KEPT)
 
 
 def _plans(journal: Journal, doing: int | None, sessions: Sequence[CoachingSession]) -> tuple[PlannedDays, ...]:
-    own = [PlannedDays(one.first, one.times, one.spare) for one in journal.plans.values() if one.measure == doing]
+    if doing is None:
+        return ()
     agreed = [PlannedDays(one.day, one.times, one.spare) for one in sessions if one.times]
-    return tuple(sorted([*own, *agreed], key=lambda plan: plan.first)) if doing is not None else ()
+    return tuple(sorted([*plans_of(journal, doing), *agreed], key=lambda plan: plan.first))
 
 
 def _devices(journal: Journal, measures: Sequence[int], since: int | None) -> tuple[int, ...]:

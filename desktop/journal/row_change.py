@@ -31,6 +31,7 @@ Act = Literal[
     "restore copy",
     "put earlier back",
     "win back",
+    "set plan",
     "start caseload",
     "set coach",
     "add clients",

@@ -16,6 +16,7 @@ from analysis.log import COUNTED_KINDS
 from desktop.chart.picture import empty_picture, picture_of
 from desktop.chart.pieces import Picture
 from desktop.journal.journal import Journal
+from desktop.journal.plans import weeks_under_plan
 from desktop.wording.days import full_day
 from desktop.wording.findings import findings_of
 from desktop.wording.page import (
@@ -39,6 +40,7 @@ from desktop.wording.page import (
     title_with_unit,
     unit_words,
 )
+from desktop.wording.plan import plan_sentences
 from desktop.wording.telling import Section, speech_of
 
 LATELY = 14
@@ -108,6 +110,7 @@ class PageContent:
         doubts: what to know before trusting it, worst first; the last ones give way where room is short.
         always: what is said there in any case.
         foot: the rule, the version, the caution.
+        plan: how the plan of days a week was kept; ``""`` without one.
         sections: the coach's form of the page has these in place of question and answers.
     """
 
@@ -123,6 +126,7 @@ class PageContent:
     doubts: tuple[str, ...]
     always: tuple[str, ...]
     foot: str
+    plan: str = ""
     sections: tuple[Section, ...] = ()
 
 
@@ -169,6 +173,7 @@ def content_of(
         doubts=doubt_lines(reviews),
         always=always_lines(reviews),
         foot=foot_line(reviews[0]),
+        plan=" ".join(plan_sentences(weeks_under_plan(journal, subjects[0].measure, printed))),
     )
 
 
@@ -190,7 +195,7 @@ def coach_content_of(
         for section in sections
     )
     title = f"{shortened(code, _LONGEST_TITLE)}: {content.title}"
-    return replace(content, title=title, answers=(), sections=bounded)
+    return replace(content, title=title, answers=(), plan="", sections=bounded)
 
 
 def _title(review: Review) -> str:

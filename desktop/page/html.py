@@ -10,7 +10,7 @@ from pathlib import Path
 from desktop.faces import FACE, FACE_FILES, face_path
 from desktop.page.content import PageContent, Row
 from desktop.page.files import chart_svg
-from desktop.wording.page import AGREED, QUESTION, TABLE, TRUST, WHICH_DAYS
+from desktop.wording.page import AGREED, PLAN, QUESTION, TABLE, TRUST, WHICH_DAYS
 from desktop.wording.page import HEADS as COLUMN_HEADS
 
 _STYLES = {"400Regular": "normal 400", "400Regular_Italic": "italic 400", "700Bold": "normal 700"}
@@ -53,6 +53,7 @@ def html_of(content: PageContent) -> bytes:
         "</div>",
         *_charts(content),
         *_trust(content),
+        *([f"<section><h2>{PLAN}</h2><p>{_said(content.plan)}</p></section>"] if content.plan else []),
         f"<section><h2>{AGREED}</h2>",
         *['<div class="line"></div>'] * 3,
         "</section></main>",

@@ -19,7 +19,7 @@ from desktop.chart.whole import Parts, least_height, side_widths
 from desktop.page.content import PageContent, Row
 from desktop.page.table import tall_tables, wide_table
 from desktop.page.words import LINE, Face, Run, Words, plain_font, set_words, width_of
-from desktop.wording.page import AGREED, QUESTION, TRUST, more_in_the_app
+from desktop.wording.page import AGREED, PLAN, QUESTION, TRUST, more_in_the_app
 
 PaperName = Literal["a4", "letter"]
 PAPERS: dict[PaperName, tuple[float, float]] = {"a4": (595.276, 841.89), "letter": (612.0, 792.0)}
@@ -152,7 +152,8 @@ class _Layout:
         return [self._title(), self._question(), *self._answers(shown), *self._tables(shown)]
 
     def _second(self, shown: _Shown) -> list[Box]:
-        return [*self._notes(), *self._charts(), *self._trust(shown), self._agreed(), self._foot()]
+        trust = self._trust(shown)
+        return [*self._notes(), *self._charts(), *trust, *self._plan(), self._agreed(), self._foot()]
 
     def _sheet(self, boxes_of: Callable[[_Shown], list[Box]]) -> tuple[Box, ...]:
         """The boxes of one sheet with as much as it has room for."""
@@ -348,6 +349,10 @@ class _Layout:
             words += [one.moved(indent, top) for one in placed]
             top += height
         return [Box("trust", QRectF(0, 0, self.width, top), tuple(words))]
+
+    def _plan(self) -> list[Box]:
+        said = self.content.plan
+        return [self._text("plan", [[(f"{PLAN}:", self.bold), (said, self.plain)]])] if said else []
 
     def _agreed(self) -> Box:
         words, _ = set_words([(AGREED, self.bold)], self.width)

@@ -29,6 +29,7 @@ class FindingsPane(QWidget):
         super().__init__(parent)
         self._review: Review | None = None
         self._choices: Sequence[Choice] = ()
+        self._beside: tuple[Section, ...] = ()
         self._shows_how = False
         self._headline = 0
         self._text = QTextBrowser()
@@ -47,10 +48,10 @@ class FindingsPane(QWidget):
         """What is read in the pane."""
         return self._text.toPlainText()
 
-    def show_review(self, review: Review | None) -> None:
-        """Tell a review; None where there is no measure yet."""
-        if review is not self._review:
-            self._review = review
+    def show_review(self, review: Review | None, beside: tuple[Section, ...] = ()) -> None:
+        """Tell a review, and beside it what the journal says apart from it; None where there is no measure yet."""
+        if review is not self._review or beside != self._beside:
+            self._review, self._beside = review, beside
             self._choices = ()
             self._fill()
 
@@ -86,7 +87,7 @@ class FindingsPane(QWidget):
         self._headline = self._headline_size()
         parts = [f'<p style="font-size:{self._headline}px; font-weight:bold;">{escape(told.headline)}</p>']
         weighed = what_if_sentences(self._choices)
-        for section in (*told.sections, *([Section(TITLE, weighed)] if weighed else [])):
+        for section in (*told.sections, *self._beside, *([Section(TITLE, weighed)] if weighed else [])):
             if section.title:
                 parts.append(f'<p style="font-weight:bold; margin-bottom:0;">{escape(section.title)}</p>')
             style = "margin-top:2px; margin-bottom:6px;"

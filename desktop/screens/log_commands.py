@@ -14,6 +14,7 @@ from desktop.edits.days import EmptyKind, put_back, set_aside
 from desktop.edits.edit import Edit
 from desktop.edits.gaps import gap_is_not_known, gap_was_none
 from desktop.edits.measures import archive_measure, convert_measure, move_measure, remove_measure, set_measure
+from desktop.edits.plans import plan_in_force, set_plan
 from desktop.journal.records import Measure
 from desktop.journal.row_change import RowChange
 from desktop.models.session import Session
@@ -21,6 +22,7 @@ from desktop.screens.caution_settings import CautionSettings
 from desktop.screens.change_dialog import ChangeDialog
 from desktop.screens.dialogs import ask_reason
 from desktop.screens.measure_settings import MeasureSettings
+from desktop.screens.plan_dialog import PlanDialog
 from desktop.screens.span_dialog import SpanDialog
 from desktop.wording.numbers import count
 
@@ -132,6 +134,17 @@ class LogCommands:
             session.do(convert_measure(session.journal, dialog.chosen, *dialog.conversion))
         else:
             session.do(set_measure(session.journal, dialog.chosen))
+
+    def plan(self) -> None:
+        """Ask about the plan of days a week of the measure on the chart."""
+        session, measure = self._current
+        if session is None or measure is None:
+            return
+        day = self._window.current_day(session)
+        dialog = PlanDialog(measure, plan_in_force(session.journal, measure.id, day), day, self._window)
+        if dialog.exec() == QDialog.DialogCode.Accepted:
+            times, spare = dialog.times.value(), dialog.spare.value()
+            session.do(set_plan(session.journal, session.ids, measure.id, dialog.first.chosen, times, spare))
 
     def caution_settings(self) -> None:
         """Settle what is said about the measure on the chart, and the emergency number."""

@@ -112,10 +112,11 @@ class Menus:
         log.addSeparator()
         self._writing += [
             _add(log, "Settings of this m&easure…", commands.measure_settings, "Ctrl+E"),
+            _add(log, "A &plan of days a week…", commands.plan),
             _add(log, "Ca&utions of this measure…", commands.caution_settings),
             _add(log, "Move the column &left", partial(commands.move_measure, -1), "Ctrl+Shift+Left"),
             _add(log, "Move the column &right", partial(commands.move_measure, 1), "Ctrl+Shift+Right"),
-            _add(log, "&Put this measure away", commands.archive_measure),
+            _add(log, "Put this measure awa&y", commands.archive_measure),
             _add(log, "Remove this measure…", commands.remove_measure),
         ]
         away = log.addMenu("Measures put a&way")

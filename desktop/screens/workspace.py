@@ -6,6 +6,7 @@ from PySide6.QtCore import QByteArray, Qt
 from PySide6.QtGui import QFont, QFontInfo, QResizeEvent
 from PySide6.QtWidgets import QHBoxLayout, QSplitter, QVBoxLayout, QWidget
 
+from desktop.journal.plans import weeks_under_plan
 from desktop.models.session import Session
 from desktop.screens.caution_bar import CautionBar
 from desktop.screens.caution_line import CautionLine
@@ -16,6 +17,8 @@ from desktop.screens.findings_pane import FindingsPane
 from desktop.screens.gap_bar import GapBar
 from desktop.screens.status_line import StatusLine
 from desktop.screens.theme import PLAIN_SIZE
+from desktop.wording.plan import TITLE, plan_sentences
+from desktop.wording.telling import Section
 
 _LEAST_WIDTHS = (200, 280, 240)
 _FIRST_WIDTHS = (350, 660, 350)
@@ -108,7 +111,7 @@ class Workspace(QWidget):
 
     def show_review(self, session: Session) -> None:
         """Draw and tell the session's review."""
-        self.findings.show_review(session.review)
+        self.findings.show_review(session.review, _plan_of(session))
         self.chart_pane.show_review(session.review, session)
 
     def set_face(self, face: QFont) -> None:
@@ -123,3 +126,11 @@ class Workspace(QWidget):
         """Take the colours of the theme."""
         self.caution.set_dark(dark)
         self.caution_line.set_dark(dark)
+
+
+def _plan_of(session: Session) -> tuple[Section, ...]:
+    """How the plan of days a week was kept, where there is one."""
+    if session.measure is None:
+        return ()
+    told = plan_sentences(weeks_under_plan(session.journal, session.measure, session.today))
+    return (Section(TITLE, told),) if told else ()

@@ -33,6 +33,7 @@ _PHRASES: dict[Act, str] = {
     "restore copy": "the earlier copy put in place",
     "put earlier back": "the earlier value put back",
     "win back": "the days won back",
+    "set plan": "the plan of days a week",
     "start caseload": "the new caseload",
     "set coach": "the caseload's settings",
     "add clients": "the new clients",

@@ -15,6 +15,7 @@ from desktop.journal.clients import Client, CoachingSession
 from desktop.wording.days import full_day, long_day, short_day
 from desktop.wording.findings import findings_of
 from desktop.wording.numbers import count, plain
+from desktop.wording.plan import plan_words
 from desktop.wording.problems import stranger_sentence
 from desktop.wording.telling import Section, speech_of
 
@@ -243,8 +244,7 @@ def _agreed(session: CoachingSession | None) -> tuple[str, ...]:
         return ("No session is written down yet.",)
     told = [f"On {full_day(session.day)}: {session.agreed.rstrip('.') or 'nothing new'}."]
     if session.times:
-        spare = f", {session.spare} to spare" if session.spare else ""
-        told.append(f"Plan: {count(session.times, 'day')} a week{spare}.")
+        told.append(f"Plan: {plan_words(session.times, session.spare)}.")
     return (*told, *((session.note,) if session.note else ()))
 
 

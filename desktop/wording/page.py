@@ -22,6 +22,7 @@ from desktop.wording.telling import day_words_of, speech_of
 QUESTION = "My question today"
 TRUST = "Before trusting it"
 AGREED = "Agreed today"
+PLAN = "The plan"
 UNNAMED = "Log"
 TABLE = "The numbers"
 WHICH_DAYS = "Which days"

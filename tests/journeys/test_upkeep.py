@@ -7,6 +7,8 @@ from PySide6.QtCore import Qt
 from PySide6.QtTest import QTest
 from PySide6.QtWidgets import QApplication, QDialogButtonBox, QMessageBox
 
+from desktop.page.content import content_of
+from desktop.screens.page_dialog import subjects_of
 from tests.journeys.test_first_four_weeks import AFTER, BEFORE, CHANGE, FIRST, marks_the_change, starts_a_log
 
 WEIGHT = 4
@@ -274,3 +276,35 @@ def test_a_change_is_marked_in_the_table_in_words_and_goes_when_it_is_taken_back
     person.holds_control_and_presses(Qt.Key.Key_Z)
     assert days.index(row, 1).data() == ""
     assert days.index(row, 0).data(tip) is None
+
+
+def test_a_plan_of_days_a_week_is_told_beside_the_answer_and_taken_back(person):
+    window = person.starts_the_program()
+    starts_a_log(person)
+    types_days(person, [*BEFORE, *AFTER])
+    person.goes_to(FIRST)
+
+    def fill(dialog):
+        dialog.times.setValue(7)
+        dialog.spare.setValue(0)
+        presses_ok(dialog)
+
+    person.answers(fill)
+    chooses(person, "Log", "A plan of days a week…")
+    assert "Your plan\n7 days a week: kept in 1 of 3 whole weeks." in window.workspace.findings.text
+    assert window._menus._undo.text() == "&Undo: the plan of days a week"
+    content = content_of(window.session.journal, subjects_of(window.session), window.session.today)
+    assert content.plan == "7 days a week: kept in 1 of 3 whole weeks."
+
+    def end(dialog):
+        assert (dialog.times.value(), dialog.spare.value()) == (7, 0)
+        dialog.times.setValue(0)
+        presses_ok(dialog)
+
+    person.answers(end)
+    chooses(person, "Log", "A plan of days a week…")
+    assert "Your plan" not in window.workspace.findings.text
+    window.session.undo()
+    window.session.undo()
+    assert "Your plan" not in window.workspace.findings.text
+    assert window.session.journal.plans == {}

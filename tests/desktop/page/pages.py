@@ -10,7 +10,7 @@ import numpy as np
 
 from analysis import review
 from desktop.journal.journal import Journal
-from desktop.journal.records import Change, Entry, Measure, Person, Span
+from desktop.journal.records import Change, Entry, Measure, Person, Plan, Span
 from desktop.page.content import PageContent, Subject, content_of
 from tests.builders import day
 from tests.desktop.chart.pictures import HIGH, LOW, journal_of
@@ -96,7 +96,14 @@ def longest(word: str = "early ") -> Journal:
     )
     for number in (1, 2, 3):
         journal.changes[number] = Change(number, day(35 + 3 * (number - 1)), (word * 80)[:390], None, 2)
+    journal.plans = {1: Plan(1, 1, day(1), 6, 2), 2: Plan(2, 1, day(20), 7, 2)}
     return asked(journal, (word * 800)[:4000], (word * 80)[:390])
+
+
+def planned(journal: Journal) -> Journal:
+    """The journal with a plan of days a week."""
+    journal.plans = {1: Plan(1, 1, day(1), 5, 1)}
+    return journal
 
 
 def large_numbers() -> Journal:
@@ -109,7 +116,7 @@ JOURNALS: dict[str, Callable[[], Journal]] = {
     "two weeks without a change": lambda: asked(journal_of(LOW)),
     "four weeks": lambda: asked(journal_of(LOW + HIGH, change=14)),
     "too early": lambda: journal_of(LOW[:5] + HIGH[:2], change=5),
-    "ten months": lambda: asked(journal_of(long_log(300), change=150, missed="zero")),
+    "ten months": lambda: planned(asked(journal_of(long_log(300), change=150, missed="zero"))),
     "ten years": lambda: asked(journal_of(long_log(3650), change=1500)),
     "three changes": lambda: asked(with_changes(15, 30, 45)),
     "nine changes": lambda: asked(with_changes(*range(12, 120, 12), length=130)),

@@ -201,3 +201,9 @@ def test_the_content_is_frozen_and_made_of_plain_things():
     assert all("Q" not in type(getattr(content, one.name)).__name__ for one in fields(content))
     assert plain(content.facts[-1]) == "printed 1 March 2032"
     assert page_of(journal_of([1.0])).facts[0] == f"{date(2031, 3, 3).day} March 2031"
+
+
+def test_a_plan_that_there_was_is_told_and_none_is_not_mentioned():
+    told = page_of(JOURNALS["ten months"]()).plan
+    assert re.match(r"5 days a week, 1 to spare: kept in \d+ of \d+ whole weeks\.", told)
+    assert page_of(JOURNALS["four weeks"]()).plan == ""
