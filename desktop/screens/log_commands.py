@@ -20,7 +20,7 @@ from desktop.journal.row_change import RowChange
 from desktop.models.session import Session
 from desktop.screens.caution_settings import CautionSettings
 from desktop.screens.change_dialog import ChangeDialog
-from desktop.screens.dialogs import ask_reason
+from desktop.screens.dialogs import ask_day, ask_reason
 from desktop.screens.measure_settings import MeasureSettings
 from desktop.screens.plan_dialog import PlanDialog
 from desktop.screens.span_dialog import SpanDialog
@@ -134,6 +134,14 @@ class LogCommands:
             session.do(convert_measure(session.journal, dialog.chosen, *dialog.conversion))
         else:
             session.do(set_measure(session.journal, dialog.chosen))
+
+    def go_to_day(self) -> None:
+        """Ask for a day and make it current."""
+        session = self._session
+        if session is not None:
+            day = ask_day(self._window, "Go to a day", self._window.current_day(session))
+            if day is not None:
+                self._window.show_day(day)
 
     def plan(self) -> None:
         """Ask about the plan of days a week of the measure on the chart."""

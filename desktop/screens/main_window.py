@@ -25,7 +25,7 @@ from desktop.models.session import Session
 from desktop.screens.bring_in_dialog import BringInDialog
 from desktop.screens.caseload_opening import is_caseload
 from desktop.screens.days_pane import DaysPane
-from desktop.screens.dialogs import MeasureDialog, ask_day, ask_if_right, ask_to_leave_unread
+from desktop.screens.dialogs import MeasureDialog, ask_if_right, ask_to_leave_unread
 from desktop.screens.file_commands import keep_elsewhere, show_caseload
 from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_journal, ask_table
 from desktop.screens.log_commands import LogCommands
@@ -182,12 +182,11 @@ class MainWindow(QMainWindow):
         if self.session is not None:
             self._go_to(self.session.today)
 
-    def go_to_day(self) -> None:
-        """Ask for a day and make it current; the table begins earlier where it must."""
-        session = self.session
-        if session is not None and (day := ask_day(self, "Go to a day", self.current_day(session))) is not None:
+    def show_day(self, day: date) -> None:
+        """Make a day current; the table begins earlier where it must."""
+        if self.session is not None:
             self.workspace.days.days.show_from(day - timedelta(7))
-            self._go_to(min(day, session.today))
+            self._go_to(min(day, self.session.today))
 
     def undo(self) -> None:
         """Take back the last act."""

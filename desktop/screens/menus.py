@@ -15,6 +15,7 @@ from desktop.screens.chart_pane import PERIOD_WORDS, show_key_of
 from desktop.screens.earlier_copies import show_earlier_copies
 from desktop.screens.erase_dialog import erase_for_good
 from desktop.screens.file_commands import keep_elsewhere, open_stranger, show_own_caseload
+from desktop.screens.find_dialog import show_find
 from desktop.screens.hand_over_dialog import hand_over
 from desktop.screens.held_dialog import show_held
 from desktop.screens.help import show_about, show_how_often_wrong, show_keys
@@ -127,8 +128,9 @@ class Menus:
             changes.menuAction(),
             spans.menuAction(),
             away.menuAction(),
+            _add(log, "&Find…", partial(show_find, window), Keys.Find),
             _add(log, "Go to &today", window.go_to_today, "Ctrl+T"),
-            _add(log, "&Go to a day…", window.go_to_day, "Ctrl+G"),
+            _add(log, "&Go to a day…", commands.go_to_day, "Ctrl+G"),
         ]
 
     def _fill_view(self, view: QMenu) -> None:
