@@ -412,7 +412,8 @@ class MainWindow(QMainWindow):
         self.start_screen.set_face(app.font())
         self.workspace.days.set_paper(look.paper)
         self.workspace.chart_pane.set_look(look)
-        self.workspace.set_dark(is_dark(self.settings.theme))
+        for page in (self.workspace, self.start_screen.caution_line):
+            page.set_dark(is_dark(self.settings.theme))
         model = self.workspace.days.model()
         if isinstance(model, DaysTable):
             model.quiet_colour = look.colour("quiet")

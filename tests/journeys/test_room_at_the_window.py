@@ -4,7 +4,8 @@ from datetime import timedelta
 
 import pytest
 from PySide6.QtCore import Qt
-from PySide6.QtWidgets import QApplication
+from PySide6.QtTest import QTest
+from PySide6.QtWidgets import QApplication, QLabel
 
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person
 from desktop.storage.store import Store
@@ -122,3 +123,41 @@ def test_a_long_title_is_cut_and_said_whole_elsewhere(person, opens, monkeypatch
     ]
     assert titles == ["Minutes\nof slow walki…\nminutes", long, long]
     assert person.days.columnWidth(0) < SMALL[0] / 4
+
+
+@pytest.mark.parametrize(("size", "text"), [(DEFAULT, 100), (SMALL, 100), (SMALL, 200)])
+def test_the_three_ways_to_begin_are_large_buttons_that_say_what_they_do(person, size, text):
+    window = person.starts_the_program()
+    window._set_text_size(text)
+    window.resize(*size)
+    settle()
+    assert (window.width(), window.height()) == size
+    start = window.start_screen
+    ways = [start.start, start.table, start.sample]
+    letter = window.fontInfo().pixelSize() if text == 100 else 30
+    for way in ways:
+        assert way.isVisible()
+        assert way.height() >= 3.5 * letter
+        assert way.width() >= min(30 * letter, 900)
+        name, hint = way.findChildren(QLabel)
+        assert (name.text(), hint.text()) == (way.accessibleName(), way.accessibleDescription())
+        assert name.font().bold()
+        assert hint.height() >= hint.heightForWidth(hint.width())
+        assert name.font().pixelSize() > hint.font().pixelSize() == 15 * text / 100
+    caution = start.caution_line
+    assert caution.isVisible()
+    assert caution.height() >= caution.heightForWidth(caution.width())
+    assert len({way.accessibleDescription() for way in ways}) == 3
+
+
+def test_a_way_to_begin_is_pressed_on_its_words(person):
+    window = person.starts_the_program()
+    settle()
+    pressed = []
+    window.start_screen.sample_wanted.disconnect()
+    window.start_screen.sample_wanted.connect(lambda: pressed.append("sample"))
+    words = window.start_screen.sample.findChildren(QLabel)[0]
+    QTest.mouseClick(
+        window.windowHandle(), Qt.MouseButton.LeftButton, pos=words.mapTo(window, words.rect().center())
+    )
+    assert pressed == ["sample"]
