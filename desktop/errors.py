@@ -26,6 +26,7 @@ ExchangeReason = Literal[
     "not text",
     "too large",
     "not a table",
+    "header alone",
     "no day column",
     "no value column",
     "no days read",

@@ -86,10 +86,10 @@ def read_table(
 
     Raises:
         ExchangeError: the file is no table that can be read (``workbook``, ``not text``, ``empty``,
-            ``too large``, ``not a table``, ``no day column``, ``no value column``, ``no days read``),
-            a column is not there (``unknown column``), or the table leaves something open (``which day
-            column``, ``which name column``, ``which day order``, ``which century``, ``which decimal mark``,
-            with ``choices``).
+            ``too large``, ``not a table``, ``header alone``, ``no day column``, ``no value column``,
+            ``no days read``), a column is not there (``unknown column``), or the table leaves something
+            open (``which day column``, ``which name column``, ``which day order``, ``which century``,
+            ``which decimal mark``, with ``choices``).
     """
     told(0.1)
     table = find_table(source)

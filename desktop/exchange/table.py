@@ -174,7 +174,7 @@ def find_table(source: bytes) -> Table:
     """Find the table in a file or pasted block.
 
     Raises:
-        ExchangeError: ``workbook``, ``not text``, ``empty``, ``too large``, ``not a table``.
+        ExchangeError: ``workbook``, ``not text``, ``empty``, ``too large``, ``not a table``, ``header alone``.
     """
     text = decode(source)
     found = split_rows(text.text)
@@ -182,6 +182,8 @@ def find_table(source: bytes) -> Table:
     if _widest(found.cells) < 2:
         raise ExchangeError("not a table")
     place = _day_place(found.cells, seen)
+    if place is None and _ends_with_header(found.cells, seen):
+        raise ExchangeError("header alone")
     header, begins = _header_and_first(found.cells, place, seen)
     header, begins, units = _with_units_row(found.cells, header, begins, seen)
     headers = _headers(found.cells, header, begins, place)
@@ -205,6 +207,12 @@ def find_table(source: bytes) -> Table:
 
 def _widest(rows: Sequence[Row]) -> int:
     return len(rows.columns) if isinstance(rows, Rectangle) else max(map(len, rows), default=0)
+
+
+def _ends_with_header(rows: Sequence[Row], seen: DaySeen) -> bool:
+    """Whether the last row names columns, so that no row of days follows it."""
+    last = rows[len(rows) - 1]
+    return _names_days(last, seen) or (len(rows) == 1 and _is_header(last, len(last)))
 
 
 def _usual_width(rows: Sequence[Row]) -> int:

@@ -2,7 +2,9 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from pathlib import Path
+from typing import TYPE_CHECKING
 
 from PySide6.QtCore import Qt
 from PySide6.QtWidgets import (
@@ -20,13 +22,18 @@ from PySide6.QtWidgets import (
 )
 
 from analysis.log import MeasureKind, Missed
-from desktop.edits.bring_in import BroughtIn, bring_in
+from desktop.edits.bring_in import bring_in
+from desktop.exchange.limits import for_journal
 from desktop.exchange.reading import ReadColumn, Reading
 from desktop.journal.records import Entry, Measure
-from desktop.models.session import Session
 from desktop.screens.bring_in_preview import lines_set_aside, summary_of
+from desktop.screens.reading_table import read_with_questions
 from desktop.screens.room import give_room
+from desktop.wording.bring_in import NOTHING_TO_BRING_IN
 from desktop.wording.numbers import count, decimals_of
+
+if TYPE_CHECKING:
+    from desktop.screens.main_window import MainWindow
 
 _KINDS: tuple[tuple[str, MeasureKind, Missed], ...] = (
     ("a reading: blank stays blank", "reading", "blank"),
@@ -40,12 +47,22 @@ _MOST_WITHOUT_SCROLLING = 8
 class BringInDialog(QDialog):
     """What was read: a row a column with the measure it becomes, and the lines set aside."""
 
-    def __init__(self, path: Path, reading: Reading, session: Session, parent: QWidget | None = None) -> None:
+    def __init__(
+        self, path: Path, reading: Reading, known: Sequence[Measure], parent: QWidget | None = None
+    ) -> None:
+        """Show what was read.
+
+        Args:
+            path: the table's file.
+            reading: what it came to.
+            known: the measures of the open journal; a column of the same name is added to one.
+            parent: the window.
+        """
         super().__init__(parent)
         self.setWindowTitle("Bring in a table")
         self._reading = reading
-        self._session = session
-        self.brought: BroughtIn | None = None
+        self._known = {measure.title: measure for measure in known}
+        self.chosen: tuple[list[Measure], list[Entry]] | None = None
         self._rows: list[tuple[QCheckBox, QLineEdit, QComboBox, ReadColumn]] = []
         layout = QVBoxLayout(self)
         summary = QLabel(summary_of(path.name, reading))
@@ -69,15 +86,10 @@ class BringInDialog(QDialog):
         if not chosen:
             self._problem.setText("Choose at least one column.")
             return
-        days = [day for _, _, _, column in chosen for day in column.values.days]
-        if days and not 1900 <= min(days).year <= max(days).year <= 2199:
-            self._problem.setText("A journal holds the years 1900 to 2199; this table reaches further.")
+        if not any(len(column.values) for _, _, _, column in chosen):
+            self._problem.setText(NOTHING_TO_BRING_IN)
             return
-        measures, entries = self._records(chosen)
-        self.brought = bring_in(
-            self._session.journal, self._session.ids, measures, entries, now=self._session.now()
-        )
-        self._session.do(self.brought.edit)
+        self.chosen = self._records(chosen)
         super().accept()
 
     def _columns(self) -> QWidget:
@@ -86,7 +98,6 @@ class BringInDialog(QDialog):
         grid.setContentsMargins(0, 0, 0, 0)
         for place, heading in enumerate(("Column", "Measure", "It is")):
             grid.addWidget(QLabel(heading), 0, place)
-        known = {measure.title: measure for measure in self._session.journal.columns()}
         for row, column in enumerate(self._reading.columns, start=1):
             wanted = QCheckBox(f"{column.name}, {count(len(column.values), 'value')}")
             wanted.setChecked(True)
@@ -95,7 +106,7 @@ class BringInDialog(QDialog):
             kind = QComboBox()
             kind.addItems([text for text, _, _ in _KINDS])
             kind.setAccessibleName(f"What {column.name} is")
-            same = known.get(column.name)
+            same = self._known.get(column.name)
             if same is not None:
                 kind.setEnabled(False)
                 kind.setToolTip("The measure of this name is in the journal; the values are added to it.")
@@ -125,7 +136,7 @@ class BringInDialog(QDialog):
     def _records(
         self, chosen: list[tuple[QCheckBox, QLineEdit, QComboBox, ReadColumn]]
     ) -> tuple[list[Measure], list[Entry]]:
-        known = {measure.title: measure for measure in self._session.journal.columns()}
+        known = dict(self._known)
         measures: list[Measure] = []
         entries: list[Entry] = []
         for place, (_, title_box, kind_box, column) in enumerate(chosen):
@@ -151,3 +162,24 @@ class BringInDialog(QDialog):
                 for value in column.values
             ]
         return measures, entries
+
+
+def bring_in_rows(window: MainWindow, path: Path) -> None:
+    """Read a table, show what it becomes, and bring in what is chosen.
+
+    A new journal is made only then: whoever leaves the preview has none.
+    """
+    reading = read_with_questions(window, path)
+    if reading is None:
+        return
+    known = window.session.journal.columns() if window.session is not None else []
+    dialog = BringInDialog(path, for_journal(reading), known, window)
+    if dialog.exec() != QDialog.DialogCode.Accepted or dialog.chosen is None:
+        return
+    session = window.session or window.start_journal(window.own_journal)
+    if session is None:
+        return
+    measures, entries = dialog.chosen
+    brought = bring_in(session.journal, session.ids, measures, entries, now=session.now())
+    session.do(brought.edit)
+    window.say_brought(brought)

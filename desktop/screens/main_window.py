@@ -22,7 +22,7 @@ from desktop.models.days_table import DaysTable, Unlikely
 from desktop.models.keeping import Keeping
 from desktop.models.ready_made import make_sample, new_person
 from desktop.models.session import Session
-from desktop.screens.bring_in_dialog import BringInDialog
+from desktop.screens.bring_in_dialog import bring_in_rows
 from desktop.screens.caseload_opening import is_caseload
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.dialogs import MeasureDialog, ask_if_right, ask_to_leave_unread
@@ -31,7 +31,6 @@ from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_
 from desktop.screens.log_commands import LogCommands
 from desktop.screens.menus import Menus
 from desktop.screens.opening import mend, open_with_questions
-from desktop.screens.reading_table import read_with_questions
 from desktop.screens.settings import TEXT_SIZES, Settings
 from desktop.screens.start_screen import StartScreen
 from desktop.screens.status_line import trouble_sentence
@@ -96,11 +95,14 @@ class MainWindow(QMainWindow):
         """Open a journal in place of the one that is open; says so when it cannot be."""
         if is_caseload(path):
             return show_caseload(self, path)
-        if self.session is not None and self.session.path == path:
+        if self.session is not None and self.session.path.resolve() == path.resolve():
             return True
-        if not self.let_go():
+        # What is open is let go only when the other one is there: else it stays, or the start screen does.
+        store = open_with_questions(self, path, self.now)
+        if store is not None and not self.let_go():
+            store.close()
             return False
-        return self._show_opened(open_with_questions(self, path, self.now))
+        return self._show_opened(store)
 
     def show_start(self) -> None:
         """Show the start screen where no journal is open."""
@@ -122,7 +124,7 @@ class MainWindow(QMainWindow):
         dialog = MeasureDialog(self, first=self.session is None)
         if dialog.exec() != QDialog.DialogCode.Accepted:
             return
-        session = self.session or self._start_journal(self.own_journal)
+        session = self.session or self.start_journal(self.own_journal)
         if session is None:
             return
         edit = add_measures(session.journal, session.ids, dialog.measures)
@@ -134,7 +136,7 @@ class MainWindow(QMainWindow):
         """Start another journal in a file of the person's choice."""
         path = ask_new_journal(self, self.folder)
         if path is not None:
-            if self.let_go() and self._start_journal(path) is not None:
+            if self.let_go() and self.start_journal(path) is not None:
                 self.start_log()
             self._follow_session()
 
@@ -156,15 +158,7 @@ class MainWindow(QMainWindow):
         if folder is not None:
             bring_in_package(self, folder)
             return
-        reading = read_with_questions(self, path)
-        if reading is None:
-            return
-        session = self.session or self._start_journal(self.own_journal)
-        if session is None:
-            return
-        dialog = BringInDialog(path, reading, session, self)
-        if dialog.exec() == QDialog.DialogCode.Accepted and dialog.brought is not None:
-            self.say_brought(dialog.brought)
+        bring_in_rows(self, path)
 
     def say_brought(self, brought: BroughtIn) -> None:
         """Show what was brought in, and say how much it was."""
@@ -261,7 +255,8 @@ class MainWindow(QMainWindow):
         self.workspace.status.give_up_wanted.connect(self._give_up)
         self.workspace.status.keep_elsewhere_wanted.connect(partial(keep_elsewhere, self))
 
-    def _start_journal(self, path: Path) -> Session | None:
+    def start_journal(self, path: Path) -> Session | None:
+        """Make a new journal and open it; None when it cannot be made, which is said."""
         try:
             store = Store.create(path, new_person(), clock=self.now, alone=True)
         except StorageError as error:

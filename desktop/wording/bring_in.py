@@ -14,6 +14,7 @@ REASONS: dict[str, str] = {
     "no such day": "its day is not in the calendar",
     "day out of range": "its year is too far away",
     "not a day": "its day cannot be read",
+    "before 1900": "a journal begins with the year 1900, and its day is earlier",
     "other period": "it is about another span of time than the other rows",
     "total row": "it is a closing total",
     "header again": "it is the header once more",
@@ -37,6 +38,8 @@ REASONS: dict[str, str] = {
     "more than a day": "its value is longer than a day",
 }
 """Why a line was set aside, by the reason the importer gives."""
+
+NOTHING_TO_BRING_IN = "Nothing chosen here holds a value that can be kept. The list above says why."
 
 
 @dataclass(frozen=True)

@@ -134,6 +134,9 @@ _EXCHANGE: dict[str, Callable[[Fields], str]] = {
     "not a table": lambda _: (
         "No table was found in this file. A table has one row a day: a day and a number, parted by a comma."
     ),
+    "header alone": lambda _: (
+        "The table has a header line and no days. Write a line for each day under it, then bring it in."
+    ),
     "no day column": lambda fields: (
         f"No column of days was found among {_listed(fields['columns'])}. "
         "One column must hold days such as 2031-03-04."

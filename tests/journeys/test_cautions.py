@@ -18,7 +18,7 @@ PRESSURE = Measure(0, 0, "Upper pressure", "mmHg")
 @pytest.fixture
 def window(person):
     window = person.starts_the_program()
-    window._start_journal(window.own_journal)
+    window.start_journal(window.own_journal)
     session = window.session
     session.do(add_measures(session.journal, session.ids, [PRESSURE]))
     window.show_measure(1)
