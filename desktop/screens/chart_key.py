@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from PySide6.QtCore import QRectF, QSize, Signal
-from PySide6.QtGui import QFontInfo, QMouseEvent, QPainter, QPaintEvent, QResizeEvent
+from PySide6.QtGui import QFontInfo, QMouseEvent, QPainter, QPaintEvent
 from PySide6.QtWidgets import (
     QDialog,
     QDialogButtonBox,
@@ -111,20 +111,14 @@ class KeyWindow(QDialog):
             says.setWordWrap(True)
             for column, widget in enumerate((_Sample(sign, style), name, says)):
                 grid.addWidget(widget, row, column)
-        self._inside, self._grid = inside, grid
-        self._area = QScrollArea()
-        self._area.setWidget(inside)
-        self._area.setWidgetResizable(True)
-        self._area.setAccessibleName(KEY_TITLE)
+        grid.setRowStretch(len(SIGN_WORDS), 1)
+        area = QScrollArea()
+        area.setWidget(inside)
+        area.setWidgetResizable(True)
+        area.setAccessibleName(KEY_TITLE)
         buttons = QDialogButtonBox(QDialogButtonBox.StandardButton.Close)
         buttons.rejected.connect(self.reject)
         layout = QVBoxLayout(self)
-        layout.addWidget(self._area)
+        layout.addWidget(area)
         layout.addWidget(buttons)
         give_room(self, _LETTERS, _LINES)
-
-    def resizeEvent(self, event: QResizeEvent) -> None:
-        """No row is lower than its words."""
-        super().resizeEvent(event)
-        width = self._area.viewport().width()
-        self._inside.setMinimumHeight(self._grid.heightForWidth(width))

@@ -44,7 +44,7 @@ class Menus:
         self._fill_log(log)
         self._fill_view(view)
         _add(help_menu, "&Keys", partial(show_keys, window), Keys.HelpContents)
-        _add(help_menu, "&What the marks mean", partial(show_key_of, window.workspace.chart_pane))
+        _add(help_menu, "What the &marks mean", partial(show_key_of, window.workspace.chart_pane))
         _add(help_menu, "How often is it &wrong?", partial(show_how_often_wrong, window))
         _add(help_menu, "&About Dayfence", partial(show_about, window))
 

@@ -2,12 +2,15 @@
 
 from __future__ import annotations
 
+from datetime import datetime
+
 from PySide6.QtCore import Qt, Signal
 from PySide6.QtWidgets import QHBoxLayout, QLabel, QPushButton, QSizePolicy, QWidget
 
 from desktop.errors import DayfenceError, StorageError
 from desktop.models.session import Session
 from desktop.screens.cut_label import CutLabel
+from desktop.wording.days import saved_words
 from desktop.wording.numbers import count
 from desktop.wording.problems import problem_sentence
 
@@ -82,6 +85,4 @@ def _saved_words(session: Session) -> str:
     if not session.is_saved:
         return "Saving…"
     at = session.saved_at
-    if not at:
-        return ""
-    return f"Saved {at[11:16]}" if at[:10] == session.today.isoformat() else f"Saved {at[:10]}"
+    return saved_words(datetime.fromisoformat(at), session.today) if at else ""

@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from datetime import date
+from datetime import date, datetime
 
 from analysis.log import Period
 
@@ -27,6 +27,14 @@ def long_day(day: date) -> str:
 def full_day(day: date) -> str:
     """``3 March 2026``."""
     return f"{day.day} {MONTHS[day.month - 1]} {day.year}"
+
+
+def saved_words(at: datetime, today: date) -> str:
+    """``Saved at 14:05``, ``Saved on 30 March``; with the year where it is another one."""
+    if at.date() == today:
+        return f"Saved at {at:%H:%M}"
+    said = full_day(at.date())
+    return f"Saved on {said if at.year != today.year else said.rpartition(' ')[0]}"
 
 
 @dataclass(frozen=True)

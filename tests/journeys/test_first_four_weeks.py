@@ -59,7 +59,7 @@ def test_four_weeks_with_a_change_are_answered_and_are_there_tomorrow(person):
         assert part in person.findings
     told = window.workspace.chart_pane.chart.accessibleDescription()
     assert "Baseline: 14 days, middle 20.5 minutes" in told
-    person.qtbot.waitUntil(lambda: person.status == "Saved 20:15")
+    person.qtbot.waitUntil(lambda: person.status == "Saved at 20:15")
     answer = window.session.review.to_json()
     person.quits()
 

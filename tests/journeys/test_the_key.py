@@ -1,8 +1,9 @@
 """What the marks mean: under the chart, by F1 on it, by the menu."""
 
 from PySide6.QtCore import Qt
+from PySide6.QtGui import QAction
 from PySide6.QtTest import QTest
-from PySide6.QtWidgets import QLabel
+from PySide6.QtWidgets import QLabel, QTableWidget
 
 from desktop.screens.chart_key import KeyWindow
 from desktop.wording.chart_key import KEY_TITLE, SIGN_WORDS
@@ -41,3 +42,28 @@ def test_the_marks_are_explained_under_the_chart_and_in_a_window(person):
     assert len(seen) == 3
     for texts in seen:
         assert texts == [text for pair in SIGN_WORDS.values() for text in pair]
+
+
+def test_the_keys_are_a_table_with_every_shortcut_of_the_menus(person):
+    window = person.starts_the_program()
+    rows = []
+
+    def looks(dialog):
+        table = dialog.findChild(QTableWidget)
+        for row in range(table.rowCount()):
+            rows.append(tuple(table.item(row, place).text() for place in (0, 1) if table.item(row, place)))
+            assert table.columnSpan(row, 0) == (2 if len(rows[-1]) == 1 else 1)
+        dialog.reject()
+
+    person.answers(looks)
+    chooses(person, "Help", "Keys")
+    groups = [row[0] for row in rows if len(row) == 1]
+    assert len(groups) >= 4
+    assert ("Enter", "Keep it and go to the next day") in rows
+    assert len(rows) - len(groups) >= 20
+    told = " ".join(row[0] for row in rows if len(row) == 2)
+    standard = {"Ctrl+N", "Ctrl+O", "Ctrl+Q"}
+    for action in window.findChildren(QAction):
+        shortcut = action.shortcut().toString()
+        if shortcut and shortcut not in standard and shortcut not in ("Ctrl+2", "Ctrl+3"):
+            assert shortcut in told, action.text()

@@ -1,12 +1,12 @@
 """Days in words: the month is never a number."""
 
-from datetime import date
+from datetime import date, datetime
 
 import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from desktop.wording.days import MONTHS, WEEKDAYS, DayWords, full_day, long_day, short_day
+from desktop.wording.days import MONTHS, WEEKDAYS, DayWords, full_day, long_day, saved_words, short_day
 from desktop.wording.telling import day_words_of
 from tests.builders import day, number, reviewed
 
@@ -53,3 +53,16 @@ def test_the_year_is_told_only_where_a_log_spans_more_than_one():
     assert day_words_of(within).name(number(0)) == "3 March"
     assert day_words_of(beyond).name(number(0)) == "3 March 2031"
     assert day(399).year == 2032
+
+
+@pytest.mark.parametrize(
+    ("at", "said"),
+    [
+        (datetime(2031, 3, 30, 14, 5), "Saved at 14:05"),
+        (datetime(2031, 3, 30, 0, 0), "Saved at 00:00"),
+        (datetime(2031, 3, 29, 23, 59), "Saved on 29 March"),
+        (datetime(2030, 12, 31, 9, 0), "Saved on 31 December 2030"),
+    ],
+)
+def test_when_it_was_saved_is_said_in_words(at, said):
+    assert saved_words(at, date(2031, 3, 30)) == said

@@ -12,7 +12,7 @@ from analysis.doubts.catalogue import CATALOGUE
 from desktop.wording.cautions import CAUTION
 from desktop.wording.entry import KIND_WORDS, refusal_sentence
 from desktop.wording.findings import worded
-from desktop.wording.help import ABOUT, KEYS
+from desktop.wording.help import ABOUT, KEY_GROUPS
 from desktop.wording.worked_out import worked_out
 from tests.desktop.wording.readability import grade, syllables
 from tests.desktop.wording.sweep import sweep
@@ -36,7 +36,8 @@ def findings() -> frozenset[str]:
 def others() -> frozenset[str]:
     problems = [sentence(error, in_command=said) for error in ERRORS for said in (False, True)]
     refused = [refusal_sentence(reason, "12x") for reason in REFUSALS]
-    helped = [line for line in (*KEYS.splitlines(), *ABOUT.splitlines(), CAUTION) if line]
+    keys = [what for _, group in KEY_GROUPS for _, what in group]
+    helped = [line for line in (*keys, *ABOUT.splitlines(), CAUTION) if line]
     return frozenset([*problems, *refused, *helped])
 
 
