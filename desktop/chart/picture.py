@@ -29,6 +29,7 @@ from desktop.chart.pieces import (
 from desktop.chart.spoken import Spoken
 from desktop.journal.journal import Journal
 from desktop.journal.records import Measure
+from desktop.wording.chart_key import left_out_sentence
 from desktop.wording.days import DayWords, long_day
 from desktop.wording.findings import findings_of
 from desktop.wording.numbers import Speech, count
@@ -93,6 +94,7 @@ class _Composer:
 
     def compose(self) -> Picture:
         marks = self._marks()
+        left_out = self._left_out(marks)
         low, high = self._value_range(marks.y)
         bands, lines, labels, edge_words = self._levels(low, high)
         if words_above := sum(edge == "above" for edge, _ in edge_words):
@@ -118,7 +120,8 @@ class _Composer:
             ticks=tuple(self._ticks()),
             bracket=self._bracket(),
             edge_words=tuple(edge_words),
-            told=self._told(),
+            left_out=left_out,
+            told=f"{self._told()} {left_out}".strip(),
         )
 
     def _marks(self) -> Marks:
@@ -158,6 +161,20 @@ class _Composer:
             is_zero = np.r_[is_zero, np.zeros(len(aside), dtype=bool)]
             joined = np.r_[joined, np.zeros(len(aside), dtype=bool)]
         return Marks(x, values, shape, is_zero, joined, labels, Spoken(len(x), tell))
+
+    def _left_out(self, marks: Marks) -> str:
+        """The periods that the ends of the log, or a change inside them, cut."""
+        if self.points.period == "day":
+            return ""
+        known = self.points.known
+        starts, ends = self.points.first[known], self.points.last[known]
+        uncounted = marks.shape == SHAPES.index("uncounted")
+        cut = np.zeros(len(starts), dtype=bool)
+        cut[[0, -1]] = True
+        for stretch in self.stretches:
+            if stretch.change is not None:
+                cut |= (starts < stretch.change) & (stretch.change <= ends)
+        return left_out_sentence([self.days.name(int(start)) for start in starts[cut & uncounted]])
 
     def _outside(self) -> tuple[Sequence[int], Sequence[int]]:
         """Days beyond the baseline's fences: its own, and the days after beyond the carried ones."""

@@ -118,6 +118,7 @@ class Picture:
         axis_words: word at the lower end of the upright axis, what it counts, word at the upper end.
         edge_words: fences beyond the picture, told in words at its upper and lower edge.
         uprights: where a change stands.
+        left_out: which weeks, months or years are cut and so not counted; ``""`` where none is.
         told: the whole chart in sentences, for those who do not see it.
     """
 
@@ -136,4 +137,5 @@ class Picture:
     ticks: tuple[Tick, ...] = ()
     bracket: Bracket | None = None
     edge_words: tuple[tuple[Literal["above", "below"], str], ...] = ()
+    left_out: str = ""
     told: str = ""

@@ -62,6 +62,11 @@ class ChartPane(QWidget):
         self.periods.setAccessibleName("How a point is made")
         self.periods.setToolTip("How a point is made")
         self.periods.activated.connect(lambda place: self.period_chosen.emit(PERIODS[place]))
+        self.left_out = QLabel()
+        self.left_out.setWordWrap(True)
+        self.left_out.setContentsMargins(8, 4, 8, 2)
+        self.left_out.setAccessibleName("Not counted")
+        self.left_out.hide()
         self.key = KeyLine()
         self.key.wanted.connect(partial(show_key_of, self))
         below = QHBoxLayout()
@@ -73,6 +78,7 @@ class ChartPane(QWidget):
         self._layout.setSpacing(0)
         self._place = QWidget()
         self._layout.addWidget(self._place, 1)
+        self._layout.addWidget(self.left_out)
         self._layout.addWidget(self.key)
         self._layout.addLayout(below)
 
@@ -116,6 +122,8 @@ class ChartPane(QWidget):
         else:
             self._picture = picture_of(review, session.journal, measure.id)
         self.key.show_picture(self._picture)
+        self.left_out.setText(self._picture.left_out)
+        self.left_out.setVisible(bool(self._picture.left_out))
         period = review.measure.period if review is not None else "day"
         self.periods.setCurrentIndex(PERIODS.index(period))
         shown_for = (session.measure, period)

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from typing import Literal
 
 Sign = Literal[
@@ -37,3 +38,12 @@ SIGN_WORDS: dict[Sign, tuple[str, str]] = {
     "began": ("began about here", "The days on which the new level may have begun."),
 }
 """The few words and the sentence of each sign, in the order in which they are told."""
+
+
+def left_out_sentence(names: Sequence[str]) -> str:
+    """Which periods the ends of the log or a change cut, so that they are in no number; ``""`` for none."""
+    if not names:
+        return ""
+    what = "it is" if len(names) == 1 else "they are"
+    listed = names[0] if len(names) == 1 else f"{', '.join(names[:-1])} and {names[-1]}"
+    return f"Not counted, since {what} not whole: {listed}."

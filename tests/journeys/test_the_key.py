@@ -67,3 +67,17 @@ def test_the_keys_are_a_table_with_every_shortcut_of_the_menus(person):
         shortcut = action.shortcut().toString()
         if shortcut and shortcut not in standard and shortcut not in ("Ctrl+2", "Ctrl+3"):
             assert shortcut in told, action.text()
+
+
+def test_cut_months_are_said_under_the_chart(person):
+    window = person.starts_the_program()
+    starts_a_log(person)
+    types_four_weeks(person)
+    pane = window.workspace.chart_pane
+    assert not pane.left_out.isVisible()
+    window.choose_period("week")
+    person.qtbot.waitUntil(lambda: pane.periods.currentText() == "one mark a week")
+    assert not pane.left_out.isVisible()
+    window.choose_period("month")
+    person.qtbot.waitUntil(pane.left_out.isVisible)
+    assert pane.left_out.text() == "Not counted, since it is not whole: March 2031."

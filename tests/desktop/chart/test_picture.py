@@ -277,3 +277,20 @@ def test_every_place_is_a_number_inside_the_picture():
         assert np.isfinite([one.x0, one.x1, one.y0, one.y1]).all()
         assert one.y0 < np.min(one.marks.y) <= np.max(one.marks.y) < one.y1
         assert all(one.y0 <= line.y <= one.y1 for line in one.lines)
+
+
+@pytest.mark.parametrize(
+    ("days", "change", "period", "said"),
+    [
+        (100, 50, "month", "Not counted, since they are not whole: March 2031, April 2031 and June 2031."),
+        (80, None, "month", "Not counted, since they are not whole: March 2031 and May 2031."),
+        (28, 14, "week", ""),
+        (30, 14, "week", "Not counted, since it is not whole: the week of 31 March."),
+        (28, 17, "week", "Not counted, since it is not whole: the week of 17 March."),
+        (100, 50, "day", ""),
+    ],
+)
+def test_periods_that_are_cut_are_named(days, change, period, said):
+    picture = drawn([20 + place % 7 for place in range(days)], change, period=period)
+    assert picture.left_out == said
+    assert said in picture.told
