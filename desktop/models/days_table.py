@@ -49,6 +49,11 @@ class Unlikely:
 Typed = Literal["kept", "unread", "unlikely"]
 
 
+# Put together once: a table asks for them a hundred times for every key.
+_READ = Qt.ItemFlag.ItemIsEnabled | Qt.ItemFlag.ItemIsSelectable
+_WRITTEN = _READ | Qt.ItemFlag.ItemIsEditable
+
+
 class DaysTable(QAbstractTableModel):
     """Days of the open journal, oldest first, today last.
 
@@ -125,8 +130,7 @@ class DaysTable(QAbstractTableModel):
         """Every cell can be typed into, unless nothing can be changed here."""
         if not index.isValid():
             return Qt.ItemFlag.NoItemFlags
-        flags = Qt.ItemFlag.ItemIsEnabled | Qt.ItemFlag.ItemIsSelectable
-        return flags if self._session.read_only else flags | Qt.ItemFlag.ItemIsEditable
+        return _READ if self._session.read_only else _WRITTEN
 
     def headerData(
         self, section: int, orientation: Qt.Orientation, role: int = Qt.ItemDataRole.DisplayRole

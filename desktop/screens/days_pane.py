@@ -8,12 +8,14 @@ from typing import cast
 from PySide6.QtCore import QEvent, QModelIndex, QObject, QPersistentModelIndex, Qt, Signal
 from PySide6.QtGui import (
     QAction,
+    QColor,
     QContextMenuEvent,
     QFont,
     QFontMetrics,
     QGuiApplication,
     QKeyEvent,
     QKeySequence,
+    QPainter,
     QResizeEvent,
 )
 from PySide6.QtWidgets import (
@@ -22,6 +24,7 @@ from PySide6.QtWidgets import (
     QHeaderView,
     QLineEdit,
     QMenu,
+    QStyle,
     QStyledItemDelegate,
     QStyleOptionViewItem,
     QTableView,
@@ -35,8 +38,8 @@ from desktop.wording.entry import HOLDS_A_VALUE, LAST_DAY
 _ROW_HEIGHT = 1.7
 """Of a line of text; at least 24 pixels to press."""
 _LEAST_HEIGHT = 24
-_BESIDE = "\N{EN SPACE}"
-"""Parts a number from the note beside it."""
+_EDGE = 3
+"""Pixels between a cell's edge and its text, besides the letter that parts a number from the note beside it."""
 _NOTE, _LEAST_NOTE = 14, 7
 """Room for a note, in letters: wanted, and where the pane is narrow."""
 
@@ -69,6 +72,7 @@ class DaysPane(QTableView):
         self.verticalHeader().setSectionResizeMode(QHeaderView.ResizeMode.Fixed)
         self.verticalHeader().setDefaultAlignment(Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter)
         self.horizontalHeader().setHighlightSections(False)
+        self.verticalHeader().setHighlightSections(False)
         self.horizontalHeader().setSectionsMovable(False)
         self.horizontalHeader().setStretchLastSection(False)
         # Without these, rows would keep the least height of a larger text that was shown before.
@@ -250,7 +254,7 @@ class DaysPane(QTableView):
         """Give titles and days the paper of the cells, without the style's raised edges."""
         self.setStyleSheet(f"QTableCornerButton::section {{ background: {paper}; border: none; }}")
         # Titles end where the numbers under them do; the padding of a section, not of its header.
-        inside = 3 + QFontMetrics(self.font()).horizontalAdvance(_BESIDE)
+        inside = _EDGE + QFontMetrics(self.font()).averageCharWidth()
         for header, padding in ((self.horizontalHeader(), inside), (self.verticalHeader(), 12)):
             header.setStyleSheet(
                 f"QHeaderView {{ background: {paper}; border: none; }}"
@@ -275,6 +279,12 @@ class DaysPane(QTableView):
         return sum(self.columnWidth(column) for column in range(self.model().columnCount() - 1))
 
 
+_NOTE_SIDE = Qt.AlignmentFlag.AlignLeft | Qt.AlignmentFlag.AlignVCenter
+_NUMBER_SIDE = Qt.AlignmentFlag.AlignRight | Qt.AlignmentFlag.AlignVCenter
+_SURELY_SHORT = 6
+"""Letters that fit into every column."""
+
+
 class _CellDelegate(QStyledItemDelegate):
     """A plain line of text as editor: the model reads it, in any locale alike."""
 
@@ -292,11 +302,37 @@ class _CellDelegate(QStyledItemDelegate):
                 return True
         return super().eventFilter(editor, event)
 
-    def initStyleOption(self, option: QStyleOptionViewItem, index: QModelIndex | QPersistentModelIndex) -> None:
-        """A number ends, and a note begins, a little inside its column."""
-        super().initStyleOption(option, index)
-        is_note = cast(DaysTable, index.model()).measure(index.column()) is None
-        option.text = f"{_BESIDE}{option.text}" if is_note else f"{option.text}{_BESIDE}"
+    def paint(
+        self, painter: QPainter, option: QStyleOptionViewItem, index: QModelIndex | QPersistentModelIndex
+    ) -> None:
+        """Paint a cell as it stands; a number ends, and a note begins, a little inside its column.
+
+        The style asks for every role of a cell, which takes longer than all else between a key and its number.
+        """
+        model, view = cast(DaysTable, index.model()), cast(QTableView, option.widget)
+        state, rect, palette = option.state, option.rect, option.palette
+        colour = model.data(index, Qt.ItemDataRole.ForegroundRole)
+        face = model.data(index, Qt.ItemDataRole.FontRole)
+        is_chosen = bool(state & QStyle.StateFlag.State_Selected)
+        if is_chosen or state & QStyle.StateFlag.State_MouseOver:
+            view.style().drawPrimitive(QStyle.PrimitiveElement.PE_PanelItemViewItem, option, painter, view)
+        if state & QStyle.StateFlag.State_HasFocus:
+            painter.setPen(palette.link().color())
+            painter.drawRect(rect.adjusted(0, 0, -1, -1))
+        font = face.resolve(view.font()) if isinstance(face, QFont) else view.font()
+        painter.setFont(font)
+        if is_chosen:
+            painter.setPen(palette.highlightedText().color())
+        else:
+            painter.setPen(colour if isinstance(colour, QColor) else palette.text().color())
+        metrics = QFontMetrics(font)
+        inside = _EDGE + metrics.averageCharWidth()
+        is_note = model.measure(index.column()) is None
+        room = rect.adjusted(inside, 0, -_EDGE, 0) if is_note else rect.adjusted(_EDGE, 0, -inside, 0)
+        text = str(model.data(index) or "")
+        if len(text) > _SURELY_SHORT:
+            text = metrics.elidedText(" ".join(text.split()), Qt.TextElideMode.ElideRight, room.width())
+        painter.drawText(room, _NOTE_SIDE if is_note else _NUMBER_SIDE, text)
 
     def createEditor(
         self, parent: QWidget, option: QStyleOptionViewItem, index: QModelIndex | QPersistentModelIndex

@@ -5,7 +5,7 @@ from __future__ import annotations
 from collections.abc import Sequence
 from html import escape
 
-from PySide6.QtCore import QEvent, QUrl
+from PySide6.QtCore import QEvent, QTimer, QUrl
 from PySide6.QtGui import QFontInfo, QResizeEvent
 from PySide6.QtWidgets import QFrame, QTextBrowser, QVBoxLayout, QWidget
 
@@ -16,6 +16,8 @@ from desktop.wording.what_if import TITLE, what_if_sentences
 from desktop.wording.worked_out import worked_out
 
 _HOW = "how"
+_AFTER = 20
+"""Milliseconds."""
 _HEADLINE = 1.5
 """The headline's letters, of the plain ones; in a pane of fewer than so many letters across they are smaller."""
 _LEAST_HEADLINE = 1.1
@@ -41,11 +43,18 @@ class FindingsPane(QWidget):
         layout.setContentsMargins(0, 0, 0, 0)
         layout.setSpacing(0)
         layout.addWidget(self._text, 1)
+        # The chart comes first: the words follow a moment later, and only those of the last review of several.
+        self._fill_later = QTimer(self)
+        self._fill_later.setSingleShot(True)
+        self._fill_later.setInterval(_AFTER)
+        self._fill_later.timeout.connect(self._fill)
         self._fill()
 
     @property
     def text(self) -> str:
         """What is read in the pane."""
+        if self._fill_later.isActive():
+            self._fill()
         return self._text.toPlainText()
 
     def show_review(self, review: Review | None, beside: tuple[Section, ...] = ()) -> None:
@@ -53,7 +62,7 @@ class FindingsPane(QWidget):
         if review is not self._review or beside != self._beside:
             self._review, self._beside = review, beside
             self._choices = ()
-            self._fill()
+            self._fill_later.start()
 
     def show_choices(self, choices: Sequence[Choice]) -> None:
         """Tell what other choices of days would make of the answer that is told."""
@@ -78,6 +87,7 @@ class FindingsPane(QWidget):
         return round(min(size * _HEADLINE, max(size * _LEAST_HEADLINE, self.width() / _ACROSS)))
 
     def _fill(self) -> None:
+        self._fill_later.stop()
         if self._review is None:
             self._text.setHtml("<p>Add a measure to begin (Log, Add a measure).</p>")
             return
