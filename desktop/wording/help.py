@@ -22,6 +22,7 @@ KEY_GROUPS: tuple[tuple[str, tuple[tuple[str, str], ...]], ...] = (
         (
             ("Ctrl+T", "Go to today"),
             ("Ctrl+G", "Go to a day"),
+            ("Ctrl+F", "Find words or a number, and go to the day"),
             ("Ctrl+Z", "Undo the last act"),
             ("Ctrl+Shift+Z", "Redo the act that was taken back"),
             ("Ctrl+H", "See what this day has held"),
