@@ -4,6 +4,10 @@ from __future__ import annotations
 
 import sys
 from collections.abc import Sequence
+from difflib import get_close_matches
+from pathlib import Path
+
+COMMANDS = ("review", "page", "export")
 
 
 def main(arguments: Sequence[str] | None = None) -> int:
@@ -21,9 +25,27 @@ def main(arguments: Sequence[str] | None = None) -> int:
         from desktop.export import main as run_export
 
         return run_export(given)
+    unknown = _unknown_command(given)
+    if unknown:
+        sys.stderr.write(f"{unknown}\n")
+        return 2
     from desktop.app import main as open_window
 
     return open_window(given)
+
+
+def _unknown_command(given: Sequence[str]) -> str:
+    """What is wrong where the first word is neither a command nor a journal to open; ``""`` where all is well."""
+    if not given or given[0].startswith("-") or (len(given) == 1 and Path(given[0]).suffix):
+        return ""
+    word = given[0]
+    near = get_close_matches(word.lower(), COMMANDS, n=1)
+    is_alone = len([one for one in given if not one.startswith("-")]) == 1
+    if Path(word).exists() or (is_alone and not near):
+        return ""
+    if near:
+        return f"There is no command “{word}”. The nearest is dayfence {near[0]}; it has a --help."
+    return f"There is no command “{word}”. There are dayfence review, page and export; each has a --help."
 
 
 if __name__ == "__main__":

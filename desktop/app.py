@@ -7,8 +7,17 @@ import gc
 import sys
 from collections.abc import Sequence
 from pathlib import Path
+from typing import NoReturn
 
 from desktop.display import missing_for_window
+
+
+class _Parser(argparse.ArgumentParser):
+    """Says what is wrong with an argument in one sentence."""
+
+    def error(self, message: str) -> NoReturn:
+        """Called by argparse."""
+        self.exit(2, f"{message[0].upper()}{message[1:]}. See dayfence --help.\n")
 
 
 def main(arguments: Sequence[str]) -> int:
@@ -20,7 +29,7 @@ def main(arguments: Sequence[str]) -> int:
     Returns:
         0, or 2 with one sentence on stderr where no window can be shown.
     """
-    parser = argparse.ArgumentParser(
+    parser = _Parser(
         prog="dayfence",
         description="Keep a daily log, mark a change, and see whether it moved.",
         epilog="Without a window: dayfence review FILE and dayfence page FILE -o page.pdf (each has its --help).",

@@ -24,6 +24,7 @@ from desktop.exchange.reading import Reading
 from desktop.journal import records
 from desktop.journal.journal import Journal
 from desktop.wording.findings import findings_of, worded
+from desktop.wording.in_numbers import for_command, in_numbers
 from desktop.wording.numbers import count
 from desktop.wording.problems import problem_sentence
 
@@ -96,6 +97,7 @@ def _answer(arguments: Sequence[str]) -> int:
     options = _review_parser().parse_args(arguments)
     (asked,) = asked_of(options)
     answer = worded(asked.reviewed(options))
+    answer = replace(answer, findings=tuple(map(for_command, answer.findings)))
     return _print(_as_json(answer) if options.json else _as_text(answer))
 
 
@@ -274,10 +276,10 @@ def _as_json(answer: Review) -> str:
 def _as_text(answer: Review) -> str:
     told = findings_of(answer)
     lines = [*textwrap.wrap(told.headline, _WIDTH), ""]
-    for section in told.sections:
+    for section in (*told.sections, in_numbers(answer)):
         if section.title:
             lines.append(section.title)
-        for sentence in section.sentences:
+        for sentence in map(for_command, section.sentences):
             lines += textwrap.wrap(sentence, _WIDTH, initial_indent="  ", subsequent_indent="  ")
         lines.append("")
     if answer.rows.set_aside:

@@ -332,3 +332,63 @@ def test_a_damaged_journal_is_refused_and_kept(review, sample):
     assert sample.read_bytes() == was
     with pytest.raises(StorageError):
         Store.open(sample)
+
+
+def test_the_text_ends_with_the_change_the_fences_and_the_days_outside(review, tmp_path):
+    (tmp_path / "nile.csv").write_text(nile("without one"))
+    code, out, _ = review("nile.csv", *NILE)
+    assert code == 0
+    block = " ".join(out.partition("In numbers\n")[2].split())
+    assert block.startswith(
+        "Baseline, 1871 to 1898: 28 years, middle 1130, fences 693.8 and 1495.8. "
+        "After “dam”, 1899 to 1970: 72 years, middle 842.5, fences 526 and 1154. "
+        "Years outside the fences in the baseline: none. "
+        "Years outside the old fences since: 1907 (692), 1913 (456), 1940 (676), 1941 (649). "
+    )
+
+
+def test_the_label_of_a_change_is_told(review, walks):
+    _, out, _ = review(walks, "--change", "2031-03-15=stairs")
+    assert "After “stairs”, 15 March to 28 March: 14 days" in " ".join(out.split())
+    _, out, _ = review(walks, "--baseline", "2031-03-01..2031-03-14")
+    assert "After, 15 March to 28 March: 14 days" in " ".join(out.split())
+
+
+def test_few_days_have_no_fences_and_the_text_says_why(review, tmp_path):
+    (tmp_path / "a.csv").write_text("day,minutes\n2031-03-01,5\n2031-03-02,7\n")
+    _, out, _ = review("a.csv")
+    assert "2 days, middle 6; no fences, since there are too few." in " ".join(out.split())
+    (tmp_path / "b.csv").write_text("day,n\n" + "".join(f"2031-03-{day:02d},5\n" for day in range(1, 15)))
+    _, out, _ = review("b.csv")
+    assert "no fences, since too many values are alike." in " ".join(out.split())
+
+
+def test_without_a_window_no_menu_is_named(review, answer, walks):
+    _, out, _ = review(walks)
+    assert "mark the day of a change with --change DAY=LABEL." in " ".join(out.split())
+    assert "(Log" not in out
+    assert not [line for line in answer(walks)["findings"] if "(Log" in line]
+
+
+@pytest.mark.parametrize(
+    ("given", "said"),
+    [
+        (["reveiw", "x.csv"], "There is no command “reveiw”. The nearest is dayfence review; it has a --help."),
+        (["Export"], "There is no command “Export”. The nearest is dayfence export; it has a --help."),
+        (
+            ["sing", "x.csv"],
+            "There is no command “sing”. There are dayfence review, page and export; each has a --help.",
+        ),
+    ],
+)
+def test_a_misspelt_command_is_answered_with_the_nearest(capsys, tmp_path, monkeypatch, given, said):
+    monkeypatch.chdir(tmp_path)
+    assert main(given) == 2
+    assert capsys.readouterr() == ("", f"{said}\n")
+
+
+def test_an_unknown_option_of_the_window_is_one_sentence(capsys):
+    with pytest.raises(SystemExit) as ended:
+        main(["--sampel"])
+    assert ended.value.code == 2
+    assert capsys.readouterr() == ("", "Unrecognized arguments: --sampel. See dayfence --help.\n")
