@@ -26,7 +26,7 @@ from desktop.journal.records import AimWord, Measure
 from desktop.models.ready_made import ready_measures
 from desktop.screens.room import roomy_form
 from desktop.wording.days import full_day
-from desktop.wording.entry import number_text, unread_sentence
+from desktop.wording.entry import number_text, pair_sentence, unread_sentence
 
 _OWN = "My own measure"
 
@@ -66,6 +66,9 @@ class MeasureDialog(QDialog):
         self._problem.setWordWrap(True)
         self._form = roomy_form()
         self._form.addRow("Name", self.title)
+        self.why_fixed = QLabel()
+        self.why_fixed.setWordWrap(True)
+        self._form.addRow("", self.why_fixed)
         self._form.addRow("Unit", self.unit)
         self._form.addRow("Can a day truly be zero?", self.zero)
         self._form.addRow("What is wanted?", self.aim)
@@ -106,6 +109,10 @@ class MeasureDialog(QDialog):
         is_pair = len(ready) > 1
         self.title.setText(" and ".join(measure.title for measure in ready))
         self.title.setEnabled(not is_pair)
+        why = pair_sentence([measure.title for measure in ready]) if is_pair else ""
+        self.why_fixed.setText(why)
+        self.title.setAccessibleDescription(why)
+        self._form.setRowVisible(self.why_fixed, is_pair)
         self.unit.setText(first.unit)
         kinds = [(kind, missed) for _, kind, missed in ZERO_ANSWERS]
         kind = "amount" if first.kind == "count" else first.kind
@@ -115,8 +122,8 @@ class MeasureDialog(QDialog):
 
     def _show_range(self) -> None:
         wants_range = AIMS[self.aim.currentIndex()][1] == "range"
-        for row in (4, 5):
-            self._form.setRowVisible(row, wants_range)
+        for box in (self.low, self.high):
+            self._form.setRowVisible(box, wants_range)
 
     def _read(self) -> str:
         row = self.choices.currentRow()

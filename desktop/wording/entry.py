@@ -76,6 +76,14 @@ def with_changes(said: str, changes: list[Change]) -> str:
     return "; ".join([*([said] if said else []), *marked])
 
 
+def pair_sentence(titles: list[str]) -> str:
+    """Why measures that are written down together are not named while they are set up."""
+    return (
+        f"These are {len(titles)} measures: {' and '.join(titles)}. "
+        "To give one another name, use Log, Settings of this measure, later."
+    )
+
+
 def unread_sentence(unread: list[tuple[date, str]]) -> str:
     """What was typed, could not be read, and would be gone with the window."""
     listed = "; ".join(f"“{text}” on {short_day(day)}" for day, text in unread[:3])

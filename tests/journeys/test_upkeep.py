@@ -308,3 +308,24 @@ def test_a_plan_of_days_a_week_is_told_beside_the_answer_and_taken_back(person):
     window.session.undo()
     assert "Your plan" not in window.workspace.findings.text
     assert window.session.journal.plans == {}
+
+
+def test_why_a_pair_is_not_named_at_first_is_said_beside_the_name(person):
+    person.starts_the_program()
+    seen = []
+
+    def looks(dialog):
+        for row in range(dialog.choices.count()):
+            dialog.choices.setCurrentRow(row)
+            seen.append((dialog.title.isEnabled(), dialog.why_fixed.isVisible(), dialog.why_fixed.text()))
+            assert dialog.title.accessibleDescription() == dialog.why_fixed.text()
+        dialog.reject()
+
+    person.answers(looks)
+    QTest.keyClick(person.window.start_screen.start, Qt.Key.Key_Space)
+    said = (
+        "These are 2 measures: Upper pressure and Lower pressure. "
+        "To give one another name, use Log, Settings of this measure, later."
+    )
+    assert seen.count((False, True, said)) == 1
+    assert seen.count((True, False, "")) == len(seen) - 1
