@@ -19,6 +19,7 @@ class Places:
         half: half the size of each mark.
         radius: of a plain mark.
         words: the boxes of words.
+        walls: lines that no word crosses, or stands beyond from its mark.
     """
 
     x: NDArray[np.float64]
@@ -26,10 +27,14 @@ class Places:
     half: NDArray[np.float64]
     radius: float
     words: list[QRectF] = field(default_factory=list)
+    walls: list[QRectF] = field(default_factory=list)
 
     def is_free(self, box: QRectF, own: int | None = None) -> bool:
         """Whether a box touches no word, and no mark but its own."""
         if any(box.intersects(other) for other in self.words):
+            return False
+        reach = box if own is None else box.united(QRectF(float(self.x[own]), float(self.y[own]), 0.1, 0.1))
+        if any(reach.intersects(wall) for wall in self.walls):
             return False
         inside = (
             (self.x > box.left() - self.half)

@@ -5,12 +5,15 @@ from __future__ import annotations
 from collections.abc import Iterable
 
 import numpy as np
-from PySide6.QtCore import QRectF, Qt
-from PySide6.QtGui import QFontMetricsF, QPainter
+from PySide6.QtCore import QPointF, QRectF, Qt
+from PySide6.QtGui import QFontMetricsF, QPainter, QPainterPath, QPen
 
 from desktop.chart.pieces import SHAPES, Picture
 from desktop.chart.places import Places
 from desktop.chart.style import Style
+
+_RIM = 0.3
+"""Width of the paper around a number, of a letter."""
 
 
 def paint_values(painter: QPainter, plot: QRectF, picture: Picture, places: Places, style: Style) -> None:
@@ -20,7 +23,8 @@ def paint_values(painter: QPainter, plot: QRectF, picture: Picture, places: Plac
     face = style.face(bold=True, part=0.92)
     metrics = QFontMetricsF(face)
     painter.setFont(face)
-    painter.setPen(style.look.colour("ink"))
+    rim = QPen(style.look.colour("paper"), style.size * _RIM)
+    rim.setJoinStyle(Qt.PenJoinStyle.RoundJoin)
     # The farthest days first: where room is short, they keep their numbers.
     middle = float(np.median(places.y))
     for place in sorted(picture.marks.labels, key=lambda at: -abs(float(places.y[at]) - middle)):
@@ -31,6 +35,12 @@ def paint_values(painter: QPainter, plot: QRectF, picture: Picture, places: Plac
         is_high = SHAPES[int(picture.marks.shape[place])] == "above"
         box = places.take_first(_beside(place, width, height, plot, places, is_high=is_high), plot, place)
         if box is not None:
+            # Lines that pass behind a number stop at its rim.
+            outline = QPainterPath()
+            middle = box.center().y() + (metrics.ascent() - metrics.descent()) / 2
+            outline.addText(QPointF(box.center().x() - metrics.horizontalAdvance(text) / 2, middle), face, text)
+            painter.strokePath(outline, rim)
+            painter.setPen(style.look.colour("ink"))
             painter.drawText(box, Qt.AlignmentFlag.AlignCenter | Qt.TextFlag.TextDontClip, text)
 
 

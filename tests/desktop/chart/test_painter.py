@@ -259,3 +259,17 @@ def test_the_name_of_a_change_with_room_stands_after_its_line():
 
 def test_a_change_far_ahead_does_not_stretch_the_chart():
     assert drawn(LOW, 40).uprights == ()
+
+
+def test_a_value_stands_on_its_own_side_of_a_change():
+    # Its neighbours take the places above and below; left of it is the line of the change.
+    picture = drawn([*LOW, 90, 91, 89, *[20] * 4], 14)
+    image = QImage(240, 200, QImage.Format.Format_RGB32)
+    frame = Frame(QRectF(0, 0, 240, 200), picture.x0, picture.x1, picture.y0, picture.y1)
+    painter = Writing(image)
+    paint_plot(painter, frame, picture, Style(LIGHT, QFont(), 13))
+    painter.end()
+    line = frame.x(number(14) - 0.5)
+    values = [box for words, box in painter.words if words in ("90", "91", "89")]
+    assert values
+    assert all(box.left() > line for box in values)
