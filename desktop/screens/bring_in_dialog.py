@@ -3,10 +3,11 @@
 from __future__ import annotations
 
 from collections.abc import Sequence
-from pathlib import Path
+from functools import partial
 from typing import TYPE_CHECKING
 
 from PySide6.QtCore import Qt
+from PySide6.QtGui import QGuiApplication
 from PySide6.QtWidgets import (
     QCheckBox,
     QComboBox,
@@ -23,13 +24,14 @@ from PySide6.QtWidgets import (
 
 from analysis.log import MeasureKind, Missed
 from desktop.edits.bring_in import bring_in
+from desktop.exchange.bring_in import read_table
 from desktop.exchange.limits import for_journal
 from desktop.exchange.reading import ReadColumn, Reading
 from desktop.journal.records import Entry, Measure
 from desktop.screens.bring_in_preview import lines_set_aside, summary_of
-from desktop.screens.reading_table import read_with_questions
+from desktop.screens.reading_table import Read, read_with_questions
 from desktop.screens.room import give_room
-from desktop.wording.bring_in import NOTHING_TO_BRING_IN
+from desktop.wording.bring_in import NOTHING_PASTED, NOTHING_TO_BRING_IN, PASTED_BLOCK
 from desktop.wording.numbers import count, decimals_of
 
 if TYPE_CHECKING:
@@ -48,12 +50,12 @@ class BringInDialog(QDialog):
     """What was read: a row a column with the measure it becomes, and the lines set aside."""
 
     def __init__(
-        self, path: Path, reading: Reading, known: Sequence[Measure], parent: QWidget | None = None
+        self, name: str, reading: Reading, known: Sequence[Measure], parent: QWidget | None = None
     ) -> None:
         """Show what was read.
 
         Args:
-            path: the table's file.
+            name: of the table's file.
             reading: what it came to.
             known: the measures of the open journal; a column of the same name is added to one.
             parent: the window.
@@ -65,7 +67,7 @@ class BringInDialog(QDialog):
         self.chosen: tuple[list[Measure], list[Entry]] | None = None
         self._rows: list[tuple[QCheckBox, QLineEdit, QComboBox, ReadColumn]] = []
         layout = QVBoxLayout(self)
-        summary = QLabel(summary_of(path.name, reading))
+        summary = QLabel(summary_of(name, reading))
         summary.setWordWrap(True)
         layout.addWidget(summary)
         layout.addWidget(self._columns())
@@ -164,16 +166,25 @@ class BringInDialog(QDialog):
         return measures, entries
 
 
-def bring_in_rows(window: MainWindow, path: Path) -> None:
+def bring_in_pasted(window: MainWindow) -> None:
+    """Bring in the table that is on the clipboard; by the same rules as one from a file."""
+    text = QGuiApplication.clipboard().text()
+    if text.strip():
+        bring_in_rows(window, PASTED_BLOCK, partial(read_table, text.encode(errors="replace")))
+    else:
+        window.say(NOTHING_PASTED)
+
+
+def bring_in_rows(window: MainWindow, name: str, read: Read) -> None:
     """Read a table, show what it becomes, and bring in what is chosen.
 
     A new journal is made only then: whoever leaves the preview has none.
     """
-    reading = read_with_questions(window, path)
+    reading = read_with_questions(window, name, read)
     if reading is None:
         return
     known = window.session.journal.columns() if window.session is not None else []
-    dialog = BringInDialog(path, for_journal(reading), known, window)
+    dialog = BringInDialog(name, for_journal(reading), known, window)
     if dialog.exec() != QDialog.DialogCode.Accepted or dialog.chosen is None:
         return
     session = window.session or window.start_journal(window.own_journal)

@@ -16,6 +16,7 @@ from analysis.log import Period
 from desktop.edits.bring_in import BroughtIn
 from desktop.edits.measures import add_measures
 from desktop.errors import DayfenceError, StorageError
+from desktop.exchange.bring_in import read_file
 from desktop.exchange.package import package_place
 from desktop.journal.row_change import RowChange
 from desktop.models.days_table import DaysTable, Unlikely
@@ -26,6 +27,7 @@ from desktop.screens.bring_in_dialog import bring_in_rows
 from desktop.screens.caseload_opening import is_caseload
 from desktop.screens.days_pane import DaysPane
 from desktop.screens.dialogs import MeasureDialog, ask_if_right, ask_to_leave_unread
+from desktop.screens.drops import FileDrops
 from desktop.screens.file_commands import keep_elsewhere, show_caseload
 from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_journal, ask_table
 from desktop.screens.log_commands import LogCommands
@@ -74,6 +76,7 @@ class MainWindow(QMainWindow):
         self._pages.addWidget(self.workspace)
         self.setCentralWidget(self._pages)
         self.log = LogCommands(self)
+        FileDrops(self)
         self._menus = Menus(self)
         self._connect()
         self._clock = QTimer(self)
@@ -158,7 +161,7 @@ class MainWindow(QMainWindow):
         if folder is not None:
             bring_in_package(self, folder)
             return
-        bring_in_rows(self, path)
+        bring_in_rows(self, path.name, partial(read_file, path))
 
     def say_brought(self, brought: BroughtIn) -> None:
         """Show what was brought in, and say how much it was."""

@@ -11,6 +11,7 @@ from PySide6.QtWidgets import QMenu
 
 from analysis.log import PERIODS
 from desktop.edits.days import EmptyKind
+from desktop.screens.bring_in_dialog import bring_in_pasted
 from desktop.screens.chart_pane import PERIOD_WORDS, show_key_of
 from desktop.screens.earlier_copies import show_earlier_copies
 from desktop.screens.erase_dialog import erase_for_good
@@ -73,6 +74,7 @@ class Menus:
         _add(file, "A coach's &caseload…", partial(show_own_caseload, window))
         file.addSeparator()
         _add(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")
+        _add(file, "Bring in the &pasted block as a table…", partial(bring_in_pasted, window), "Ctrl+Shift+V")
         self._reading.append(_add(file, "The &page…", partial(_show_page, window), Keys.Print))
         file.addSeparator()
         self._reading += [

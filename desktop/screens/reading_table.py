@@ -2,14 +2,13 @@
 
 from __future__ import annotations
 
-from pathlib import Path
+from collections.abc import Callable
 from typing import Any
 
 from PySide6.QtCore import QEventLoop, QObject, Qt, Signal
 from PySide6.QtWidgets import QMessageBox, QProgressDialog, QWidget
 
 from desktop.errors import ExchangeError
-from desktop.exchange.bring_in import read_file
 from desktop.exchange.reading import Reading
 from desktop.models.background import Background
 from desktop.wording.problems import choice_label, problem_sentence
@@ -22,6 +21,8 @@ _ANSWERS = {
     "which name column": "name_column",
 }
 """The argument of the importer that answers each of its questions."""
+Read = Callable[..., Reading]
+"""``read_file`` or ``read_table`` with what is to be read."""
 _SHOWN_AFTER = 1_000
 """Milliseconds; a table that is read sooner shows no progress."""
 
@@ -31,7 +32,7 @@ class StoppedError(Exception):
 
 
 class TableReader(QObject):
-    """Reads one file on a thread of its own.
+    """Reads one table on a thread of its own.
 
     Signals:
         advanced: the share of the work that is done, in hundredths.
@@ -46,9 +47,9 @@ class TableReader(QObject):
         self._stopped = False
         self._worker = Background(self)
 
-    def start(self, path: Path, answers: dict[str, Any]) -> None:
+    def start(self, read: Read, answers: dict[str, Any]) -> None:
         """Begin; ``ended`` follows, also after ``stop``."""
-        self._worker.run(lambda: read_file(path, told=self._go_on, **answers), self.ended.emit, self.ended.emit)
+        self._worker.run(lambda: read(told=self._go_on, **answers), self.ended.emit, self.ended.emit)
 
     def stop(self) -> None:
         """Leave off at the next step."""
@@ -60,15 +61,20 @@ class TableReader(QObject):
         self.advanced.emit(round(100 * share))
 
 
-def read_with_questions(parent: QWidget, path: Path) -> Reading | None:
+def read_with_questions(parent: QWidget, name: str, read: Read) -> Reading | None:
     """Read a table, asking whatever only the person can know.
+
+    Args:
+        parent: the window.
+        name: of the file, or of whatever is read.
+        read: reads it, with the answers by name.
 
     Returns:
         None when the person did not answer or stopped it, or the file cannot be brought in; that was said.
     """
     answers: dict[str, Any] = {}
     while True:
-        outcome = _read(parent, path, answers)
+        outcome = _read(parent, name, read, answers)
         if isinstance(outcome, Reading):
             return outcome
         if isinstance(outcome, StoppedError):
@@ -85,9 +91,9 @@ def read_with_questions(parent: QWidget, path: Path) -> Reading | None:
         answers[argument] = answer
 
 
-def _read(parent: QWidget, path: Path, answers: dict[str, Any]) -> Reading | Exception:
+def _read(parent: QWidget, name: str, read: Read, answers: dict[str, Any]) -> Reading | Exception:
     reader = TableReader(parent)
-    progress = QProgressDialog(f"Reading {path.name}", "Stop", 0, 100, parent)
+    progress = QProgressDialog(f"Reading {name}", "Stop", 0, 100, parent)
     progress.setWindowTitle("Bring in a table")
     progress.setWindowModality(Qt.WindowModality.WindowModal)
     progress.setMinimumDuration(_SHOWN_AFTER)
@@ -100,7 +106,7 @@ def _read(parent: QWidget, path: Path, answers: dict[str, Any]) -> Reading | Exc
     reader.ended.connect(outcomes.append)
     reader.ended.connect(waiting.quit)
     progress.canceled.connect(reader.stop)
-    reader.start(path, answers)
+    reader.start(read, answers)
     waiting.exec()
     progress.close()
     progress.deleteLater()

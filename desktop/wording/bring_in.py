@@ -39,6 +39,8 @@ REASONS: dict[str, str] = {
 }
 """Why a line was set aside, by the reason the importer gives."""
 
+PASTED_BLOCK = "the pasted block"
+NOTHING_PASTED = "There is no text on the clipboard. Copy a block of cells first."
 NOTHING_TO_BRING_IN = "Nothing chosen here holds a value that can be kept. The list above says why."
 
 

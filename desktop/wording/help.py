@@ -43,6 +43,7 @@ KEY_GROUPS: tuple[tuple[str, tuple[tuple[str, str], ...]], ...] = (
             ("Ctrl+E", "Settings of this measure"),
             ("Ctrl+Shift+Left", "Move the column left"),
             ("Ctrl+Shift+Right", "Move the column right"),
+            ("Ctrl+Shift+V", "Bring in the block that was copied elsewhere, as a table"),
             ("Ctrl+I", "Bring in a table"),
             ("Ctrl+P", "The page for an appointment"),
         ),

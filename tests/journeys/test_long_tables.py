@@ -1,17 +1,17 @@
 """A long table at the window: read off the screen's thread, and stopped by the person."""
 
 import threading
+from functools import partial
 
 from PySide6.QtWidgets import QProgressDialog, QWidget
 
 from desktop.exchange.bring_in import read_file
 from desktop.exchange.reading import Reading
-from desktop.screens import reading_table
 from desktop.screens.bring_in_preview import lines_set_aside, summary_of
 from desktop.screens.reading_table import StoppedError, TableReader, read_with_questions
 
 
-def test_a_table_is_read_off_the_screens_thread(qtbot, tmp_path, monkeypatch):
+def test_a_table_is_read_off_the_screens_thread(qtbot, tmp_path):
     table = tmp_path / "log.csv"
     table.write_text("day,minutes\n2024-01-01,30\n")
     threads = []
@@ -20,10 +20,9 @@ def test_a_table_is_read_off_the_screens_thread(qtbot, tmp_path, monkeypatch):
         threads.append(threading.current_thread())
         return read_file(*given, **answers)
 
-    monkeypatch.setattr(reading_table, "read_file", watched)
     parent = QWidget()
     qtbot.addWidget(parent)
-    assert isinstance(read_with_questions(parent, table), Reading)
+    assert isinstance(read_with_questions(parent, table.name, partial(watched, table)), Reading)
     assert threads
     assert threads[0] is not threading.main_thread()
 
@@ -35,7 +34,7 @@ def test_progress_is_told_and_reaches_the_end(qtbot, tmp_path):
     shares = []
     reader.advanced.connect(shares.append)
     with qtbot.waitSignal(reader.ended) as ended:
-        reader.start(table, {})
+        reader.start(partial(read_file, table), {})
     assert isinstance(ended.args[0], Reading)
     assert shares == sorted(shares)
     assert len(shares) >= 4
@@ -47,7 +46,7 @@ def test_a_stopped_reading_ends_without_a_table(qtbot, tmp_path):
     reader = TableReader()
     reader.stop()
     with qtbot.waitSignal(reader.ended) as ended:
-        reader.start(table, {})
+        reader.start(partial(read_file, table), {})
     assert isinstance(ended.args[0], StoppedError)
 
 
@@ -71,9 +70,8 @@ def test_stop_leaves_the_window_as_it_was(qtbot, tmp_path, monkeypatch):
             pressed.set()
 
     plain = QProgressDialog.setValue
-    monkeypatch.setattr(reading_table, "read_file", slow)
     monkeypatch.setattr(QProgressDialog, "setValue", stop)
-    assert read_with_questions(parent, table) is None
+    assert read_with_questions(parent, table.name, partial(slow, table)) is None
 
 
 def test_a_preview_tells_every_line_set_aside_up_to_a_limit(tmp_path):
