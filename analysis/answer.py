@@ -152,6 +152,18 @@ class HowMuch:
 
 
 @dataclass(frozen=True)
+class WeekTotal:
+    """The median of the totals of whole weeks, before and after; their shift's range; how many weeks."""
+
+    before: float
+    after: float
+    low: float
+    high: float
+    weeks_before: int
+    weeks_after: int
+
+
+@dataclass(frozen=True)
 class Goal:
     """Days inside the range aimed at, out of days, before and after; the difference of shares with its range."""
 
@@ -213,10 +225,17 @@ class WeekdayRhythm:
 
 @dataclass(frozen=True)
 class Switches:
-    """With how many of the changes the level moved, to and fro."""
+    """With how many of the changes the level moved.
+
+    Attributes:
+        moved: changes whose own comparison, with the stretch before it, is a claim.
+        of: changes with enough days on both sides for an answer.
+        to_and_fro: each move is the other way from the move before it.
+    """
 
     moved: int
     of: int
+    to_and_fro: bool = False
 
 
 @dataclass(frozen=True)
@@ -274,6 +293,7 @@ class Answer:
     slope: Slope | None = None
     how_often: HowOften | None = None
     how_much: HowMuch | None = None
+    week_total: WeekTotal | None = None
     goal: Goal | None = None
     at_level: AtLevel | None = None
     carry_over: float | None = None

@@ -5,6 +5,7 @@ from __future__ import annotations
 from collections.abc import Iterable, Sequence
 from dataclasses import replace
 from datetime import date
+from itertools import pairwise
 
 import numpy as np
 
@@ -43,6 +44,7 @@ from analysis.questions.did_it_move import at_most
 from analysis.questions.is_it_so_still import LATELY, still_state
 from analysis.questions.since_when import plausible_splits
 from analysis.questions.steadier import spread_change
+from analysis.questions.week_totals import week_totals
 from analysis.series.carry_over import carry_over, widening
 from analysis.series.season import without_season
 from analysis.series.slope import common_slope
@@ -228,14 +230,11 @@ def _listed(comparisons: Sequence[_Compared], befores: Sequence[_Compared]) -> I
 
 
 def _switches(compared: Sequence[_Compared]) -> Switches:
-    """How many of the changes the level moved with, each the other way from the one before."""
-    ways = [one.answer.direction if one.level is not None and one.level.is_claim else "none" for one in compared]
-    moved = 0
-    expected = ways[0]
-    for way in ways:
-        moved += way == expected and way != "none"
-        expected = "less" if expected == "more" else "more"
-    return Switches(moved, len(ways))
+    """How many of the changes the level moved with, of those with enough days on both sides."""
+    enough = [one for one in compared if one.level is not None and one.answer.sureness != "too early"]
+    ways = [one.answer.direction for one in enough if one.level is not None and one.level.is_claim]
+    to_and_fro = len(ways) > 1 and all(one != other for one, other in pairwise(ways))
+    return Switches(len(ways), len(enough), to_and_fro)
 
 
 def _capped(answer: Answer) -> Answer:
@@ -271,11 +270,12 @@ def _answer(
         sureness=level.sureness,
         direction=level.direction,
         since=since,
-        still=_still(level),
+        still=_still(sides, level),
         spread_change=SpreadChange(spread.word, spread.p) if spread else None,
         slope=_slope(level.sides),
         how_often=_how_often(sides, level.widened),
         how_much=_how_much(sides, level.widened),
+        week_total=week_totals(sides),
         goal=_goal(sides, level.widened),
         at_level=days_at_level(sides, level.estimate or level.share - 0.5, level.widened),
         carry_over=level.carry_over,
@@ -301,12 +301,13 @@ def _days_in_range(values: Values, aim: tuple[float, float]) -> int:
     return int(np.sum((values >= aim[0]) & (values <= aim[1])))
 
 
-def _still(level: Level) -> Still | None:
+def _still(sides: Sides, level: Level) -> Still | None:
     after = level.sides.known_after
     state = still_state(level.sides.known_before, after)
     if state is None:
         return None
-    lately = level.sides.after[-LATELY:]
+    # The last days as they were written down, whatever was taken off to compare them.
+    lately = sides.after[-LATELY:]
     lately = lately[~np.isnan(lately)]
     return Still(state, fourths(lately).median if len(lately) else None)
 

@@ -1,12 +1,14 @@
 """The closed list of doubts: what in this log could explain the answer, or keep it from being one.
 
 Each says in its own docstring when it is raised and how the answer is computed again. A doubt alters when a claim
-is lost or turned round by it; a device mark at the change always does, several changes in one day never do.
+is lost or turned round by it; a device mark at the change always does, several changes in one day never do. Where
+nothing is claimed, there is nothing to lose: such a doubt is named, and no effect is said of it.
 """
 
 from __future__ import annotations
 
 from collections.abc import Callable
+from dataclasses import replace
 
 from analysis.answer import Doubt
 from analysis.doubts.course import first_days, odd_day, season, slope_before, worst_spell
@@ -58,4 +60,10 @@ def doubts_of(seen: Seen) -> tuple[Doubt, ...]:
     """The doubts this log gives reason for, at most five: those that alter the answer first."""
     raised = [doubt for look in CATALOGUE if (doubt := look(seen)) is not None]
     raised.sort(key=lambda doubt: not doubt.alters)
+    if not seen.is_claim:
+        raised = [doubt if doubt.alters else _untested(doubt) for doubt in raised]
     return tuple(raised[:MOST_SHOWN])
+
+
+def _untested(doubt: Doubt) -> Doubt:
+    return replace(doubt, fields=(*doubt.fields, ("untested", "no claim")))

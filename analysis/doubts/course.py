@@ -16,6 +16,11 @@ WEEK = 7
 WEEKS_FOR_WORST_SPELL = 5
 DAYS_FOR_FIRST_WEEK = 21
 SEASON_DAYS = 100
+YEAR, MOST_OF_A_YEAR = 365, 300
+_SAME_WEEKS = 14
+"""Days to either side that are still the same time of the year."""
+_LOOKED_AT = 60
+"""Days after that the circle of the year is looked at from; more would make a table of every pair."""
 _SLOPE_BELOW = 0.10
 _PART_OF_SHIFT = 0.6
 """A slope that would make less than this part of the shift does not explain it."""
@@ -121,15 +126,31 @@ def odd_day(seen: Seen) -> Doubt | None:
 
 
 def season(seen: Seen) -> Doubt | None:
-    """The middles of the two stretches lie months apart, so that the season differs too."""
+    """The middles of the two stretches lie months apart, or the days after are of a part of the year only.
+
+    Behind a baseline of a whole year the answer is computed again against the same weeks of the year before.
+    """
     if seen.sides is None or seen.measure.period == "year":
         return None
     before, after = seen.sides.before_days, seen.sides.after_days
-    apart = float(np.median(after) - np.median(before))
-    # A baseline of a whole year holds every season, and its middle is none of them.
-    if not apart >= SEASON_DAYS or len(before) * _days_a_period(seen) >= 365:
+    if not len(after):
         return None
-    return Doubt("season", (("months", round(apart / 30.4)),), alters=False)
+    if len(before) * _days_a_period(seen) >= YEAR:
+        return _part_of_the_year(seen)
+    apart = float(np.median(after) - np.median(before))
+    return Doubt("season", (("months", round(apart / 30.4)),), alters=False) if apart >= SEASON_DAYS else None
+
+
+def _part_of_the_year(seen: Seen) -> Doubt | None:
+    assert seen.sides is not None
+    before, after = seen.sides.before_days, seen.sides.after_days
+    if len(after) * _days_a_period(seen) >= MOST_OF_A_YEAR:
+        return None
+    # Around the circle of the year, how far each day before is from the nearest day after.
+    away = np.abs((before[:, None] - after[None, :: max(1, len(after) // _LOOKED_AT)]) % YEAR)
+    same = np.minimum(away, YEAR - away).min(axis=1) <= _SAME_WEEKS
+    nothing = np.zeros(len(after), dtype=bool)
+    return Doubt("season", (("same", int(same.sum())),), seen.turns_on_days(~same, nothing))
 
 
 def _days_a_period(seen: Seen) -> int:

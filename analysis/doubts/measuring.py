@@ -23,7 +23,8 @@ def few_days(seen: Seen) -> Doubt | None:
 def no_spread(seen: Seen) -> Doubt | None:
     """Half of the baseline or more shares one value, so that fences would have no width."""
     baseline = seen.baseline
-    if baseline.observations < FEWEST_BEFORE or baseline.fourth_spread != 0:
+    # Between a yes and a no there are no fences to draw.
+    if seen.measure.kind == "yes/no" or baseline.observations < FEWEST_BEFORE or baseline.fourth_spread != 0:
         return None
     assert baseline.median is not None
     return Doubt("no_spread", (("value", baseline.median), ("days", baseline.observations)), alters=False)

@@ -10,7 +10,7 @@ import numpy as np
 from numpy.typing import NDArray
 
 from analysis.answer import Stretch
-from analysis.log import Change, Log, Measure
+from analysis.log import Change, Log, Measure, Values
 from analysis.questions.did_it_move import FEWEST_AFTER, FEWEST_BEFORE
 from analysis.sides import Level, Sides, compare
 from analysis.slots import OtherSlots
@@ -92,7 +92,11 @@ class Seen:
         # Seeded by the days left out: the same log gives the same answer.
         rng = np.random.default_rng([int(before.sum()), int(after.sum()), len(before), len(after)])
         lost = sum(
-            self.turns_on(self.sides.without(_as_many(before, rng), _as_many(after, rng)))
+            self.turns_on(
+                self.sides.without(
+                    _as_many(before, self.sides.before, rng), _as_many(after, self.sides.after, rng)
+                )
+            )
             for _ in range(_RANDOM_DRAWS)
         )
         return lost <= _RANDOM_DRAWS // 3
@@ -108,5 +112,9 @@ class Seen:
         return () if enough else (("left", "too few"),)
 
 
-def _as_many(chosen: NDArray[np.bool_], rng: np.random.Generator) -> NDArray[np.bool_]:
-    return rng.permutation(chosen)
+def _as_many(chosen: NDArray[np.bool_], values: Values, rng: np.random.Generator) -> NDArray[np.bool_]:
+    """As many days with a value as were chosen, at random; leaving out a blank day leaves out nothing."""
+    known = np.flatnonzero(~np.isnan(values))
+    drawn = np.zeros(len(values), dtype=bool)
+    drawn[rng.permutation(known)[: int(chosen[known].sum())]] = True
+    return drawn

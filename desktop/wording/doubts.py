@@ -25,7 +25,8 @@ def doubt_sentence(doubt: Doubt, speech: Speech) -> str:
     """
     fact, same, other = SENTENCES[doubt.name]
     fields = dict(doubt.fields)
-    effect = other if doubt.alters else same
+    # Where nothing is claimed, nothing was computed again that could have been lost.
+    effect = other if doubt.alters else "" if "untested" in fields else same
     if fields.get("left") == "too few" and not doubt.alters:
         effect = _TOO_FEW
     return f"{fact(fields, speech)} {effect}".strip()
@@ -135,6 +136,8 @@ def _equal_in_row(fields: Fields, speech: Speech) -> str:
 
 
 def _season(fields: Fields, _speech: Speech) -> str:
+    if "same" in fields:
+        return "The days since are of one part of the year, those before are of all of it."
     return (
         f"The two stretches lie about {int(fields['months'])} months apart, "
         "so the season may be part of the difference."
@@ -204,7 +207,11 @@ SENTENCES: dict[str, tuple[Told, str, str]] = {
     "close_change": (_close_change, "", ""),
     "several_changes": (_several_changes, "", ""),
     "equal_in_row": (_equal_in_row, _SAME, _OTHER),
-    "season": (_season, "", ""),
+    "season": (
+        _season,
+        "",
+        "Held against the same weeks of the year before, the answer is not sure.",
+    ),
     "round_numbers": (_round_numbers, "", ""),
 }
 """For every doubt of the catalogue its fact, and its effect when it does not alter the answer and when it does."""

@@ -4,8 +4,9 @@ from __future__ import annotations
 
 import numpy as np
 
-from analysis.answer import AtLevel, Carried, HowMuch, HowOften, Review, Shift, Since, StillNeeded
+from analysis.answer import AtLevel, Carried, HowMuch, HowOften, Review, Shift, Since, Still, StillNeeded
 from analysis.questions.did_it_move import CLAIMS, FEWEST_AFTER, FEWEST_BEFORE
+from desktop.wording.how_often import much_range, often_bound, often_range, often_words, week_words
 from desktop.wording.numbers import Speech, chance_in_100, count
 from desktop.wording.telling import Findings, Section, Teller
 
@@ -67,13 +68,15 @@ class MovedTeller(Teller):
         sections = [Section("Did it move?", tuple(self._did_it_move()))]
         if answer.shift is not None:
             sections.append(Section("By how much?", tuple(self._by_how_much())))
-        if answer.carried is not None and after.observations:
+        # Fences mean nothing between a yes and a no.
+        if answer.carried is not None and after.observations and self.review.measure.kind != "yes/no":
             day_by_day = outside_sentence(answer.carried, after.observations, self.speech)
             if self._is_slope:
                 day_by_day = f"It moves steadily, so {self.speech.many} outside the old fences say nothing here."
             sections.append(Section(f"{self.speech.one.capitalize()} by {self.speech.one}", (day_by_day,)))
         if answer.sureness in (*CLAIMS, "leaning") and not self._is_slope:
-            since = (self._since(answer.since),) if answer.since is not None else ()
+            # Of a move that has gone back the likeliest day may be the one on which it went back.
+            since = (self._since(answer.since),) if answer.since is not None and not self._is_faded else ()
             sections.append(Section("Since when?", (*since, *self._still())))
         elif not self._is_slope and answer.still is not None and answer.still.state in ("faded", "come late"):
             sections.append(Section("Is it so still?", tuple(self._still())))
@@ -89,6 +92,8 @@ class MovedTeller(Teller):
         match self.answer.sureness:
             case "too early":
                 return "Too early to say if it moved."
+            case "cannot tell" if self._moved_with_changes:
+                return f"It moved with {self._switched()}."
             case "cannot tell":
                 return "This log cannot tell if it moved."
             case "leaning" if self._is_slope:
@@ -101,6 +106,18 @@ class MovedTeller(Teller):
                 return "It moved at first, and has gone back since."
             case _:
                 return f"It moved: {self._levels()}"
+
+    @property
+    def _moved_with_changes(self) -> bool:
+        """Whether it moved with a change, though the last stretch is no other than the first."""
+        switches = self.review.switches
+        return switches is not None and switches.moved > 0 and not self._is_slope
+
+    def _switched(self) -> str:
+        switches = self.review.switches
+        assert switches is not None
+        changes = "the change" if switches.of == 1 else f"{switches.moved} of {switches.of} changes"
+        return f"{changes}, to and fro" if switches.to_and_fro else changes
 
     @property
     def _is_faded(self) -> bool:
@@ -123,7 +140,7 @@ class MovedTeller(Teller):
             if much is not None and _is_told_by_amount(answer.how_often, much):
                 is_much = f"{speech.with_unit(much.after)} on a {speech.one} with some"
                 return f"{is_much}, {speech.number(much.before)} before."
-            return f"on {self._often(answer.how_often)}"
+            return f"on {often_words(answer.how_often, speech)}."
         assert before.median is not None
         assert after.median is not None
         was_middle, is_middle = speech.number(before.median), speech.with_unit(after.median)
@@ -137,10 +154,6 @@ class MovedTeller(Teller):
         if speech.number(after.median) == was_middle and answer.shift is not None:
             return self._beyond_old_middle(before.median)
         return f"{is_middle} on a middle {speech.one}, {was_middle} before."
-
-    def _often(self, often: HowOften) -> str:
-        (done, of), (was, was_of) = often.after, often.before
-        return f"{done} of {of} {self.speech.many} there was some, on {was} of {was_of} before."
 
     def _beyond_old_middle(self, old: float) -> str:
         """Where the two middles are alike: how many periods lie beyond the old one, whatever is wanted."""
@@ -164,7 +177,8 @@ class MovedTeller(Teller):
             return [
                 f"There {'is' if before.observations == 1 else 'are'} {speech.periods(before.observations)} "
                 f"with a value before the change and {after.observations} after. An answer needs "
-                f"{FEWEST_BEFORE} before and {FEWEST_AFTER} after; 14 before is better."
+                f"{FEWEST_BEFORE} before and {FEWEST_AFTER} after; 14 before is better.",
+                *self._switches(),
             ]
         assert answer.luck is not None
         luck = (
@@ -191,19 +205,17 @@ class MovedTeller(Teller):
         assert shift is not None
         told = []
         if answer.how_often is not None:
-            if answer.how_much is not None and _is_told_by_amount(answer.how_often, answer.how_much):
-                told.append(f"On {self._often(answer.how_often)}")
-            elif answer.how_much is not None:
-                told.append(
-                    f"On those {speech.many} the middle was {speech.number(answer.how_much.before)} before "
-                    f"and is {speech.with_unit(answer.how_much.after)} since."
-                )
+            told += self._by_share(answer.how_often)
         elif answer.sureness not in CLAIMS and before.median is not None and after.median is not None:
             told.append(
                 f"A middle {speech.one} was {speech.with_unit(before.median)} before and is "
                 f"{speech.number(after.median)} since."
             )
-        if shift.low == shift.high == 0:
+        if answer.how_often is not None:
+            pass  # The middle of days of which many hold nothing is no amount a day.
+        elif shift.low == shift.high == 0 and answer.sureness in CLAIMS:
+            pass  # It is days at a level that moved, which are told below.
+        elif shift.low == shift.high == 0:
             told.append(f"{speech.one.capitalize()} for {speech.one} there is no difference to see.")
         else:
             told.append(f"The difference {self._how_likely(shift)} {speech.between(shift.low, shift.high)}.")
@@ -225,6 +237,18 @@ class MovedTeller(Teller):
             way = speech.way(1 if answer.direction == "more" else -1).capitalize()
             told.append(f"{way}, which is {'' if wanted == answer.direction else 'not '}the way you wanted.")
         return told
+
+    def _by_share(self, often: HowOften) -> list[str]:
+        """How often and how much on those days, each with its range, and what a week comes to."""
+        answer, speech = self.answer, self.speech
+        much, total = answer.how_much, answer.week_total
+        is_in_headline = answer.sureness in (*CLAIMS, "leaning") and not self._is_faded and not self._is_slope
+        by_amount = much is not None and _is_told_by_amount(often, much)
+        told = [] if is_in_headline and not by_amount else [f"On {often_words(often, speech)}."]
+        if answer.sureness != "too early":
+            told.append(often_range(often, speech))
+        told += [much_range(much, speech)] if much is not None else []
+        return [*told, *([week_words(total, speech)] if total is not None else [])]
 
     def _at_level(self, days: AtLevel) -> str:
         level = f"{self.speech.number(days.level)} {days.beyond}"
@@ -248,7 +272,7 @@ class MovedTeller(Teller):
     def _how_likely(self, shift: Shift) -> str:
         if self.answer.sureness == "too early":
             return "could be"
-        if shift.low < 0 < shift.high:
+        if shift.low < 0 < shift.high or self.answer.sureness == "cannot tell":
             return "may be"
         is_one_number = self.speech.number(shift.low) == self.speech.number(shift.high)
         return "is" if is_one_number else "is probably"
@@ -314,7 +338,15 @@ class MovedTeller(Teller):
         if still is None or still.last_14 is None:
             return []
         lately = f"The middle of the last 14 {speech.many} is {speech.with_unit(still.last_14)}."
+        if self.answer.how_often is not None:
+            lately = ""
+        return [one.strip() for one in self._state(still, lately)]
+
+    def _state(self, still: Still, lately: str) -> list[str]:
+        speech = self.speech
         match still.state:
+            case "faded" if self.answer.sureness not in CLAIMS:
+                return [f"It may have moved at first; if so, it has gone back since. {lately}"]
             case "faded":
                 return [f"It moved at first and has gone back since. {lately}"]
             case "growing":
@@ -329,8 +361,18 @@ class MovedTeller(Teller):
         switches = self.review.switches
         if switches is None:
             return []
-        times = f"{switches.moved} of {switches.of} times"
-        return [f"{switches.of} changes are marked; it moved with them, to and fro, {times}."]
+        marked = len(self.review.stretches) - 1
+        early = marked - switches.of
+        told = [f"{marked} changes are marked."]
+        if switches.of:
+            told.append(f"It moved with {self._switched()}.")
+        if early:
+            told.append(f"{early} of them {'has' if early == 1 else 'have'} too few days yet.")
+        if self.answer.how_often is None:
+            middles = [one.median for one in self.review.stretches if one.median is not None]
+            listed = ", then ".join(self.speech.number(one) for one in middles)
+            told.append(f"The middle, stretch by stretch: {listed}.")
+        return [" ".join(told)]
 
     def _settle(self) -> str | None:
         speech, before, after, answer = self.speech, self.before, self.after, self.answer
@@ -357,12 +399,17 @@ class MovedTeller(Teller):
                 return f"With this baseline, no number of {speech.many} after can show a move of {amount}."
             if needed.days:
                 return f"{self._days_more(needed)} would most often show a move of {amount}."
-            return f"There are enough {speech.many} to see a move of {amount}; this log does not show one."
-        if answer.sureness == "cannot tell" and answer.bound:
-            return (
-                f"If it changed at all, it was by less than {speech.with_unit(answer.bound)}{speech.rate()}. "
-                "More days would narrow this."
-            )
+            shift = answer.shift
+            if shift is not None and max(abs(shift.low), abs(shift.high)) < needed.for_amount:
+                return f"There are enough {speech.many} to see a move of {amount}; this log does not show one."
+            return f"The difference may still be {amount}, or less. More {speech.many} would narrow this."
+        if answer.sureness != "cannot tell" or self._is_faded or self._moved_with_changes:
+            return None
+        if answer.how_often is not None:
+            return f"{often_bound(answer.how_often, speech)} More {speech.many} would narrow this."
+        if answer.bound:
+            bound = f"{speech.with_unit(answer.bound)}{speech.rate()}"
+            return f"If it changed at all, it was by less than {bound}. More {speech.many} would narrow this."
         return None
 
     def _days_more(self, needed: StillNeeded) -> str:

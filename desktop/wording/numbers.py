@@ -63,7 +63,8 @@ def chance_in_100(p: float) -> str:
         return "fewer than 1 of 100"
     if p > 0.99:
         return "more than 99 of 100"
-    return f"about {round(100 * p)} of 100"
+    # Rounded as the answer rounds it.
+    return f"about {math.floor(100 * p + 0.5)} of 100"
 
 
 @dataclass(frozen=True)
@@ -137,6 +138,13 @@ class Speech:
                 return f"about {self.sized(low)}{self.rate()}"
             return f"between {self.number(near)} and {self.sized(math.copysign(far, low + high))}{self.rate()}"
         return f"anywhere from {self.sized(low)} to {self.sized(high)}{self.rate()}"
+
+    def between_amounts(self, low: float, high: float) -> str:
+        """The range of a difference that is of no period: ``between 20 and 60 minutes more``."""
+        near, far = sorted((abs(low), abs(high)))
+        if self.number(near) == self.number(far):
+            return f"about {self.sized(low or high)}"
+        return f"between {self.number(near)} and {self.sized(math.copysign(far, low + high))}"
 
     def periods(self, number: int) -> str:
         """``1 day``, ``14 days``, ``3 weeks``."""

@@ -8,7 +8,7 @@ from datetime import date
 import numpy as np
 
 from analysis.answer import Review
-from desktop.wording.days import DayWords
+from desktop.wording.days import DayWords, full_day
 from desktop.wording.doubts import doubt_sentence
 from desktop.wording.numbers import Speech, decimals_for
 
@@ -59,7 +59,8 @@ class Teller:
     def to_come(self) -> list[str]:
         """Changes that are marked for days still to come."""
         return [
-            f"A change is marked for {self.days.day(day)}, which is still to come." for day in self.review.to_come
+            f"A change is marked for {full_day(date.fromordinal(day))}, which is still to come."
+            for day in self.review.to_come
         ]
 
     def season(self) -> list[str]:

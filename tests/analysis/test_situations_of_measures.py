@@ -283,7 +283,7 @@ def test_a_log_typed_in_one_evening_is_not_told_to_stand_without_its_days():
 def test_a_change_still_to_come_is_named():
     log = Log.from_pairs([(day(place), value) for place, value in enumerate(days(78, 28, 20))])
     answer = review(log, [Change(day(60), "earlier bed")], today=day(27))
-    assert "A change is marked for 2 May, which is still to come." in " ".join(findings_of(answer).lines())
+    assert "A change is marked for 2 May 2031, which is still to come." in " ".join(findings_of(answer).lines())
 
 
 def test_a_day_out_of_line_stands_beside_what_luck_puts_there():

@@ -33,10 +33,17 @@ def test_a_doubt_is_raised_and_told_on_screen_and_in_json(name):
 @pytest.mark.parametrize("name", [name for name in NAMES if SENTENCES[name][1]])
 def test_a_doubt_that_is_computed_again_tells_its_effect(name):
     review, doubt = raised(name)
-    told = [doubt_sentence(Doubt(name, doubt.fields, alters), speech_of(review)) for alters in (False, True)]
+    fields = tuple(field for field in doubt.fields if field[0] != "untested")
+    told = [doubt_sentence(Doubt(name, fields, alters), speech_of(review)) for alters in (False, True)]
     assert told[0] != told[1]
     assert told[0].endswith(SENTENCES[name][1])
     assert told[1].endswith(SENTENCES[name][2])
+
+
+def test_no_effect_is_said_where_nothing_is_claimed():
+    review, doubt = raised("first_days")
+    assert dict(doubt.fields)["untested"] == "no claim"
+    assert doubt_sentence(doubt, speech_of(review)).endswith("as in many new logs.")
 
 
 @pytest.mark.parametrize("name", NAMES)

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 import re
 from dataclasses import replace
 from datetime import date, timedelta
@@ -9,7 +10,8 @@ from datetime import date, timedelta
 import pytest
 
 from analysis import Change, Log, Measure, Review, review
-from analysis.answer import Carried, Slope, StillNeeded
+from analysis.answer import Carried, Slope, StillNeeded, Switches
+from analysis.pipeline import in_100
 from desktop.wording.cautions import CAUTION
 from desktop.wording.days import MONTHS
 from desktop.wording.findings import findings_of, worded
@@ -187,7 +189,11 @@ def test_a_log_of_many_zeros_is_told_by_how_often():
     three, five = [0, 40, 0, 35, 0, 30, 0] * 4, [30, 40, 0, 35, 30, 30, 0] * 4
     said = told(three + five, 28, kind="amount", missed="zero", unit="minutes")
     assert "on 20 of 28 days there was some, on 12 of 28 before." in said.splitlines()[0]
-    assert "On those days the middle was 35 before and is 30 minutes since." in said
+    assert "On those days the middle was 35 before and is 30 minutes since" in said
+    assert "That is probably between 3 and 50 days more in 100." in said
+    assert "A middle week came to 105 before and comes to 165 minutes since: about 60 minutes more." in said
+    # The middle of all days together is no amount that was ever done.
+    assert "The difference is" not in said
 
 
 def test_a_log_of_many_zeros_that_moved_in_amount_alone_is_told_by_how_much():
@@ -252,7 +258,13 @@ def test_a_move_that_began_before_the_change_says_so():
 
 
 def test_what_became_of_the_move_is_told():
-    assert "It moved at first and has gone back since." in told(LOW + HIGH + LOW, 14, **MINUTES)
+    faded = told(LOW + HIGH + LOW, 14, **MINUTES)
+    assert faded.startswith("It may have moved at first. If so, it has gone back.")
+    assert "It may have moved at first; if so, it has gone back since." in faded
+    # One strength everywhere, and no start of what is over, nor a bound on what there was.
+    assert "It moved at first" not in faded
+    assert "Most likely since" not in faded
+    assert "If it changed at all" not in faded
     assert "It came late: the first days after the change were as before." in told(LOW + LOW + HIGH, 14, **MINUTES)
     assert "It is so still. The middle of the last 14 days is 38.5 minutes." in told(LOW + HIGH, 14, **MINUTES)
 
@@ -260,7 +272,54 @@ def test_what_became_of_the_move_is_told():
 def test_to_and_fro_is_told_with_its_count():
     log = log_of(LOW + HIGH + LOW, **MINUTES)
     said = findings_of(review(log, [Change(day(14), "on"), Change(day(28), "off")])).lines()
-    assert "2 changes are marked; it moved with them, to and fro, 2 of 2 times." in said
+    assert said[0] == "It moved with 2 of 2 changes, to and fro."
+    told_ = (
+        "2 changes are marked. It moved with 2 of 2 changes, to and fro. "
+        "The middle, stretch by stretch: 20.5, then 38.5, then 20.5."
+    )
+    assert told_ in said
+    assert not [line for line in said if "cannot tell if" in line or "If it changed at all" in line]
+
+
+@pytest.mark.parametrize("way", [1, -1])
+def test_steps_the_same_way_are_no_to_and_fro_and_turning_the_log_over_changes_no_count(way):
+    steps = [way * (value + 20 * (place // 14)) for place, value in enumerate(LOW * 4)]
+    changes = [Change(day(14 * number), "more") for number in (1, 2, 3)]
+    answer = review(log_of(steps, **MINUTES), changes)
+    assert answer.switches == Switches(3, 3, to_and_fro=False)
+    one = [way * (value - 15 * (14 * 2 <= place < 14 * 3)) for place, value in enumerate(LOW * 4)]
+    back = review(log_of(one, **MINUTES), changes)
+    assert back.switches == Switches(2, 3, to_and_fro=True)
+
+
+def test_a_stretch_with_too_few_days_is_not_counted_as_one_it_did_not_move_with():
+    changes = [Change(day(14), "on"), Change(day(28), "off")]
+    answer = review(log_of(LOW + HIGH + LOW[:2], **MINUTES), changes)
+    assert answer.switches == Switches(1, 1)
+    assert "1 of them has too few days yet." in " ".join(findings_of(answer).lines())
+
+
+def test_yes_and_no_is_told_by_days_and_never_by_a_middle():
+    mixed = [1, 0, 1, 1, 0, 0, 1] * 4
+    said = told(mixed + mixed, 28, kind="yes/no")
+    assert "On 16 of 28 days it was a yes, on 16 of 28 before." in said
+    assert "In 100 days that may be anywhere from 24 fewer to 24 more." in said
+    assert "If it changed at all, it was by fewer than 25 in 100 days." in said
+    for wrong in ("middle day", "fences", "The difference", "by luck alone", "no difference to see"):
+        assert wrong not in said
+    moved = told([0, 0, 1, 0, 0, 0, 0] * 4 + [1, 1, 0, 1, 1, 1, 1] * 4, 28, kind="yes/no")
+    assert moved.startswith("It moved: on 24 of 28 days it was a yes, on 4 of 28 before.")
+
+
+def test_enough_days_are_only_enough_when_the_range_leaves_the_amount_out():
+    same = worth_told(LOW * 4, 20.0)
+    assert "There are enough days to see a move of 20 minutes a day; this log does not show one." in same
+    near = [value + 6 * (place >= 28) for place, value in enumerate(LOW * 4)]
+    assert "this log does not show one" not in worth_told(near, 7.0)
+
+
+def worth_told(values, worth) -> str:
+    return "\n".join(findings_of(review(log_of(values, **MINUTES), [Change(day(28))], worth=worth)).lines())
 
 
 # Outside by luck.
@@ -330,7 +389,13 @@ def allowed(one: Review) -> set[str]:
         carried = one.answer.carried
         values += [len(carried.below) + len(carried.above), int(carried.expected_by_luck + 0.5)]
     if one.answer.luck is not None:
-        values.append(round(100 * one.answer.luck.p))
+        values.append(in_100(one.answer.luck.p))
+    if one.answer.how_often is not None:
+        often = one.answer.how_often
+        values += [100, round(100 * often.low), round(100 * often.high)]
+        values.append(math.ceil(100 * max(abs(often.low), abs(often.high))))
+    if one.switches is not None:
+        values.append(len(one.stretches) - 1 - one.switches.of)
     return {speech.number(abs(value)) for value in values} | years_in(shown)
 
 
