@@ -6,7 +6,7 @@ from typing import Any, cast
 
 import numpy as np
 import pyqtgraph as pg
-from PySide6.QtCore import QEvent, QPointF, QRectF, Qt, Signal
+from PySide6.QtCore import QEvent, QObject, QPointF, QRectF, Qt, Signal
 from PySide6.QtGui import QAccessible, QAccessibleEvent, QFontInfo, QKeyEvent, QPainter
 from PySide6.QtWidgets import QGraphicsItem, QStyleOptionGraphicsItem, QWidget
 
@@ -71,6 +71,8 @@ class Chart(pg.PlotWidget):
         self.setFrameShape(self.Shape.NoFrame)
         self.setAccessibleName("Chart")
         self.setMouseTracking(True)
+        self._own_help = _OwnHelp(self)
+        self.installEventFilter(self._own_help)
 
     @property
     def picture(self) -> Picture | None:
@@ -111,13 +113,6 @@ class Chart(pg.PlotWidget):
         """Show ``factor`` times fewer days, around the middle."""
         self.getViewBox().scaleBy(x=1 / factor)
 
-    def event(self, event: QEvent) -> bool:
-        """F1 is the chart's here, not the window's."""
-        if event.type() == QEvent.Type.ShortcutOverride and cast(QKeyEvent, event).key() == Qt.Key.Key_F1:
-            event.accept()
-            return True
-        return bool(super().event(event))
-
     def keyPressEvent(self, event: QKeyEvent) -> None:
         """Zoom, move, and step from day to day."""
         with_control = bool(event.modifiers() & Qt.KeyboardModifier.ControlModifier)
@@ -156,7 +151,8 @@ class Chart(pg.PlotWidget):
     def changeEvent(self, event: QEvent) -> None:
         """Follow the text size."""
         super().changeEvent(event)
-        if event.type() == QEvent.Type.FontChange and self._picture is not None:
+        is_closed = self.plotItem is None  # So pyqtgraph leaves it; the widget may live on a little.
+        if event.type() == QEvent.Type.FontChange and self._picture is not None and not is_closed:
             self._settle()
 
     def style_of_chart(self) -> Style:
@@ -236,6 +232,17 @@ class Chart(pg.PlotWidget):
             frame = self._frame(QRectF(view.left(), rect.top(), view.width(), rect.height()))
             paint = paint_value_axis if name == "left" else paint_end_labels
         paint(painter, rect, frame, self._picture, style)
+
+
+class _OwnHelp(QObject):
+    """F1 is the chart's where it has the focus, not the window's."""
+
+    def eventFilter(self, chart: QObject, event: QEvent) -> bool:
+        """Called by Qt before the chart sees an event."""
+        is_help = event.type() == QEvent.Type.ShortcutOverride and cast(QKeyEvent, event).key() == Qt.Key.Key_F1
+        if is_help:
+            event.accept()
+        return is_help
 
 
 class _Drawn(pg.GraphicsObject):

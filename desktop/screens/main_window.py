@@ -283,6 +283,7 @@ class MainWindow(QMainWindow):
         session = Session(store, now=self.now, parent=self)
         self.session = session
         table = DaysTable(session)
+        table.quiet_colour = self.workspace.chart_pane.look.colour("quiet")
         table.unread.connect(self.say)
         # Queued: the question must not stand inside the editor's own commit.
         table.unlikely.connect(self._ask_unlikely, Qt.ConnectionType.QueuedConnection)

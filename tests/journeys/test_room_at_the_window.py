@@ -7,9 +7,11 @@ from PySide6.QtCore import Qt
 from PySide6.QtTest import QTest
 from PySide6.QtWidgets import QApplication, QLabel
 
+from desktop.chart.look import DARK
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person
 from desktop.storage.store import Store
 from desktop.wording.cautions import CAUTION
+from tests.journeys.test_first_four_weeks import starts_a_log
 
 DEFAULT, SMALL = (1360, 820), (1024, 640)
 TITLES = [("Walking", "minutes"), ("Upper pressure", "mmHg"), ("Lower pressure", "mmHg")]
@@ -161,3 +163,13 @@ def test_a_way_to_begin_is_pressed_on_its_words(person):
         window.windowHandle(), Qt.MouseButton.LeftButton, pos=words.mapTo(window, words.rect().center())
     )
     assert pressed == ["sample"]
+
+
+def test_quiet_words_of_the_days_have_the_ink_of_the_theme_from_the_start(person):
+    window = person.starts_the_program()
+    window.set_theme("dark")
+    starts_a_log(person)
+    weekend = next(row for row in range(7) if person.days.days.day(row).weekday() == 6)
+    ink = person.days.days.headerData(weekend, Qt.Orientation.Vertical, Qt.ItemDataRole.ForegroundRole)
+    assert ink == DARK.colour("quiet")
+    window.set_theme("light")

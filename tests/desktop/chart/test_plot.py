@@ -185,3 +185,14 @@ def test_other_keys_are_left_to_the_window(chart, qtbot):
     press(chart, Qt.Key.Key_A)
     assert view(chart) == WHOLE
     assert chart.read == []
+
+
+def test_a_closed_chart_lets_a_larger_text_pass(qapp):
+    closed = Chart()
+    closed.show_picture(PICTURE, keep_view=False)
+    closed.close()
+    larger = closed.font()
+    larger.setPixelSize(30)
+    closed.setFont(larger)
+    assert closed.font().pixelSize() == 30
+    closed.deleteLater()
