@@ -7,10 +7,10 @@ import numpy as np
 from analysis.answer import Doubt
 from analysis.batch.fences import is_above, is_below
 from analysis.doubts.seen import Seen
-from analysis.questions.did_it_move import rank_sum
+from analysis.questions.did_it_move import CLAIMS, rank_sum, sureness
 from analysis.series.carry_over import carry_over, widening
 from analysis.series.slope import common_slope
-from analysis.sides import Sides
+from analysis.sides import Sides, compare
 
 WEEK = 7
 WEEKS_FOR_WORST_SPELL = 5
@@ -22,6 +22,7 @@ _SAME_WEEKS = 14
 _LOOKED_AT = 60
 """Days after that the circle of the year is looked at from; more would make a table of every pair."""
 _SLOPE_BELOW = 0.10
+_SHORTEST_STEP = 5
 _PART_OF_SHIFT = 0.6
 """A slope that would make less than this part of the shift does not explain it."""
 _HIGH_FIRST_WEEK_BELOW = 0.30
@@ -48,7 +49,42 @@ def slope_before(seen: Seen) -> Doubt | None:
     apart = float(np.mean(sides.after_at) - np.mean(sides.before_at))
     if abs(slope.a_period) * apart < _PART_OF_SHIFT * abs(seen.level.estimate):
         return None
-    return Doubt("slope_before", (("slope", slope.a_period),), seen.turns_on(level_rows, _price_of_slope(sides)))
+    price = _price_of_slope(sides)
+    is_line = _line_fits_better(sides)
+    if seen.is_claim:
+        alters = seen.turns_on(level_rows, price)
+    else:
+        alters = is_line and _is_all_slope(seen, level_rows, price)
+    # A start days after the change makes a slope too; then it is said as what it could be, and not as what it was.
+    shape = () if is_line else (("shape", "step"),)
+    return Doubt("slope_before", (("slope", slope.a_period), *shape), alters)
+
+
+def _line_fits_better(sides: Sides) -> bool:
+    """Whether one line through both stretches leaves less than one step, wherever that lies (least squares)."""
+    at, values = np.concatenate([sides.before_at, sides.after_at]), np.concatenate([sides.before, sides.after])
+    known = ~np.isnan(values)
+    x, y = at[known].astype(float), values[known]
+    x, y = x - x.mean(), y - y.mean()
+    if len(y) < 2 * _SHORTEST_STEP or not (y @ y) > 0:
+        return True
+    by_line = float((x @ y) ** 2 / (x @ x))
+    early = np.cumsum(y)[_SHORTEST_STEP - 1 : -_SHORTEST_STEP]
+    sizes = np.arange(_SHORTEST_STEP, len(y) - _SHORTEST_STEP + 1, dtype=float)[: len(early)]
+    by_step = float(np.max(early**2 * (1 / sizes + 1 / (len(y) - sizes))))
+    return by_line >= by_step
+
+
+def _is_all_slope(seen: Seen, level_rows: Sides, price: float) -> bool:
+    """Whether a steep slope is all there is, though nothing was claimed: its own carry-over hid the gap.
+
+    With the carry-over of the days around the slope the gap would be claimed, and without the slope it is not.
+    """
+    assert seen.level is not None
+    before, after = seen.level.sides.known_before, seen.level.sides.known_after
+    around = widening(carry_over([level_rows.before, level_rows.after]))
+    word = sureness(len(before), len(after), rank_sum(before, after, around).p)
+    return word in CLAIMS and not compare(level_rows, price).is_claim
 
 
 def _price_of_slope(sides: Sides) -> float:

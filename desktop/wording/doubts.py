@@ -65,6 +65,8 @@ def _no_low_day(_fields: Fields, speech: Speech) -> str:
 
 def _slope_before(fields: Fields, speech: Speech) -> str:
     pace = speech.pace(float(fields["slope"]))
+    if fields.get("shape") == "step":
+        return f"A steady slope through all days, by about {pace}, would look much like this."
     return f"It was moving all along, by about {pace}, before the change and after it."
 
 

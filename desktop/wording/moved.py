@@ -92,12 +92,12 @@ class MovedTeller(Teller):
         match self.answer.sureness:
             case "too early":
                 return "Too early to say if it moved."
+            case "leaning" | "cannot tell" if self._is_slope:
+                return f"It was moving all along, by about {self._slope_told()}."
             case "cannot tell" if self._moved_with_changes:
                 return f"It moved with {self._switched()}."
             case "cannot tell":
                 return "This log cannot tell if it moved."
-            case "leaning" if self._is_slope:
-                return f"It was moving all along, by about {self._slope_told()}."
             case "leaning" if self._is_faded:
                 return "It may have moved at first. If so, it has gone back."
             case "leaning":
@@ -126,7 +126,8 @@ class MovedTeller(Teller):
     @property
     def _is_slope(self) -> bool:
         """Whether a steady slope explains what looks like a move at the change."""
-        return any(doubt.name == "slope_before" and doubt.alters for doubt in self.review.doubts)
+        slopes = (doubt for doubt in self.review.doubts if doubt.name == "slope_before" and doubt.alters)
+        return any("shape" not in dict(doubt.fields) for doubt in slopes)
 
     def _slope_told(self) -> str:
         slope = next(dict(doubt.fields)["slope"] for doubt in self.review.doubts if doubt.name == "slope_before")
@@ -189,8 +190,12 @@ class MovedTeller(Teller):
         word = str(answer.sureness)
         rhythm = answer.weekday_rhythm
         like_days = ["Weekends differ from weekdays here; that is taken off."] if rhythm and rhythm.used else []
+        told = f"{word[0].upper()}{word[1:]}: {reason} {luck}"
+        if self._is_slope and answer.sureness == "cannot tell":
+            # How sure it is that the change moved it is another question than the headline's.
+            told = reason
         return [
-            f"{word[0].upper()}{word[1:]}: {reason} {luck}",
+            told,
             *like_days,
             *self.season(),
             *self._settling_in(),

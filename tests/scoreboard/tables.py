@@ -119,6 +119,10 @@ def oracle_of(row: str, column: str) -> float:
     return family.oracle(m, n, float(move))
 
 
+EARLY = 7
+"""Days before the change on which an early move began."""
+
+
 def ranges() -> list[Cell]:
     """C and D: whether the ranges of the shift and of the start hold the truth."""
     cells = []
@@ -142,22 +146,26 @@ def ranges() -> list[Cell]:
 
             def early(rng: np.random.Generator, family: Family = family, m: int = m, n: int = n) -> Case:
                 values = LEVEL + family.draw(rng, m + n)
-                values[m - 7 :] += 1.5
+                values[m - EARLY :] += 1.5
                 return Case(values, m)
 
-            cells.append(Cell("D", family.name, f"{m},{n} early", early, _since_facts))
+            cells.append(Cell("D", family.name, f"{m},{n} early", early, _since_early_facts))
     return cells
 
 
-def _since_facts(case: Case, answer: Review) -> Iterable[str]:
+def _since_facts(case: Case, answer: Review, moved: int = 0) -> Iterable[str]:
+    """Whether the range of the start holds the day it moved, so many days after the change."""
     since = answer.answer.since
     if since is None:
         return
-    change = answer.stretches[1].first
-    if since.first <= change <= since.last:
+    if since.first <= answer.stretches[1].first + moved <= since.last:
         yield "covers"
     if since.before_change:
         yield "before change"
+
+
+def _since_early_facts(case: Case, answer: Review) -> Iterable[str]:
+    return _since_facts(case, answer, -EARLY)
 
 
 def luck() -> list[Cell]:
