@@ -14,10 +14,12 @@ _MOST = 0.9
 
 
 def carry_over(stretches: Sequence[Values]) -> float | None:
-    """Day-to-day carry-over: the lag-1 correlation of ranks within stretches, corrected and clipped to [0, 0.9].
+    """Carry-over from one value to the next: the lag-1 correlation of ranks within stretches, corrected and
+    clipped to [0, 0.9].
 
     Each stretch is ranked by itself, centred and divided by its length, so that a move between stretches does not
-    look like carry-over. Only neighbouring days that both hold a value form a pair.
+    look like carry-over. Blank periods are passed over: what widens a comparison is how far the values that were
+    written down hang together, be they of every day or of every other day.
 
     Args:
         stretches: each of shape (k,), one value a period in order, NaN where blank.
@@ -29,24 +31,19 @@ def carry_over(stretches: Sequence[Values]) -> float | None:
     stretches doubles it, which (N r + 2)/(N − 8) takes back.
     """
     products = squares = 0.0
-    count = pairs = most_pairs = 0
+    count = 0
     for values in stretches:
-        known = ~np.isnan(values)
-        n = int(known.sum())
+        known = values[~np.isnan(values)]
+        n = len(known)
         if n == 0:
             continue
-        centred = np.full(len(values), np.nan)
-        centred[known] = (midranks(values[known]) - (n + 1) / 2) / n
-        lagged = centred[1:] * centred[:-1]
-        products += float(np.nansum(lagged))
-        squares += float(np.nansum(centred**2))
-        pairs += int(np.sum(~np.isnan(lagged)))
-        most_pairs += n - 1
+        centred = (midranks(known) - (n + 1) / 2) / n
+        products += float(centred[1:] @ centred[:-1])
+        squares += float(centred @ centred)
         count += n
     if count <= 8:
         return None
-    # Blank days break pairs: the sum of products is brought up to what a full row would hold.
-    raw = products / squares * most_pairs / pairs if squares > 0 and pairs > 0 else 0.0
+    raw = products / squares if squares > 0 else 0.0
     return float(np.clip((count * raw + 2) / (count - 8), 0.0, _MOST))
 
 
