@@ -14,8 +14,7 @@ _MOST = 0.9
 
 
 def carry_over(stretches: Sequence[Values]) -> float | None:
-    """Carry-over from one value to the next: the lag-1 correlation of ranks within stretches, corrected and
-    clipped to [0, 0.9].
+    """Carry-over from one value to the next: a lag-1 correlation of ranks, corrected and clipped to [0, 0.9].
 
     Each stretch is ranked by itself, centred and divided by its length, so that a move between stretches does not
     look like carry-over. Blank periods are passed over: what widens a comparison is how far the values that were

@@ -11,7 +11,7 @@ import numpy as np
 
 from analysis import Review
 from analysis.questions.plan_kept import WeekOfPlan
-from desktop.caseload.facts import measures_of, review_overall, review_since
+from desktop.caseload.facts import base_of, measures_of, review_overall, review_since
 from desktop.caseload.queue import QueueRow, weeks_until
 from desktop.journal.clients import CoachingSession
 from desktop.journal.journal import Journal
@@ -42,7 +42,8 @@ class Card:
 
     Attributes:
         row: the client's line in the queue.
-        session: the last session; None before the first.
+        session: the last session that anything was agreed in; None before the first.
+        sessions: all of them with the notes, in order of day.
         weeks: the whole weeks of the plan since then (all that are known, before the first session).
         doing, outcome: the two measures; None where the journal has none of the kind.
         logged, of: days with an entry since the session, out of the days since then up to today.
@@ -53,6 +54,7 @@ class Card:
 
     row: QueueRow
     session: CoachingSession | None
+    sessions: tuple[CoachingSession, ...]
     weeks: tuple[WeekOfPlan, ...]
     doing: MeasureSince | None
     outcome: MeasureSince | None
@@ -79,7 +81,7 @@ def card_of(journal: Journal, row: QueueRow, sessions: Sequence[CoachingSession]
         sessions: with this client, in order of day.
         today: the calendar day.
     """
-    session = sessions[-1] if sessions else None
+    session = base_of(sessions)
     doing, outcome = (
         _since(journal, measure, sessions, session) if measure is not None else None
         for measure in measures_of(journal, row.client)
@@ -99,6 +101,7 @@ def card_of(journal: Journal, row: QueueRow, sessions: Sequence[CoachingSession]
     return Card(
         row,
         session,
+        tuple(sessions),
         tuple(week for week in weeks if first is None or week.first >= first),
         doing,
         outcome,

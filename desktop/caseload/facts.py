@@ -24,7 +24,7 @@ from desktop.journal.plans import days_done, pauses_of, plans_of
 from desktop.journal.records import Entry, Measure
 from desktop.wording.findings import findings_of
 
-FACTS_VERSION = 1
+FACTS_VERSION = 2
 """Facts of another version are made again."""
 
 LONGEST_BASELINE = 56
@@ -49,6 +49,7 @@ class Said:
         is_faded: the days look as if it moved and went back; the sureness says how much that is worth.
         is_wanted: whether it moved the way that is wanted; None where no way is, or it did not move.
         is_doubted: a doubt alters the answer.
+        change: day number of the change that the last stretch begins with; None without one.
     """
 
     measure: int
@@ -60,6 +61,7 @@ class Said:
     is_faded: bool
     is_wanted: bool | None
     is_doubted: bool
+    change: int | None
 
 
 @dataclass(frozen=True)
@@ -161,16 +163,20 @@ def measures_of(journal: Journal, client: Client | None) -> tuple[int | None, in
     The coach's choice counts; else the first measure of an amount, a count or yes and no is what was done, and the
     first other one is what came of it.
     """
-    columns = journal.columns()
-    if client is not None:
-        doing, outcome = (one if one in journal.measures else None for one in (client.doing, client.outcome))
-        if doing is not None or outcome is not None:
-            return doing, outcome
-    doing = next((one.id for one in columns if one.kind in ("amount", "count", "yes/no")), None)
-    outcome = next((one.id for one in columns if one.id != doing and one.pair == ""), None)
+    chosen = (client.doing, client.outcome) if client is not None else (None, None)
+    doing, outcome = (one if one in journal.measures else None for one in chosen)
+    columns = [one for one in journal.columns() if one.id not in (doing, outcome)]
+    if doing is None:
+        doing = next((one.id for one in columns if one.kind in ("amount", "count", "yes/no")), None)
     if outcome is None:
-        outcome = next((one.id for one in columns if one.id != doing), None)
+        others = [one for one in columns if one.id != doing]
+        outcome = next((one.id for one in (*[one for one in others if not one.pair], *others)), None)
     return doing, outcome
+
+
+def base_of(sessions: Sequence[CoachingSession]) -> CoachingSession | None:
+    """The last session that anything was agreed in; a note alone moves nothing."""
+    return next((one for one in reversed(sessions) if one.agreed or one.times or not one.note), None)
 
 
 def marks_of(journal: Journal, measure: int, sessions: Sequence[CoachingSession]) -> list[analysis.Change]:
@@ -233,6 +239,7 @@ def said_of(measure: Measure, review: Review) -> Said:
         answer.still is not None and answer.still.state == "faded",
         answer.direction == wanted if has_moved and wanted is not None else None,
         any(doubt.alters for doubt in review.doubts),
+        review.stretches[-1].change if review.stretches else None,
     )
 
 
@@ -254,8 +261,11 @@ def facts_of(
     """
     chosen = measures_of(journal, client)
     looked_at = [measure for measure in chosen if measure is not None]
-    session = sessions[-1].day if sessions else None
-    said_days = _days_said(journal)
+    base = base_of(sessions)
+    session = base.day if base is not None else None
+    # A day after the copy was made is one of a wrong year, or of a clock that was wrong.
+    until = date.fromisoformat(last_at[:10]).toordinal() if last_at else None
+    said_days = _days_said(journal, until)
     last = said_days[-1] if said_days else None
     usual = quiet(said_days, last) if last is not None else None
     since = session.toordinal() if session is not None else None
@@ -286,13 +296,13 @@ def facts_of(
     )
 
 
-def _days_said(journal: Journal) -> list[int]:
-    """Every day that anything was written about, and every day of a pause up to the last of them."""
+def _days_said(journal: Journal, until: int | None) -> list[int]:
+    """Every day up to one that anything was written about, and every day of a pause."""
     days = {
         entry.day.toordinal()
         for entries in journal.entries.values()
         for entry in entries.values()
-        if entry.kind != "blank"
+        if entry.kind != "blank" and (until is None or entry.day.toordinal() <= until)
     }
     for first, last in pauses_of(journal):
         days.update(range(first, last + 1))
@@ -302,7 +312,7 @@ def _days_said(journal: Journal) -> list[int]:
 def _done(journal: Journal, doing: int | None, last: int | None) -> tuple[int, ...]:
     if doing is None or last is None:
         return ()
-    return tuple(day for day in days_done(journal, doing) if day > last - DONE_KEPT)
+    return tuple(day for day in days_done(journal, doing) if last - DONE_KEPT < day <= last)
 
 
 def _plans(journal: Journal, doing: int | None, sessions: Sequence[CoachingSession]) -> tuple[PlannedDays, ...]:

@@ -36,6 +36,7 @@ ReasonKind = Literal[
 
 REASON_KINDS: tuple[ReasonKind, ...] = get_args(ReasonKind)
 
+WEEK = 7
 MISSED_WEEKS = 2
 """A plan missed in one week is a week like any other."""
 
@@ -77,17 +78,19 @@ class QueueRow:
     Attributes:
         client: whose.
         facts: of the journal; None where none could be read.
-        reasons: the most pressing first; none where nothing is new.
+        reasons: those that are new since the coach looked, the most pressing first; none where nothing is new.
+        held: every reason there is, looked at or not.
     """
 
     client: Client
     facts: Facts | None
     reasons: tuple[Reason, ...]
+    held: tuple[Reason, ...] = ()
 
     @property
     def marks(self) -> str:
         """The marks of everything there is to see now, for ``Client.looked_reasons``."""
-        return " ".join(reason.mark for reason in self.reasons if reason.kind not in _EVERY_TIME)
+        return " ".join(reason.mark for reason in self.held if reason.kind not in _EVERY_TIME)
 
 
 _EVERY_TIME = frozenset({"session today", "unreadable", "missing"})
@@ -95,7 +98,12 @@ _EVERY_TIME = frozenset({"session today", "unreadable", "missing"})
 
 
 def rows_of(
-    caseload: Caseload, facts: Mapping[str, Facts], errors: Mapping[str, DayfenceError], today: date
+    caseload: Caseload,
+    facts: Mapping[str, Facts],
+    errors: Mapping[str, DayfenceError],
+    today: date,
+    *,
+    all_read: bool = True,
 ) -> list[QueueRow]:
     """Every client whose coaching has not ended, in the order they are looked at.
 
@@ -104,21 +112,27 @@ def rows_of(
         facts: by the journal's id, of all that could be read.
         errors: by the journal's id, what is wrong with a file that could not be.
         today: the calendar day.
+        all_read: the whole folder was read, so that a client without facts has no journal there.
     """
     rows = [
-        row_of(client, facts.get(client.journal_id), errors.get(client.journal_id), today)
+        row_of(client, facts.get(client.journal_id), errors.get(client.journal_id), today, all_read=all_read)
         for client in caseload.clients.values()
         if not client.ended
     ]
     return sorted(rows, key=_place)
 
 
-def row_of(client: Client, facts: Facts | None, error: DayfenceError | None, today: date) -> QueueRow:
+def row_of(
+    client: Client, facts: Facts | None, error: DayfenceError | None, today: date, *, all_read: bool = True
+) -> QueueRow:
     """One client's line: the reasons that are new since the coach last looked."""
     reasons = [one for one in _reasons(client, facts, error, today) if one is not None]
+    if not all_read:
+        reasons = [one for one in reasons if one.kind != "missing"]
+    reasons.sort(key=lambda one: REASON_KINDS.index(one.kind))
     looked = set(client.looked_reasons.split(" "))
     fresh = [one for one in reasons if one.kind in _EVERY_TIME or one.mark not in looked]
-    return QueueRow(client, facts, tuple(sorted(fresh, key=lambda one: REASON_KINDS.index(one.kind))))
+    return QueueRow(client, facts, tuple(fresh), tuple(reasons))
 
 
 def verdict_of(facts: Facts | None) -> Verdict:
@@ -177,12 +191,17 @@ def _of_facts(facts: Facts, today: date) -> list[Reason | None]:
 
 
 def _gone_quiet(facts: Facts, today: date) -> Reason | None:
-    if facts.last is None:
+    if facts.last is None and facts.session is None:
         return None
-    found = _quiet(facts, today)
-    usual = found.usual_longest or 0
-    strength = (-found.for_days / (1 + usual),)
-    return Reason("quiet", f"quiet-{facts.last}", strength, quiet=found) if found.is_longer else None
+    # Of a log that was never begun the days since the session are counted.
+    last = facts.last if facts.last is not None else facts.session
+    assert last is not None
+    found = Quiet(max(0, today.toordinal() - last - 1), facts.usual_gap)
+    if not found.is_longer:
+        return None
+    strength = (-found.for_days / (1 + (found.usual_longest or 0)),)
+    # A silence that goes on is news again a week later.
+    return Reason("quiet", f"quiet-{last}-{found.for_days // WEEK}", strength, quiet=found)
 
 
 def _plan_missed(facts: Facts, today: date) -> Reason | None:
@@ -204,11 +223,17 @@ def _moved(facts: Facts) -> Reason | None:
         for said in facts.lately
         if said.chance is not None
         and not said.is_doubted
-        and said.chance < WORTH_A_LOOK_BUDGET / len(facts.lately)
+        and said.chance < WORTH_A_LOOK_BUDGET / len(facts.lately) / _questions(facts)
     ]
     if not told:
         return None
-    return Reason("moved", _mark("moved", told), _strength(told), said=tuple(told))
+    return Reason("moved", _mark(f"moved-{facts.session}", told), _strength(told), said=tuple(told))
+
+
+def _questions(facts: Facts) -> int:
+    """How many questions share the budget: since the session, and since a change of another day."""
+    answer = facts.answer
+    return 2 if facts.lately and answer is not None and answer.change not in (None, facts.session) else 1
 
 
 def _firm(facts: Facts) -> Reason | None:
@@ -216,11 +241,11 @@ def _firm(facts: Facts) -> Reason | None:
     said = facts.answer
     if said is None or said.is_doubted or said.chance is None:
         return None
-    is_firm = said.sureness in CLAIMS and said.chance < WORTH_A_LOOK_BUDGET
+    is_firm = said.sureness in CLAIMS and said.chance < WORTH_A_LOOK_BUDGET / _questions(facts)
     has_faded = said.is_faded and said.sureness in (*CLAIMS, "leaning")
     if not is_firm and not has_faded:
         return None
-    return Reason("firm", _mark("firm", [said]), _strength([said]), said=(said,))
+    return Reason("firm", _mark(f"firm-{said.change}", [said]), _strength([said]), said=(said,))
 
 
 def _mark(kind: str, told: Sequence[Said]) -> str:

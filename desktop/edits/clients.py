@@ -51,8 +51,13 @@ def mark_looked_at(caseload: Caseload, client: int, today: date, reasons: str) -
     return edit_putting(caseload, "mark looked at", [looked])
 
 
-def write_session(caseload: Caseload, session: CoachingSession) -> Edit:
+def write_session(caseload: Caseload, session: CoachingSession, client: Client | None = None) -> Edit:
     """What was agreed and noted in a session; an empty one is removed.
+
+    Args:
+        caseload: as it stands.
+        session: as it is to be.
+        client: with the next session that was agreed on, as part of the same act.
 
     Raises:
         ValueError: more spare days than days in the plan.
@@ -61,9 +66,12 @@ def write_session(caseload: Caseload, session: CoachingSession) -> Edit:
         raise ValueError("a plan cannot have more spare days than days")
     held = caseload.find(session)
     is_empty = not (session.agreed or session.note or session.times)
+    following = edit_putting(caseload, "set client", [client] if client is not None else [])
     if is_empty:
-        return Edit("remove session", (RowChange(held, None),) if held is not None else ())
-    return edit_putting(caseload, "write session", [session])
+        removed = (RowChange(held, None),) if held is not None else ()
+        return Edit("remove session" if removed else "set client", (*removed, *following.changes))
+    written = edit_putting(caseload, "write session", [session])
+    return Edit("write session" if written else "set client", (*written.changes, *following.changes))
 
 
 def _free(word: str, taken: set[str]) -> str:

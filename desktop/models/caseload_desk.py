@@ -76,7 +76,16 @@ class CaseloadDesk(QObject):
         self._opener = Background(self)
         self._stop = threading.Event()
         self._reading = 0
+        self._begins_again = self._closed = False
+        self.all_read = False
+        # What is known of each file; rows stand on what is remembered until the file itself is read.
+        self._seen: dict[str, FileSeen] = {
+            name: FileSeen(name, seen, facts)
+            for name, seen in self._remembered.items()
+            if (facts := _facts_of(seen)) is not None
+        }
         self._read.connect(self._receive)
+        self._settle()
 
     @property
     def today(self) -> date:
@@ -105,7 +114,7 @@ class CaseloadDesk(QObject):
 
     def rows(self) -> list[QueueRow]:
         """Every client in the order of the queue."""
-        return rows_of(self.caseload, self.facts, self.errors, self.today)
+        return rows_of(self.caseload, self.facts, self.errors, self.today, all_read=self.all_read)
 
     def do(self, edit: Edit) -> None:
         """Make an edit; it is on the disk afterwards. An edit of nothing does nothing.
@@ -135,8 +144,15 @@ class CaseloadDesk(QObject):
             self._make(redo_edit(step), "redo", step.number)
 
     def look_again(self) -> None:
-        """Read the folder, off the screen's thread; the queue follows as files are read."""
-        if self.folder is None or self.is_reading:
+        """Read the folder, off the screen's thread; the queue follows as files are read.
+
+        While it is being read, reading is stopped and begins again.
+        """
+        if self.folder is None:
+            return
+        if self.is_reading:
+            self._begins_again = True
+            self.stop()
             return
         self._stop.clear()
         self._reading += 1
@@ -160,10 +176,20 @@ class CaseloadDesk(QObject):
     ) -> None:
         """Read a client's journal, guarded and off the screen's thread; then call ``done`` or ``failed``.
 
+        It fails where the file is another client's by now.
+
         Raises:
             KeyError: there is no file of the client's.
         """
-        self._opener.run(partial(read_stranger, self.files[client.journal_id]), done, failed)
+        path = self.files[client.journal_id]
+
+        def read() -> Journal:
+            journal = read_stranger(path)
+            if journal.person.journal_id != client.journal_id:
+                raise StorageError("missing", path=str(path))
+            return journal
+
+        self._opener.run(read, done, failed)
 
     def stop(self) -> None:
         """Read no further; what was read stays."""
@@ -176,6 +202,7 @@ class CaseloadDesk(QObject):
 
     def close(self) -> None:
         """Stop reading and let go of the file."""
+        self._closed = True
         self.stop()
         self._reader.wait()
         self._opener.wait()
@@ -197,8 +224,8 @@ class CaseloadDesk(QObject):
         if not self.read_only and is_due_at_opening(copies_of(self.path), last_change, self.now()):
             take_copy(self.path, self.now(), layout=CASELOAD)
 
-    def _look_through(self, folder: Path, remembered: dict[str, SeenFile], known: Known) -> list[str]:
-        """Called on the reader's thread; gives the names of the files there are."""
+    def _look_through(self, folder: Path, remembered: dict[str, SeenFile], known: Known) -> tuple[Path, list[str]]:
+        """Called on the reader's thread; gives the folder and the names of the files there are."""
         paths = journals_in(folder)
         waiting: list[FileSeen] = []
         told = -_AT_LEAST  # The first is shown at once.
@@ -209,59 +236,68 @@ class CaseloadDesk(QObject):
                 waiting, told = [], time.monotonic()
         if waiting:
             self._read.emit((folder, waiting, len(paths), len(paths)))
-        return [path.name for path in paths]
+        return folder, [path.name for path in paths]
 
     def _receive(self, read: tuple[Path, list[FileSeen], int, int]) -> None:
         folder, seen, count, of = read
+        if self._closed or folder != self.folder:
+            return
         for one in seen:
-            self._take(folder / one.name, one)
+            self._seen[one.name] = one
+            if one.seen is not None:
+                self._learnt[one.name] = one.seen
+        self._settle()
         self.progressed.emit(count, of)
         self.changed.emit()
 
-    def _take(self, path: Path, one: FileSeen) -> None:
-        if one.seen is not None:
-            self._learnt[one.name] = one.seen
-        if one.facts is None:
-            if one.error is not None:
-                self.strange[one.name] = one.error
-            return
-        self.strange.pop(one.name, None)
-        journal_id = one.facts.journal_id
-        held = self.facts.get(journal_id)
-        is_another = held is not None and self.files.get(journal_id) not in (None, path)
-        if is_another and held is not None and _reach(held) > _reach(one.facts):
-            return  # An older copy of the same journal beside it.
-        self.facts[journal_id], self.files[journal_id] = one.facts, path
-        if one.error is not None:
-            self.errors[journal_id] = one.error
-        else:
-            self.errors.pop(journal_id, None)
+    def _settle(self) -> None:
+        """Which file stands for which journal: of those that can be read the one that reaches farthest.
 
-    def _done(self, names: list[str]) -> None:
+        A file that cannot be read stands for the journal it was, where no other copy of that is whole.
+        """
+        self.facts, self.errors, self.files, self.strange = {}, {}, {}, {}
+        folder = self.folder or Path()
+        for whole in (True, False):
+            for one in sorted(self._seen.values(), key=lambda one: one.name):
+                if (one.error is None) is not whole:
+                    continue
+                held = self.facts.get(one.facts.journal_id) if one.facts is not None else None
+                if one.facts is None or (not whole and held is not None):
+                    if one.error is not None:
+                        self.strange[one.name] = one.error
+                elif held is None or _reach(one.facts) > _reach(held):
+                    journal_id = one.facts.journal_id
+                    self.facts[journal_id], self.files[journal_id] = one.facts, folder / one.name
+                    if one.error is not None:
+                        self.errors[journal_id] = one.error
+
+    def _done(self, read: tuple[Path, list[str]]) -> None:
+        folder, names = read
         self._reading -= 1
-        was_stopped = self._stop.is_set()
-        if not was_stopped:
-            self._forget_all_but(set(names))
+        if self._closed:
+            return
+        if self._begins_again:
+            self._begins_again = False
+            self.look_again()
+            return
+        self.all_read = not self._stop.is_set() and folder == self.folder
+        if self.all_read:
+            self._seen = {name: one for name, one in self._seen.items() if name in set(names)}
+            self._settle()
         added = self._add_new()
-        self._remember(set() if was_stopped else set(self._remembered) - set(names))
+        self._remember(set(self._remembered) - set(names) if self.all_read else set())
         self.changed.emit()
         self.looked_through.emit(added)
 
     def _failed(self, error: Exception) -> None:
         self._reading -= 1
+        if self._closed:
+            return
+        self.all_read = self._begins_again = False
+        self.looked_through.emit(0)
         if not isinstance(error, DayfenceError):
             raise error
         self.not_readable.emit(error)
-        self.looked_through.emit(0)
-
-    def _forget_all_but(self, names: set[str]) -> None:
-        """Journals whose file is gone are no longer known."""
-        for journal_id, path in list(self.files.items()):
-            if path.name not in names:
-                for held in (self.files, self.facts, self.errors):
-                    held.pop(journal_id, None)
-        for name in set(self.strange) - names:
-            del self.strange[name]
 
     def _add_new(self) -> int:
         """A client for each journal that belongs to none, called as its owner or its file is called."""
@@ -290,6 +326,13 @@ class CaseloadDesk(QObject):
             name: seen for name, seen in (self._remembered | self._learnt).items() if name not in gone
         }
         self._learnt = {}
+
+
+def _facts_of(seen: SeenFile) -> Facts | None:
+    try:
+        return Facts.of_text(seen.facts)
+    except ValueError:
+        return None
 
 
 def _nothing(_: object) -> None:

@@ -24,15 +24,16 @@ class QueueTable(QAbstractTableModel):
         self._all: list[QueueRow] = []
         self._is_unfolded = False
         self._filter = ""
+        self._kept = 0
 
     @property
     def folded(self) -> int:
         """How many clients with nothing new there are."""
         return sum(not row.reasons for row in self._all)
 
-    def show_rows(self, rows: list[QueueRow]) -> None:
-        """Take another queue."""
-        self._all = rows
+    def show_rows(self, rows: list[QueueRow], kept: int = 0) -> None:
+        """Take another queue; the client with the id ``kept`` is not folded away."""
+        self._all, self._kept = rows, kept
         self._settle()
 
     def unfold(self, is_unfolded: bool) -> None:
@@ -93,7 +94,7 @@ class QueueTable(QAbstractTableModel):
         if words:
             shown = [row for row in self._all if _holds(row, words)]
         else:
-            shown = [row for row in self._all if row.reasons or self._is_unfolded]
+            shown = [row for row in self._all if row.reasons or self._is_unfolded or row.client.id == self._kept]
         self.beginResetModel()
         self.rows = shown
         self.endResetModel()

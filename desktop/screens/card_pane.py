@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from dataclasses import replace
 from html import escape
 
 from PySide6.QtCore import QRectF, QSize, Qt, Signal
@@ -14,7 +15,7 @@ from desktop.chart.look import LIGHT, Look
 from desktop.chart.pieces import Picture
 from desktop.chart.style import Style
 from desktop.chart.whole import least_height, paint_chart
-from desktop.wording.caseload import COVERED, COVERED_TITLES, card_sections, row_sentences
+from desktop.wording.caseload import COVERED, COVERED_TITLES, UNCOVER, card_sections, row_sentences
 from desktop.wording.telling import Section
 
 _CHART_PART = 0.86
@@ -97,13 +98,17 @@ class CardPane(QWidget):
         self.text.setAlignment(Qt.AlignmentFlag.AlignTop)
         self.text.setAccessibleName("Session card")
         self.chart = CardChart()
-        self.uncover = QPushButton(COVERED)
+        self.covered = QLabel(COVERED)
+        self.covered.setWordWrap(True)
+        self.covered.setMargin(10)
+        self.uncover = QPushButton(UNCOVER)
         self.uncover.clicked.connect(self.show_answer)
         layout = QVBoxLayout(self)
         layout.setContentsMargins(0, 0, 0, 0)
         layout.setSpacing(0)
         self.title.setMargin(10)
         layout.addWidget(self.title)
+        layout.addWidget(self.covered)
         layout.addWidget(self.uncover)
         inner = QWidget()
         inner.setBackgroundRole(QPalette.ColorRole.Base)
@@ -159,6 +164,7 @@ class CardPane(QWidget):
 
     def _fill(self) -> None:
         covered = self._is_covered
+        self.covered.setVisible(covered)
         self.uncover.setVisible(covered)
         self.chart.show_picture(None if covered else self._picture)
         size = QFontInfo(self.font()).pixelSize()
@@ -173,7 +179,9 @@ class CardPane(QWidget):
     def _sections(self) -> list[Section]:
         if self._row is None:
             return []
-        told = [] if self._is_covered else [Section("Why", row_sentences(self._row))]
+        told = (
+            [] if self._is_covered else [Section("Why", row_sentences(replace(self._row, reasons=self._row.held)))]
+        )
         if self._card is None:
             return told
         sections = card_sections(self._card)

@@ -150,14 +150,13 @@ class CaseloadWindow(QMainWindow):
             return True
         session, client = self.form.session, self.form.client
         assert client is not None
-        kept = self._do(write_session(self.desk.caseload, session))
         held = self.desk.caseload.clients[client.id]
-        if kept and held.next_session != client.next_session:
-            kept = self._do(set_client(self.desk.caseload, replace(held, next_session=client.next_session)))
-        if kept:
-            self._show_form(client.id)
-            self.say("Kept.")
-        return kept
+        following = replace(held, next_session=client.next_session)
+        if not self._do(write_session(self.desk.caseload, session, following)):
+            return False
+        self._show_form(client.id)
+        self.say("Kept.")
+        return True
 
     def edit_client(self) -> None:
         """Ask about the settings of the client under the hand."""
@@ -197,12 +196,14 @@ class CaseloadWindow(QMainWindow):
         QMessageBox.information(self, "Keys", CASELOAD_KEYS)
 
     def undo(self) -> None:
-        """Take back the last act."""
-        self._try(self.desk.undo)
+        """Take back the last act, that of writing what is typed among them."""
+        if self.keep_session() and self._try(self.desk.undo):
+            self._show_client()
 
     def redo(self) -> None:
         """Do the act last taken back again."""
-        self._try(self.desk.redo)
+        if not self.form.is_changed and self._try(self.desk.redo):
+            self._show_client()
 
     def print_pages(self) -> None:
         """The pages of today's clients in one file."""
@@ -274,6 +275,7 @@ class CaseloadWindow(QMainWindow):
         self.stop_button.clicked.connect(desk.stop)
         self.queue.client_chosen.connect(self._client_chosen)
         self.queue.view.uncover_wanted.connect(self.card.show_answer)
+        self.card.uncovered.connect(partial(self.queue.cover, False))
         self.queue.view.looked_wanted.connect(self.looked_at)
         self.queue.view.activated.connect(self.write_session)
         self.form.keep_wanted.connect(self.back_to_queue)
@@ -282,7 +284,8 @@ class CaseloadWindow(QMainWindow):
     def _follow(self) -> None:
         """Show the queue as it stands."""
         before = self.queue.current
-        self.queue.show_rows([*self.desk.rows(), *self._strange_rows()])
+        rows = [*self.desk.rows(), *self._strange_rows()]
+        self.queue.show_rows(rows, is_typing=self.form.is_changed)
         after = self.queue.current
         if after != before:
             self._show_client()
@@ -307,7 +310,11 @@ class CaseloadWindow(QMainWindow):
         title = client_title(row.client, self.desk.today) if row is not None else ""
         covered = row is not None and (self.client_tells_first or row.client.next_session == self.desk.today)
         self.card.show_row(row, title, covered=covered)
-        self._show_form(row.client.id if row is not None else 0)
+        self.queue.cover(covered)
+        client = row.client.id if row is not None else 0
+        # What is being typed stays, whatever is read meanwhile.
+        if not (self.form.is_changed and self.form.is_of(client)):
+            self._show_form(client)
         self._read_later.start()
 
     def _show_form(self, client: int) -> None:
@@ -343,7 +350,8 @@ class CaseloadWindow(QMainWindow):
         self.stop_button.hide()
         clients = sum(not client.ended for client in self.desk.caseload.clients.values())
         unread = len(self.desk.strange)
-        self.say(looked_through_line(clients, added, unread) if clients or unread else NO_CLIENTS)
+        told = looked_through_line(clients, added, unread, all_read=self.desk.all_read)
+        self.say(told if clients or unread else NO_CLIENTS)
         self._menus.follow()
 
     def _do(self, edit: Edit) -> bool:

@@ -72,7 +72,9 @@ class CoachPages(QObject):
             self._leave_out(row)
             return
         subject = Subject(main.measure, journal.log_of(main.measure), main.overall)
-        content = coach_content_of(journal, subject, desk.today, row.client.code, card_sections(card))
+        content = coach_content_of(
+            journal, subject, desk.today, row.client.code, card_sections(card, with_notes=False)
+        )
         self._pages.append(lay_out(content, self._paper))
         self._next()
 

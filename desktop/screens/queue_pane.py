@@ -105,14 +105,20 @@ class QueuePane(QWidget):
         place = self.view.currentIndex().row()
         return self.model.rows[place] if 0 <= place < len(self.model.rows) else None
 
-    def show_rows(self, rows: list[QueueRow]) -> None:
-        """Take another queue; the client under the hand stays under it."""
-        self._keeping_client(lambda: self.model.show_rows(rows))
+    def show_rows(self, rows: list[QueueRow], *, is_typing: bool = False) -> None:
+        """Take another queue; the client under the hand stays under it, folded away only where nothing is typed."""
+        self._was_moved = self._was_moved or is_typing
+        self._keeping_client(lambda: self.model.show_rows(rows, self._chosen if is_typing else 0))
         self.counts.setText(counts_line(counts_of([row for row in rows if row.client.id > 0])))
         folded = self.model.folded
         self.fold.setVisible(folded > 0)
         word = "Fold away" if self.fold.isChecked() else "Show"
         self.fold.setText(f"{word} {folded} with nothing new")
+
+    def cover(self, is_covered: bool) -> None:
+        """Hide every reason while a client looks on."""
+        self.view.setColumnHidden(WHY, is_covered)
+        self.counts.setVisible(not is_covered)
 
     def choose(self, client: int) -> None:
         """Put a client under the hand, where it is shown."""

@@ -45,7 +45,7 @@ class SessionForm(QWidget):
         self.agreed.setPlaceholderText("what you agree on; it becomes a change mark in your file only")
         self.times, self.spare = QSpinBox(), QSpinBox()
         self.times.setRange(0, 7)
-        self.times.setSpecialValueText("no plan")
+        self.times.setSpecialValueText("plan as before")
         self.times.setSuffix(" days a week")
         self.times.setAccessibleName("Days a week")
         self.spare.setRange(0, 0)
@@ -121,6 +121,10 @@ class SessionForm(QWidget):
         return self.session != self._held or (
             client is not None and client.next_session != self._client.next_session
         )
+
+    def is_of(self, client: int) -> bool:
+        """Whether the form is that of a client, by id."""
+        return self._client is not None and self._client.id == client
 
     def show_client(self, client: Client | None, session: CoachingSession | None, today: date) -> None:
         """Take a client.

@@ -20,7 +20,7 @@ from desktop.wording.problems import stranger_sentence
 from desktop.wording.telling import Section, speech_of
 
 BUDGET_LINE = (
-    "A move is named when luck alone would name fewer than 1 of 40 clients with nothing new. "
+    "A move is named when luck alone would name about 1 of 40 clients with nothing new. "
     "So now and then a name stands here by luck."
 )
 """How often the queue is wrong, always beside it."""
@@ -29,7 +29,9 @@ NOT_FOUND = "No journal of this client is in the folder."
 NO_FOLDER = "No folder is chosen yet. Choose the folder that your clients' journals are put into."
 NO_CLIENTS = "There is no journal in this folder yet. Put your clients' journals there and look again."
 NOTHING_NEW = "Nothing new."
-COVERED = "Covered, so that your client can tell first. Press Space to show what the log says."
+COVERED = "Covered, so that your client can tell first."
+UNCOVER = "Show it (Space)"
+NOT_READ_YET = "Not read yet."
 CASELOAD_KEYS = (
     "Up and down: another client.\n"
     "L: mark as looked at, and go on to the next one.\n"
@@ -41,6 +43,8 @@ CASELOAD_KEYS = (
 )
 NOBODY_TODAY = "No client has a session today. Choose a client, or write down the next session."
 PAGES_TITLE = "Pages for today's clients"
+MOST_NOTES = 5
+LONG_LOG, FULL_PART = 60, 0.95
 MOST_PLACES = 4
 """Digits after the mark of a value that is shown as it was written."""
 
@@ -59,17 +63,15 @@ def reason_sentence(reason: Reason, facts: Facts | None) -> str:
         case "session today":
             return "Session today."
         case "quiet":
-            return _quiet(reason)
+            return _quiet(reason, facts)
         case "plan missed":
             return _plan_missed(reason.weeks)
         case "moved":
-            day = f" of {_day(facts.session)}" if facts is not None and facts.session is not None else ""
-            return " ".join(f"{one.title} since the session{day}. {one.headline}" for one in reason.said)
+            day = f" {_day(facts.session)}" if facts is not None and facts.session is not None else ""
+            return " ".join(f"{one.title} since{day}: {_short(one.headline)}" for one in reason.said)
         case "firm":
             (said,) = reason.said
-            return (
-                f"{said.title}: {said.headline}" if said.is_faded else f"{said.title}, firm now. {said.headline}"
-            )
+            return f"{said.title}{'' if said.is_faded else ', firm now'}: {_short(said.headline)}"
         case "past limit":
             return " ".join(past_limit_sentence(one) for one in reason.past)
         case "device":
@@ -85,6 +87,8 @@ def row_sentences(row: QueueRow) -> tuple[str, ...]:
     """Every reason of a client in words; one line that nothing is new where there is none."""
     if row.reasons:
         return tuple(reason_sentence(reason, row.facts) for reason in row.reasons)
+    if row.facts is None:
+        return (NOT_READ_YET,)
     looked = row.client.looked_on
     return (f"Nothing new since {_day(looked.toordinal())}." if looked else NOTHING_NEW,)
 
@@ -116,8 +120,10 @@ def progress_line(done: int, of: int) -> str:
     return f"{done} of {count(of, 'journal')} read."
 
 
-def looked_through_line(clients: int, added: int, unread: int) -> str:
+def looked_through_line(clients: int, added: int, unread: int, *, all_read: bool = True) -> str:
     """What came of looking through the folder."""
+    if not all_read:
+        return "Stopped before everything was read. What is not read yet stands as it was known before."
     left = f" {count(unread, 'file')} could not be read: see the end of the list." if unread else ""
     new = (
         f" {count(added, 'new client')}, named after {'its journal' if added == 1 else 'their journals'}."
@@ -144,13 +150,20 @@ def client_title(client: Client, today: date) -> str:
     when = client.next_session
     if when is None:
         return client.code
+    if when < today:
+        return f"{client.code}, session was on {long_day(when)}"
     return f"{client.code}, session {'today' if when == today else f'on {long_day(when)}'}"
 
 
-def card_sections(card: Card) -> tuple[Section, ...]:
-    """The card in reading order: agreed, kept, moved, missing, did it and did it move, a question to ask."""
+def card_sections(card: Card, *, with_notes: bool = True) -> tuple[Section, ...]:
+    """The card in reading order: agreed, kept, moved, missing, did it and did it move, a question to ask.
+
+    Args:
+        card: as numbers.
+        with_notes: the coach's notes too, which are nobody else's to read.
+    """
     sections = [
-        Section("Agreed", _agreed(card.session)),
+        Section("Agreed", _agreed(card)),
         Section("Kept", _kept(card)),
         Section("Moved", _moved(card)),
         Section("Missing", _missing(card)),
@@ -159,10 +172,13 @@ def card_sections(card: Card) -> tuple[Section, ...]:
     if both:
         sections.append(Section("Did it, and did it move?", (both,)))
     sections.append(Section("A question to ask", (question_of(card),)))
+    notes = [one for one in reversed(card.sessions) if one.note or (one is not card.session and one.agreed)]
+    if with_notes and notes:
+        sections.append(Section("Your notes", tuple(map(_noted, notes[:MOST_NOTES]))))
     return tuple(sections)
 
 
-COVERED_TITLES = frozenset({"Moved", "Did it, and did it move?"})
+COVERED_TITLES = frozenset({"Moved", "Did it, and did it move?", "A question to ask"})
 """The parts of a card that stay covered until the client has told."""
 
 
@@ -182,8 +198,10 @@ def two_by_two(card: Card) -> str:
         if has_moved:
             return f"The plan was kept in {of}, and it moved: {title}."
         bound = review.answer.bound
-        size = f" by more than {speech_of(review).with_unit(bound)} either way" if bound else " for sure"
-        return f"The plan was kept in {of}; {title} has not moved{size}."
+        if bound and review.answer.how_often is None:
+            size = speech_of(review).with_unit(bound)
+            return f"The plan was kept in {of}. If it moved at all, it was by less than {size}: {title}."
+        return f"The plan was kept in {of}; this log cannot tell if it moved: {title}."
     if has_moved:
         return f"The plan was kept in {of} only, and still it moved: {title}. Something else may be behind it."
     return f"The plan was kept in {of} only, so this log cannot say what it would do for {title}."
@@ -191,7 +209,7 @@ def two_by_two(card: Card) -> str:
 
 def question_of(card: Card) -> str:
     """One open question, from the most pressing reason that there is something to ask about."""
-    for reason in card.row.reasons:
+    for reason in card.row.held:
         match reason.kind:
             case "quiet":
                 return "How have the last days been, with the log and without it?"
@@ -203,30 +221,41 @@ def question_of(card: Card) -> str:
             case "moved" | "firm" if any(said.is_faded for said in reason.said):
                 return "What was different in the time it moved, and what came after?"
             case "moved" | "firm":
-                since = _since_words(card)
-                return f"What was different {since}?"
+                return f"What was different {_since_words(card, reason)}?"
             case "device":
                 return "What is new about the way it is measured?"
-    return "Is the log still a help, or is it time to write down less?"
+    # To write down less is only for a log that is long and has hardly a day missing.
+    is_full = card.of >= LONG_LOG and card.logged >= FULL_PART * card.of
+    return (
+        "Is the log still a help, or is it time to write down less?" if is_full else "How has it been since then?"
+    )
 
 
-def _since_words(card: Card) -> str:
-    main = card.main
-    for review in (main.since, main.overall) if main else ():
-        if review is not None and review.answer.since is not None:
-            return f"from about {full_day(date.fromordinal(review.answer.since.likely))} on"
-    return "since then"
+def _since_words(card: Card, reason: Reason) -> str:
+    """From when on the measure of the reason is another."""
+    named = {said.measure for said in reason.said}
+    one = next((one for one in (card.outcome, card.doing) if one is not None and one.measure in named), None)
+    review = None if one is None else one.since if reason.kind == "moved" else one.overall
+    if review is None or review.answer.since is None:
+        return "since then"
+    return f"from about {full_day(date.fromordinal(review.answer.since.likely))} on"
 
 
-def _quiet(reason: Reason) -> str:
+def _quiet(reason: Reason, facts: Facts | None) -> str:
     quiet = reason.quiet
     assert quiet is not None
+    if facts is not None and facts.last is None:
+        return f"No entry yet, {count(quiet.for_days, 'day')} after the session."
+    # Whether the person or the post is silent, only the coach can know.
+    copied = (
+        f" The copy is of {short_day(date.fromisoformat(facts.last_at[:10]))}." if facts and facts.last_at else ""
+    )
     told = f"Quiet for {count(quiet.for_days, 'day')}"
     if quiet.usual_longest is None:
-        return f"{told}; the log is too short to say what is usual."
+        return f"{told}; the log is too short to say what is usual.{copied}"
     if not quiet.usual_longest:
-        return f"{told}; no day was left out before."
-    return f"{told}; the longest before was {quiet.usual_longest}."
+        return f"{told}; no day was left out before.{copied}"
+    return f"{told}; the longest before was {quiet.usual_longest}.{copied}"
 
 
 def _plan_missed(weeks: Sequence[WeekOfPlan]) -> str:
@@ -239,13 +268,27 @@ def _plan(times: int, spare: int) -> str:
     return f"The plan of {count(times, 'day')} a week{spared} was"
 
 
-def _agreed(session: CoachingSession | None) -> tuple[str, ...]:
+def _agreed(card: Card) -> tuple[str, ...]:
+    session = card.session
     if session is None:
-        return ("No session is written down yet.",)
+        return ("Nothing is agreed yet.",)
     told = [f"On {full_day(session.day)}: {session.agreed.rstrip('.') or 'nothing new'}."]
-    if session.times:
-        told.append(f"Plan: {plan_words(session.times, session.spare)}.")
-    return (*told, *((session.note,) if session.note else ()))
+    planned = next((one for one in reversed(card.sessions) if one.times), None)
+    if planned is not None:
+        since = "" if planned is session else f" since {full_day(planned.day)}"
+        told.append(f"Plan{since}: {plan_words(planned.times, planned.spare)}.")
+    return tuple(told)
+
+
+def _noted(session: CoachingSession) -> str:
+    """One earlier session in a line."""
+    agreed = f" Agreed: {session.agreed.rstrip('.')}." if session.agreed else ""
+    return f"{full_day(session.day)}.{agreed} {session.note}".strip()
+
+
+def _short(headline: str) -> str:
+    """A headline behind the name of its measure: the numbers first."""
+    return headline.removeprefix("It moved: ")
 
 
 def _kept(card: Card) -> tuple[str, ...]:
@@ -275,7 +318,8 @@ def _moved_of(one: MeasureSince) -> list[str]:
     since = findings_of(one.since).headline
     told = [f"{one.title} since the session: {since}"]
     if overall != since:
-        told.append(f"Since the last change: {overall}")
+        days = one.overall.stretches[0].observations if one.overall.stretches else 0
+        told.append(f"Against the first {count(days, 'day')}, before any change: {overall}")
     return told
 
 

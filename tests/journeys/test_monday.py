@@ -16,6 +16,7 @@ from desktop.errors import StorageError
 from desktop.faces import load_faces
 from desktop.journal.clients import Coach
 from desktop.journal.journal import Journal
+from desktop.models.queue_table import WHY
 from desktop.screens.caseload_opening import open_caseload
 from desktop.screens.caseload_window import CaseloadWindow
 from desktop.screens.client_dialog import ClientDialog
@@ -329,3 +330,40 @@ def test_it_opens_from_the_window_of_a_journal(coach, qtbot):
     assert window.open_journal(coach.file)
     assert window.caseloads[coach.file] is not caseload
     qtbot.addWidget(window.caseloads[coach.file])
+
+
+def test_what_is_typed_while_files_are_read_stays(coach):
+    window = one_client(coach)
+    window.form.note.setPlainText("half a sentence")
+    path = coach.logs / "ana.dayfence"
+    path.unlink()
+    write_journal(path, journal(WALKING, *level(1, 40, 1, 45)))
+    with coach.qtbot.waitSignal(window.desk.looked_through, timeout=20_000):
+        window.desk.look_again()
+    assert window.form.note.toPlainText() == "half a sentence"
+    assert window.form.is_changed
+
+
+def test_undo_takes_the_text_out_of_the_form_too_and_keeps_what_was_typed_first(coach):
+    window = one_client(coach)
+    client = window.queue.current.client.id
+    window.form.note.setPlainText("note A")
+    assert window.keep_session()
+    window.undo()
+    assert window.desk.caseload.sessions_of(client) == []
+    assert window.form.note.toPlainText() == ""
+    assert not window.form.is_changed
+    window.form.note.setPlainText("note B")
+    window.undo()
+    assert window.desk.redoable.act == "write session"
+    window.redo()
+    assert window.form.note.toPlainText() == "note B"
+
+
+def test_while_the_answer_is_covered_the_queue_tells_no_reasons(coach):
+    window = one_client(coach)
+    coach.presses(Qt.Key.Key_T, CONTROL)
+    assert window.queue.view.isColumnHidden(WHY)
+    window.queue.view.setFocus()
+    coach.presses(Qt.Key.Key_Space)
+    assert not window.queue.view.isColumnHidden(WHY)

@@ -21,7 +21,11 @@ def card(*records, sessions=(), client=CLIENT):
 
 
 def told(shown) -> dict[str, str]:
-    return {section.title: " ".join(section.sentences) for section in card_sections(shown)}
+    return told_of(card_sections(shown))
+
+
+def told_of(sections) -> dict[str, str]:
+    return {section.title: " ".join(section.sentences) for section in sections}
 
 
 KEPT = level(1, 41, 1, 30)
@@ -39,23 +43,39 @@ def test_every_section_in_order():
         "Missing",
         "Did it, and did it move?",
         "A question to ask",
+        "Your notes",
     ]
-    assert told(shown)["Agreed"] == (
-        "On 17 March 2031: stairs at work. Plan: 5 days a week, 1 to spare. was tired"
-    )
+    assert told(shown)["Agreed"] == ("On 17 March 2031: stairs at work. Plan: 5 days a week, 1 to spare.")
     assert told(shown)["Kept"] == "In 2 of 2 weeks. Days done, week by week: 7, 7."
     assert told(shown)["Moved"].startswith("Knee score since the session: It moved: ")
     assert told(shown)["Missing"] == "14 of 14 days since the session have an entry."
     assert told(shown)["Did it, and did it move?"] == (
         "The plan was kept in 2 of 2 weeks, and it moved: Knee score."
     )
+    assert told(shown)["Your notes"] == "17 March 2031. Agreed: stairs at work. was tired"
     assert set(told(shown)) >= COVERED_TITLES
+    # A page may be read by others: what the coach noted is not on it.
+    assert "tired" not in " ".join(told_of(card_sections(shown, with_notes=False)).values())
+
+
+def test_a_note_alone_moves_nothing_and_the_plan_stays_in_force():
+    rang = session(3, note="rang, no answer")
+    agreed = card(*KEPT, *BETTER_KNEE, sessions=PLAN)
+    noted = card(*KEPT, *BETTER_KNEE, sessions=[*PLAN, rang])
+    shown, before = told(noted), told(agreed)
+    for title in ("Agreed", "Kept", "Moved", "Missing"):
+        assert shown[title] == before[title]
+    assert shown["Your notes"].startswith("28 March 2031. rang, no answer 17 March 2031.")
+    later = card(*KEPT, *BETTER_KNEE, sessions=[*PLAN, session(7, "longer walks")])
+    assert told(later)["Agreed"] == (
+        "On 24 March 2031: longer walks. Plan since 17 March 2031: 5 days a week, 1 to spare."
+    )
 
 
 def test_kept_and_not_moved_says_by_how_much_it_can_have_moved_at_most():
     both = two_by_two(card(*KEPT, *SAME_KNEE, sessions=PLAN))
-    assert both.startswith("The plan was kept in 2 of 2 weeks; Knee score has not moved by more than ")
-    assert both.endswith(" either way.")
+    assert both.startswith("The plan was kept in 2 of 2 weeks. If it moved at all, it was by less than ")
+    assert both.endswith(": Knee score.")
 
 
 def test_missed_and_moved_or_not():
@@ -103,7 +123,7 @@ def test_silence_up_to_yesterday_is_a_gap_too():
 
 def test_before_the_first_session():
     shown = told(card(*KEPT, *SAME_KNEE))
-    assert shown["Agreed"] == "No session is written down yet."
+    assert shown["Agreed"] == "Nothing is agreed yet."
     assert shown["Kept"] == "There is no plan of days a week to look at, or no whole week under it yet."
     assert shown["Missing"] == "41 of 41 days in all have an entry."
 
@@ -141,7 +161,9 @@ def test_without_a_measure():
             (),
             "What is new about the way it is measured?",
         ),
-        (KEPT, (), "Is the log still a help, or is it time to write down less?"),
+        (KEPT, (), "How has it been since then?"),
+        (level(1, 90, 1, 30), (), "Is the log still a help, or is it time to write down less?"),
+        ([], (), "How has it been since then?"),
     ],
 )
 def test_a_question_to_ask_and_no_verdict(records, sessions, question):

@@ -48,11 +48,11 @@ def test_nothing_new_is_said_as_that():
 
 def test_a_client_gone_quiet_against_their_own_habit():
     found = facts(*level(1, 40, 12, 30))
-    assert said(found, "quiet") == "Quiet for 11 days; no day was left out before."
+    assert said(found, "quiet") == "Quiet for 11 days; no day was left out before. The copy is of Sun 30 Mar."
     gappy = facts(*(one for one in level(1, 40, 12, 30) if (day(0) - one.day).days not in (20, 21, 22)))
-    assert said(gappy, "quiet") == "Quiet for 11 days; the longest before was 3."
+    assert said(gappy, "quiet").startswith("Quiet for 11 days; the longest before was 3.")
     short = facts(*level(1, 13, 11, 30))
-    assert said(short, "quiet") == "Quiet for 10 days; the log is too short to say what is usual."
+    assert said(short, "quiet").startswith("Quiet for 10 days; the log is too short to say what is usual.")
 
 
 def test_a_pause_that_was_said_is_not_silence():
@@ -95,7 +95,7 @@ def test_the_clients_own_plan_counts_until_one_is_agreed():
 
 def test_a_move_since_the_session():
     found = facts(*level(1, 40, 15, 30), *level(1, 14, 1, 45), sessions=[session(14)])
-    assert said(found, "moved").startswith("Walking since the session of Mon 17 Mar. It moved: 45")
+    assert said(found, "moved").startswith("Walking since Mon 17 Mar: 45")
     # The same days, with the session after the move: nothing moved since.
     later = facts(*level(1, 60, 30, 30), *level(1, 29, 1, 45), sessions=[session(14)])
     assert "moved" not in reasons(later)
@@ -113,7 +113,7 @@ def test_two_measures_share_the_budget():
 def test_an_answer_that_just_became_firm_and_that_was_looked_at():
     change = Change(1, day(14), "earlier stop")
     found = facts(*level(1, 40, 15, 30), *level(1, 14, 1, 45), change)
-    assert said(found, "firm").startswith("Walking, firm now. It moved: 45")
+    assert said(found, "firm").startswith("Walking, firm now: 45")
     row = row_of(CLIENT, found, None, MONDAY)
     looked = replace(CLIENT, looked_on=MONDAY, looked_reasons=row.marks)
     assert row_of(looked, found, None, MONDAY).reasons == ()
@@ -258,3 +258,70 @@ def test_an_empty_journal_has_nothing_to_say():
 def test_a_blank_day_is_no_entry():
     blank = [Entry(1, day(1), kind="blank")]
     assert facts(*level(1, 40, 12, 30), *blank).last == day(12).toordinal()
+
+
+def looked_at(client, found, today=MONDAY):
+    """The client after the coach pressed the key for looked at."""
+    return replace(client, looked_on=today, looked_reasons=row_of(client, found, None, today).marks)
+
+
+def test_a_silence_that_goes_on_is_news_again_a_week_later():
+    found = facts(*level(1, 40, 12, 30))
+    looked = looked_at(CLIENT, found)
+    assert row_of(looked, found, None, MONDAY).reasons == ()
+    assert row_of(looked, found, None, day(-2)).reasons == ()
+    assert [one.kind for one in row_of(looked, found, None, day(-7)).reasons] == ["quiet"]
+
+
+def test_looking_again_at_what_was_looked_at_brings_nothing_back():
+    found = facts(*level(1, 40, 12, 30), Span(1, day(20), day(-60), "device"))
+    once = looked_at(CLIENT, found)
+    twice = looked_at(once, found)
+    assert once.looked_reasons == twice.looked_reasons != ""
+    row = row_of(twice, found, None, MONDAY)
+    assert row.reasons == ()
+    assert {one.kind for one in row.held} == {"quiet", "device"}
+
+
+def test_a_second_move_after_a_new_session_is_another_one():
+    first = facts(*level(1, 60, 36, 30), *level(1, 35, 15, 45), sessions=[session(35, "stairs")])
+    looked = looked_at(CLIENT, first, day(15))
+    days = [*level(1, 60, 36, 30), *level(1, 35, 15, 45), *level(1, 14, 1, 60)]
+    second = facts(*days, sessions=[session(35, "stairs"), session(14, "hills")])
+    assert "moved" in {one.kind for one in row_of(looked, second, None, MONDAY).reasons}
+
+
+def test_a_log_that_was_never_begun_is_on_top():
+    found = facts(sessions=[session(28, "walks", times=5)])
+    assert said(found, "quiet") == "No entry yet, 27 days after the session."
+    assert reasons(facts(sessions=[session(5, "walks")])) == {}
+
+
+def test_an_entry_of_a_wrong_year_changes_nothing():
+    wrong = entries(1, {-700: 30.0})
+    plain = facts(*level(1, 40, 12, 30), sessions=[session(20, times=5)])
+    with_it = facts(*level(1, 40, 12, 30), *wrong, sessions=[session(20, times=5)])
+    assert (with_it.last, with_it.done) == (plain.last, plain.done)
+    assert reasons(with_it).keys() == reasons(plain).keys()
+
+
+def test_before_everything_is_read_nobody_is_said_to_have_no_journal():
+    row = row_of(CLIENT, None, None, MONDAY, all_read=False)
+    assert row.reasons == ()
+    assert row_sentences(row) == ("Not read yet.",)
+
+
+def test_two_questions_share_one_budget():
+    """A move since the session and one since an earlier change: together as rare as one of them alone."""
+    change = Change(1, day(30), "earlier stop")
+    found = facts(*level(1, 60, 1, 30), change, sessions=[session(14)])
+    (lately,), answer = found.lately, found.answer
+    weak = replace(found, lately=(replace(lately, chance=0.02),), answer=answer)
+    assert "moved" not in reasons(weak)
+    assert "moved" in reasons(replace(weak, answer=replace(answer, change=found.session)))
+
+
+def test_one_measure_chosen_leaves_the_other_to_the_program():
+    both = journal()
+    assert measures_of(both, replace(CLIENT, doing=1)) == (1, 2)
+    assert measures_of(both, replace(CLIENT, outcome=2)) == (1, 2)

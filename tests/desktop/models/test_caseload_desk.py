@@ -210,3 +210,84 @@ def test_the_edits_of_a_coach(desk, qtbot):
     assert not write_session(caseload, CoachingSession(1, MONDAY))
     with pytest.raises(ValueError, match="spare"):
         write_session(caseload, CoachingSession(1, MONDAY, times=1, spare=2))
+
+
+def test_another_clients_journal_under_the_old_name_is_the_other_clients(desk, folder, qtbot):
+    write_journal(folder / "bob.dayfence", others("b" * 32))
+    look(desk, qtbot)
+    anna = desk.caseload.client_of(JOURNAL_ID)
+    shutil.copyfile(folder / "bob.dayfence", folder / "ana.dayfence")
+    got = []
+    # Before the folder is looked at again the file is refused, since it is not Anna's.
+    desk.read_journal(anna, got.append, got.append)
+    qtbot.waitUntil(lambda: bool(got))
+    assert isinstance(got[0], StorageError)
+    look(desk, qtbot)
+    assert JOURNAL_ID not in desk.files
+    assert {row.client.id: [one.kind for one in row.reasons] for row in desk.rows()}[anna.id] == ["missing"]
+
+
+def others(journal_id: str):
+    whole = journal(*level(1, 40, 1, 300))
+    return replace(whole, person=replace(whole.person, journal_id=journal_id, name="Bob"))
+
+
+def test_a_whole_older_copy_counts_while_the_newer_one_is_damaged(desk, folder, qtbot):
+    write_journal(folder / "z newer.dayfence", journal(*level(1, 40, 1, 30)))
+    look(desk, qtbot)
+    assert desk.facts[JOURNAL_ID].last == day(1).toordinal()
+    (folder / "z newer.dayfence").write_bytes(b"no journal any more")
+    look(desk, qtbot)
+    assert desk.facts[JOURNAL_ID].last == day(3).toordinal()
+    assert JOURNAL_ID not in desk.errors
+    assert list(desk.strange) == ["z newer.dayfence"]
+
+
+def test_what_is_remembered_is_shown_before_anything_is_read(desk, path, folder, qtbot):
+    look(desk, qtbot)
+    desk.close()
+    shutil.rmtree(folder)
+    again = CaseloadDesk(CaseloadStore.open(path, clock=lambda: NOW), now=lambda: NOW)
+    (row,) = again.rows()
+    assert row.facts is not None
+    with qtbot.waitSignal(again.not_readable):
+        again.look_again()
+    (row,) = again.rows()
+    assert [one.kind for one in row.reasons] == []
+    again.close()
+
+
+def test_another_folder_chosen_while_one_is_read_is_read(desk, tmp_path, qtbot):
+    other = tmp_path / "other"
+    other.mkdir()
+    write_journal(other / "bob.dayfence", others("b" * 32))
+    desk.look_again()
+    desk.do(set_coach(desk.caseload, replace(desk.caseload.coach, folder=str(other))))
+    with qtbot.waitSignal(desk.looked_through, timeout=20_000):
+        desk.look_again()
+    assert list(desk.files) == ["b" * 32]
+    assert desk.all_read
+
+
+def test_a_session_with_the_next_one_is_one_act(desk, qtbot):
+    look(desk, qtbot)
+    client = next(iter(desk.caseload.clients.values()))
+    written = CoachingSession(client.id, MONDAY, "stairs")
+    desk.do(write_session(desk.caseload, written, replace(client, next_session=day(-14))))
+    assert desk.caseload.clients[client.id].next_session == day(-14)
+    desk.undo()
+    assert desk.caseload.clients[client.id] == client
+    assert desk.caseload.sessions_of(client.id) == []
+    only_next = write_session(
+        desk.caseload, CoachingSession(client.id, MONDAY), replace(client, next_session=day(-7))
+    )
+    assert (only_next.act, len(only_next.changes)) == ("set client", 1)
+
+
+def test_closed_while_reading_nothing_is_written_afterwards(desk, folder, qtbot):
+    for number in range(6):
+        write_journal(folder / f"x{number}.dayfence", others(f"{number:032x}"))
+    desk.look_again()
+    desk.close()
+    qtbot.waitUntil(lambda: not desk.is_reading)
+    assert desk.caseload.clients == {}
