@@ -106,7 +106,7 @@ class QueuePane(QWidget):
         return self.model.rows[place] if 0 <= place < len(self.model.rows) else None
 
     def show_rows(self, rows: list[QueueRow], *, is_typing: bool = False) -> None:
-        """Take another queue; the client under the hand stays under it, and is not folded away under a typing one."""
+        """Take another queue; the client under the hand stays under it, folded away only when nothing is typed."""
         self._was_moved = self._was_moved or is_typing
         self._keeping_client(lambda: self.model.show_rows(rows, self._chosen if is_typing else 0))
         self.counts.setText(counts_line(counts_of([row for row in rows if row.client.id > 0])))
