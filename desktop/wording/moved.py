@@ -104,6 +104,8 @@ class MovedTeller(Teller):
                 return f"It may have moved: {self._levels()}"
             case _ if self._is_faded:
                 return "It moved at first, and has gone back since."
+            case _ if self._began_before:
+                return f"It moved before the day you marked: {self._levels()}"
             case _:
                 return f"It moved: {self._levels()}"
 
@@ -118,6 +120,12 @@ class MovedTeller(Teller):
         assert switches is not None
         changes = "the change" if switches.of == 1 else f"{switches.moved} of {switches.of} changes"
         return f"{changes}, to and fro" if switches.to_and_fro else changes
+
+    @property
+    def _began_before(self) -> bool:
+        """Whether it began before the marked day, as surely as the range of its start can tell."""
+        since = self.answer.since
+        return since is not None and since.before_change and not self._is_anytime(since)
 
     @property
     def _is_faded(self) -> bool:

@@ -45,6 +45,8 @@ COMMANDS: tuple[tuple[str, ...], ...] = (
     ("Log", "Settings of this measure…"),
     ("Log", "What this day has held…"),
     ("Log", "Go to a day…"),
+    ("Log", "Find…"),
+    ("Log", "A plan of days a week…"),
     ("File", "The page…"),
     ("File", "Earlier copies…"),
     ("File", "A copy to hand over…"),

@@ -255,6 +255,7 @@ def test_other_periods_are_named_throughout(period, step):
 def test_a_move_that_began_before_the_change_says_so():
     said = told(LOW + HIGH * 2, 28, **MINUTES)
     assert "That is before the day you marked, 31 March." in said
+    assert said.startswith("It moved before the day you marked: 38.5 minutes")
 
 
 def test_what_became_of_the_move_is_told():
