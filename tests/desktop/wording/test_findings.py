@@ -253,9 +253,9 @@ def test_other_periods_are_named_throughout(period, step):
 
 
 def test_a_move_that_began_before_the_change_says_so():
-    said = told(LOW + HIGH * 2, 28, **MINUTES)
-    assert "That is before the day you marked, 31 March." in said
-    assert said.startswith("It moved before the day you marked: 38.5 minutes")
+    assert "That is before the day you marked, 31 March." in told(LOW + HIGH * 2, 28, **MINUTES)
+    sure = told(LOW * 2 + HIGH[:7] + HIGH * 2, 35, **MINUTES)
+    assert sure.startswith("It moved before the day you marked: 38.5 minutes on a middle day, 22 before.")
 
 
 def test_what_became_of_the_move_is_told():
