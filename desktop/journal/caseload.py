@@ -7,12 +7,12 @@ from dataclasses import dataclass, field
 from datetime import date
 
 from desktop.journal.clients import Client, Coach, CoachingSession
+from desktop.journal.kept import Kept
 from desktop.journal.records import Record
-from desktop.journal.row_change import RowChange, key_of
 
 
 @dataclass
-class Caseload:
+class Caseload(Kept):
     """Every record of one caseload; changed only through :meth:`apply`.
 
     Attributes:
@@ -40,21 +40,6 @@ class Caseload:
         for record in listed:
             caseload._put(record)
         return caseload
-
-    def apply(self, changes: Iterable[RowChange]) -> None:
-        """Make the changes, in order.
-
-        Raises:
-            ValueError: a change starts from a record that is not what the caseload holds; nothing after it is
-                made.
-        """
-        for change in changes:
-            if self.find(change.record) != change.before:
-                raise ValueError(f"the caseload does not hold what {key_of(change.record)} starts from")
-            if change.after is not None:
-                self._put(change.after)
-            elif change.before is not None:
-                self._remove(change.before)
 
     def find(self, like: Record) -> Record | None:
         """The record with the key of ``like`` as it stands, or None."""

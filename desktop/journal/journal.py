@@ -8,14 +8,14 @@ from datetime import date
 
 import analysis.log
 from desktop.journal.clients import Client, Coach, CoachingSession
+from desktop.journal.kept import Kept
 from desktop.journal.records import Change, DayNote, Entry, Measure, Person, Plan, Record, Span
-from desktop.journal.row_change import RowChange, key_of
 
 EntryKey = tuple[date, str]
 
 
 @dataclass
-class Journal:
+class Journal(Kept):
     """Every record of one journal; changed only through :meth:`apply`.
 
     Attributes:
@@ -61,21 +61,6 @@ class Journal:
             *self.plans.values(),
             *self.notes.values(),
         ]
-
-    def apply(self, changes: Iterable[RowChange]) -> None:
-        """Make the changes, in order.
-
-        Raises:
-            ValueError: a change starts from a record that is not what the journal holds; nothing after it is
-                made.
-        """
-        for change in changes:
-            if self.find(change.record) != change.before:
-                raise ValueError(f"the journal does not hold what {key_of(change.record)} starts from")
-            if change.after is not None:
-                self._put(change.after)
-            elif change.before is not None:
-                self._remove(change.before)
 
     def find(self, like: Record) -> Record | None:
         """The record with the key of ``like`` as it stands, or None."""

@@ -9,14 +9,13 @@ from PySide6.QtWidgets import QFileDialog, QMessageBox, QWidget
 
 from desktop.errors import StorageError
 from desktop.journal.clients import Coach
-from desktop.screens.opening import Clock
+from desktop.screens.opening import Clock, wants_to_read
 from desktop.storage.backups import copies_of, newest_good_of
 from desktop.storage.database import application_id_of
 from desktop.storage.layout import CASELOAD
 from desktop.storage.salvage import aside_name, copy_to, put_in_place
 from desktop.storage.schema import CASELOAD_ID
 from desktop.storage.store import CaseloadStore
-from desktop.wording.damage import READ_ONLY, open_elsewhere_sentence
 from desktop.wording.earlier import moment
 from desktop.wording.problems import damaged_caseload_sentence, problem_sentence
 
@@ -38,7 +37,8 @@ def open_caseload(parent: QWidget, path: Path, now: Clock) -> CaseloadStore | No
         try:
             match error.reason:
                 case "open already":
-                    return _open_to_read(parent, path, now)
+                    is_read = wants_to_read(parent, path)
+                    return CaseloadStore.open(path, clock=now, to_read=True) if is_read else None
                 case "damaged" | "missing":
                     return _open_copy(parent, path, now, error)
         except StorageError as second:
@@ -53,14 +53,6 @@ def ask_clients_folder(parent: QWidget, folder: Path | None) -> Path | None:
         parent, "The folder of your clients' journals", str(folder or Path.home())
     )
     return Path(chosen) if chosen else None
-
-
-def _open_to_read(parent: QWidget, path: Path, now: Clock) -> CaseloadStore | None:
-    box = QMessageBox(QMessageBox.Icon.Information, "Dayfence", open_elsewhere_sentence(path), parent=parent)
-    read = box.addButton(READ_ONLY, QMessageBox.ButtonRole.AcceptRole)
-    box.addButton(QMessageBox.StandardButton.Cancel)
-    box.exec()
-    return CaseloadStore.open(path, clock=now, to_read=True) if box.clickedButton() is read else None
 
 
 def _open_copy(parent: QWidget, path: Path, now: Clock, error: StorageError) -> CaseloadStore | None:

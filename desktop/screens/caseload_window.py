@@ -39,7 +39,7 @@ from desktop.screens.caseload_opening import ask_clients_folder
 from desktop.screens.client_dialog import ClientDialog
 from desktop.screens.queue_pane import QueuePane
 from desktop.screens.session_form import SessionForm
-from desktop.screens.settings import TEXT_SIZES, Settings
+from desktop.screens.settings import Settings
 from desktop.storage.store import CaseloadStore
 from desktop.wording.caseload import (
     CASELOAD_KEYS,
@@ -183,13 +183,11 @@ class CaseloadWindow(QMainWindow):
 
     def larger_text(self) -> None:
         """One step larger, up to twice the plain size."""
-        larger = [size for size in TEXT_SIZES if size > self.settings.text_percent]
-        self._set_text_size(min(larger, default=TEXT_SIZES[-1]))
+        self._set_text_size(self.settings.larger_text)
 
     def smaller_text(self) -> None:
         """One step smaller, down to the plain size."""
-        smaller = [size for size in TEXT_SIZES if size < self.settings.text_percent]
-        self._set_text_size(max(smaller, default=TEXT_SIZES[0]))
+        self._set_text_size(self.settings.smaller_text)
 
     def show_keys(self) -> None:
         """List the keys."""

@@ -33,7 +33,7 @@ from desktop.screens.file_questions import JOURNAL_ENDING, ask_journal, ask_new_
 from desktop.screens.log_commands import LogCommands
 from desktop.screens.menus import Menus
 from desktop.screens.opening import mend, open_with_questions
-from desktop.screens.settings import TEXT_SIZES, Settings
+from desktop.screens.settings import Settings
 from desktop.screens.start_screen import StartScreen
 from desktop.screens.status_line import trouble_sentence
 from desktop.screens.tables_out import bring_in_package
@@ -224,13 +224,11 @@ class MainWindow(QMainWindow):
 
     def larger_text(self) -> None:
         """One step larger, up to twice the plain size."""
-        larger = [size for size in TEXT_SIZES if size > self.settings.text_percent]
-        self._set_text_size(min(larger, default=TEXT_SIZES[-1]))
+        self._set_text_size(self.settings.larger_text)
 
     def smaller_text(self) -> None:
         """One step smaller, down to the plain size."""
-        smaller = [size for size in TEXT_SIZES if size < self.settings.text_percent]
-        self._set_text_size(max(smaller, default=TEXT_SIZES[0]))
+        self._set_text_size(self.settings.smaller_text)
 
     def say(self, sentence: str) -> None:
         """Say something in the status line."""

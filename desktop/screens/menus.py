@@ -2,15 +2,15 @@
 
 from __future__ import annotations
 
-from collections.abc import Callable
 from functools import partial
 from typing import TYPE_CHECKING
 
-from PySide6.QtGui import QAction, QActionGroup, QKeySequence
+from PySide6.QtGui import QAction, QActionGroup
 from PySide6.QtWidgets import QMenu
 
 from analysis.log import PERIODS
 from desktop.edits.days import EmptyKind
+from desktop.screens.actions import Keys, add_action
 from desktop.screens.bring_in_dialog import bring_in_pasted
 from desktop.screens.chart_pane import PERIOD_WORDS, show_key_of
 from desktop.screens.earlier_copies import show_earlier_copies
@@ -28,8 +28,6 @@ if TYPE_CHECKING:
     from desktop.screens.log_commands import LogCommands
     from desktop.screens.main_window import MainWindow
 
-Keys = QKeySequence.StandardKey
-
 
 class Menus:
     """Fills the window's menu bar and keeps it in step with the open journal."""
@@ -44,10 +42,10 @@ class Menus:
         self._fill_edit(edit)
         self._fill_log(log)
         self._fill_view(view)
-        _add(help_menu, "&Keys", partial(show_keys, window), Keys.HelpContents)
-        _add(help_menu, "What the &marks mean", partial(show_key_of, window.workspace.chart_pane))
-        _add(help_menu, "How often is it &wrong?", partial(show_how_often_wrong, window))
-        _add(help_menu, "&About Dayfence", partial(show_about, window))
+        add_action(help_menu, "&Keys", partial(show_keys, window), Keys.HelpContents)
+        add_action(help_menu, "What the &marks mean", partial(show_key_of, window.workspace.chart_pane))
+        add_action(help_menu, "How often is it &wrong?", partial(show_how_often_wrong, window))
+        add_action(help_menu, "&About Dayfence", partial(show_about, window))
 
     def follow(self) -> None:
         """Offer what can be done with the journal as it stands."""
@@ -67,44 +65,46 @@ class Menus:
 
     def _fill_file(self, file: QMenu) -> None:
         window = self._window
-        _add(file, "&New journal…", window.new_journal, Keys.New)
-        _add(file, "&Open a journal…", window.open_file, Keys.Open)
-        _add(file, "Open somebody &else's journal…", partial(open_stranger, window))
-        _add(file, "Open the &sample journal", window.open_sample)
-        _add(file, "A coach's &caseload…", partial(show_own_caseload, window))
+        add_action(file, "&New journal…", window.new_journal, Keys.New)
+        add_action(file, "&Open a journal…", window.open_file, Keys.Open)
+        add_action(file, "Open somebody &else's journal…", partial(open_stranger, window))
+        add_action(file, "Open the &sample journal", window.open_sample)
+        add_action(file, "A coach's &caseload…", partial(show_own_caseload, window))
         file.addSeparator()
-        _add(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")
-        _add(file, "Bring in the &pasted block as a table…", partial(bring_in_pasted, window), "Ctrl+Shift+V")
-        self._reading.append(_add(file, "The &page…", partial(_show_page, window), Keys.Print))
+        add_action(file, "&Bring in a table…", window.bring_in_table, "Ctrl+I")
+        add_action(
+            file, "Bring in the &pasted block as a table…", partial(bring_in_pasted, window), "Ctrl+Shift+V"
+        )
+        self._reading.append(add_action(file, "The &page…", partial(_show_page, window), Keys.Print))
         file.addSeparator()
         self._reading += [
-            _add(file, "&Earlier copies…", partial(show_earlier_copies, window)),
-            _add(file, "Save a &copy…", partial(keep_elsewhere, window)),
-            _add(file, "Save a copy as a &table…", partial(save_as_table, window)),
-            _add(file, "A copy to &hand over…", partial(hand_over, window)),
+            add_action(file, "&Earlier copies…", partial(show_earlier_copies, window)),
+            add_action(file, "Save a &copy…", partial(keep_elsewhere, window)),
+            add_action(file, "Save a copy as a &table…", partial(save_as_table, window)),
+            add_action(file, "A copy to &hand over…", partial(hand_over, window)),
         ]
-        self._writing.append(_add(file, "Erase for &good…", partial(erase_for_good, window)))
+        self._writing.append(add_action(file, "Erase for &good…", partial(erase_for_good, window)))
         file.addSeparator()
-        _add(file, "&Quit", window.close, Keys.Quit)
+        add_action(file, "&Quit", window.close, Keys.Quit)
 
     def _fill_edit(self, edit: QMenu) -> None:
         window = self._window
-        self._undo = _add(edit, "&Undo", window.undo, Keys.Undo)
-        self._redo = _add(edit, "&Redo", window.redo, "Ctrl+Shift+Z")
+        self._undo = add_action(edit, "&Undo", window.undo, Keys.Undo)
+        self._redo = add_action(edit, "&Redo", window.redo, "Ctrl+Shift+Z")
         edit.addSeparator()
         self._reading += [
-            _add(edit, "&Copy days", window.workspace.days.copy),
-            _add(edit, "Copy chart as p&icture", partial(_copy_chart, window)),
-            _add(edit, "Copy &findings as text", partial(copy_findings, window)),
+            add_action(edit, "&Copy days", window.workspace.days.copy),
+            add_action(edit, "Copy chart as p&icture", partial(_copy_chart, window)),
+            add_action(edit, "Copy &findings as text", partial(copy_findings, window)),
         ]
-        self._writing.append(_add(edit, "&Paste days", window.workspace.days.paste))
+        self._writing.append(add_action(edit, "&Paste days", window.workspace.days.paste))
 
     def _fill_log(self, log: QMenu) -> None:
         window, commands = self._window, self._window.log
-        self._writing.append(_add(log, "&Add a measure…", window.start_log, "Ctrl+Shift+A"))
-        mark = _add(log, "&Mark a change…", commands.mark_change, "Ctrl+M")
-        name = _add(log, "&Name days…", commands.name_days, "Ctrl+Shift+D")
-        aside = _add(log, "&Set the day aside, or put it back…", commands.set_day_aside, "Ctrl+D")
+        self._writing.append(add_action(log, "&Add a measure…", window.start_log, "Ctrl+Shift+A"))
+        mark = add_action(log, "&Mark a change…", commands.mark_change, "Ctrl+M")
+        name = add_action(log, "&Name days…", commands.name_days, "Ctrl+Shift+D")
+        aside = add_action(log, "&Set the day aside, or put it back…", commands.set_day_aside, "Ctrl+D")
         kinds = log.addMenu("The chosen &days were")
         self._writing += [mark, name, aside, kinds.menuAction(), *fill_kinds(kinds, commands)]
         # The same by the other mouse button on the table, or by the menu key.
@@ -114,25 +114,25 @@ class Menus:
         spans.aboutToShow.connect(partial(self._list_spans, spans))
         log.addSeparator()
         self._writing += [
-            _add(log, "Settings of this m&easure…", commands.measure_settings, "Ctrl+E"),
-            _add(log, "A &plan of days a week…", commands.plan),
-            _add(log, "Ca&utions of this measure…", commands.caution_settings),
-            _add(log, "Move the column &left", partial(commands.move_measure, -1), "Ctrl+Shift+Left"),
-            _add(log, "Move the column &right", partial(commands.move_measure, 1), "Ctrl+Shift+Right"),
-            _add(log, "Put this measure awa&y", commands.archive_measure),
-            _add(log, "Remove this measure…", commands.remove_measure),
+            add_action(log, "Settings of this m&easure…", commands.measure_settings, "Ctrl+E"),
+            add_action(log, "A &plan of days a week…", commands.plan),
+            add_action(log, "Ca&utions of this measure…", commands.caution_settings),
+            add_action(log, "Move the column &left", partial(commands.move_measure, -1), "Ctrl+Shift+Left"),
+            add_action(log, "Move the column &right", partial(commands.move_measure, 1), "Ctrl+Shift+Right"),
+            add_action(log, "Put this measure awa&y", commands.archive_measure),
+            add_action(log, "Remove this measure…", commands.remove_measure),
         ]
         away = log.addMenu("Measures put a&way")
         away.aboutToShow.connect(partial(self._list_put_away, away))
         log.addSeparator()
         self._reading += [
-            _add(log, "What this day has &held…", partial(show_held, window), "Ctrl+H"),
+            add_action(log, "What this day has &held…", partial(show_held, window), "Ctrl+H"),
             changes.menuAction(),
             spans.menuAction(),
             away.menuAction(),
-            _add(log, "&Find…", partial(show_find, window), Keys.Find),
-            _add(log, "Go to &today", window.go_to_today, "Ctrl+T"),
-            _add(log, "&Go to a day…", commands.go_to_day, "Ctrl+G"),
+            add_action(log, "&Find…", partial(show_find, window), Keys.Find),
+            add_action(log, "Go to &today", window.go_to_today, "Ctrl+T"),
+            add_action(log, "&Go to a day…", commands.go_to_day, "Ctrl+G"),
         ]
 
     def _fill_view(self, view: QMenu) -> None:
@@ -141,21 +141,21 @@ class Menus:
         measures.aboutToShow.connect(partial(self._list_measures, measures))
         group = QActionGroup(window)
         for place, period in enumerate(PERIODS, start=1):
-            action = _add(
+            action = add_action(
                 view, PERIOD_WORDS[period].capitalize(), partial(window.choose_period, period), f"Ctrl+{place}"
             )
             action.setCheckable(True)
             group.addAction(action)
         self._periods = group.actions()
-        whole = _add(view, "&Whole chart", window.show_whole_chart, "Ctrl+0")
+        whole = add_action(view, "&Whole chart", window.show_whole_chart, "Ctrl+0")
         self._reading += [measures.menuAction(), *self._periods, whole]
         view.addSeparator()
         themes = view.addMenu("&Theme")
-        _add(themes, "As the computer is set", partial(window.set_theme, "system"))
-        _add(themes, "Light", partial(window.set_theme, "light"))
-        _add(themes, "Dark", partial(window.set_theme, "dark"))
-        _add(view, "&Larger text", window.larger_text, "Ctrl++")
-        _add(view, "S&maller text", window.smaller_text, "Ctrl+-")
+        add_action(themes, "As the computer is set", partial(window.set_theme, "system"))
+        add_action(themes, "Light", partial(window.set_theme, "light"))
+        add_action(themes, "Dark", partial(window.set_theme, "dark"))
+        add_action(view, "&Larger text", window.larger_text, "Ctrl++")
+        add_action(view, "S&maller text", window.smaller_text, "Ctrl+-")
 
     def _list_changes(self, menu: QMenu) -> None:
         menu.clear()
@@ -165,8 +165,8 @@ class Menus:
             menu.addAction("No change is marked yet").setEnabled(False)
         for change in changes:
             one = menu.addMenu(f"{full_day(change.day)}: {change.label or 'no label'}")
-            _add(one, "Edit…", partial(self._window.log.edit_change, change.id))
-            _add(one, "Remove", partial(self._window.log.remove_change, change.id))
+            add_action(one, "Edit…", partial(self._window.log.edit_change, change.id))
+            add_action(one, "Remove", partial(self._window.log.remove_change, change.id))
 
     def _list_spans(self, menu: QMenu) -> None:
         menu.clear()
@@ -181,7 +181,7 @@ class Menus:
                 else full_day(span.first)
             )
             one = menu.addMenu(f"{days}: {span.label or span.kind}")
-            _add(one, "Take the name away", partial(self._window.log.remove_span, span.id))
+            add_action(one, "Take the name away", partial(self._window.log.remove_span, span.id))
 
     def _list_put_away(self, menu: QMenu) -> None:
         menu.clear()
@@ -190,13 +190,15 @@ class Menus:
         if not away:
             menu.addAction("No measure is put away").setEnabled(False)
         for measure in away:
-            _add(menu, f"Bring back {measure.title}", partial(self._window.log.bring_back_measure, measure.id))
+            add_action(
+                menu, f"Bring back {measure.title}", partial(self._window.log.bring_back_measure, measure.id)
+            )
 
     def _list_measures(self, menu: QMenu) -> None:
         menu.clear()
         session = self._window.session
         for measure in session.journal.columns() if session else []:
-            action = _add(menu, measure.title, partial(self._window.show_measure, measure.id))
+            action = add_action(menu, measure.title, partial(self._window.show_measure, measure.id))
             action.setCheckable(True)
             action.setChecked(session is not None and measure.id == session.measure)
 
@@ -221,13 +223,4 @@ def fill_kinds(menu: QMenu, commands: LogCommands) -> list[QAction]:
         ("&Away or paused\ta", "away"),
         ("&Not known", "blank"),
     )
-    return [_add(menu, words, partial(commands.set_kind, kind)) for words, kind in kinds]
-
-
-def _add(menu: QMenu, text: str, do: Callable[[], object], keys: Keys | str | None = None) -> QAction:
-    action = menu.addAction(text)
-    if keys is not None:
-        action.setShortcut(QKeySequence(keys))
-    # Qt would hand the check mark on to the command.
-    action.triggered.connect(lambda: do())
-    return action
+    return [add_action(menu, words, partial(commands.set_kind, kind)) for words, kind in kinds]

@@ -41,7 +41,7 @@ def open_with_questions(parent: QWidget, path: Path, now: Clock) -> Store | None
         except StorageError as error:
             match error.reason:
                 case "open already":
-                    return _open_to_read(parent, path, now)
+                    return Store.open(path, clock=now, to_read=True) if wants_to_read(parent, path) else None
                 case "damaged":
                     return mend(parent, path, now)
                 case "missing":
@@ -131,12 +131,13 @@ class DamageDialog(QDialog):
         self.accept()
 
 
-def _open_to_read(parent: QWidget, path: Path, now: Clock) -> Store | None:
+def wants_to_read(parent: QWidget, path: Path) -> bool:
+    """Ask whether a file that another window has open is to be opened for reading."""
     box = QMessageBox(QMessageBox.Icon.Information, "Dayfence", open_elsewhere_sentence(path), parent=parent)
     read = box.addButton(READ_ONLY, QMessageBox.ButtonRole.AcceptRole)
     box.addButton(QMessageBox.StandardButton.Cancel)
     box.exec()
-    return Store.open(path, clock=now, to_read=True) if box.clickedButton() is read else None
+    return box.clickedButton() is read
 
 
 def _open_copy_of_missing(parent: QWidget, path: Path, now: Clock, error: StorageError) -> Store | None:

@@ -28,6 +28,16 @@ class Settings:
         stored = str(self._stored.value("text", ""))
         return int(stored) if stored.isdecimal() and int(stored) in TEXT_SIZES else TEXT_SIZES[0]
 
+    @property
+    def larger_text(self) -> int:
+        """One step larger than the size in force, up to twice the plain size."""
+        return min((size for size in TEXT_SIZES if size > self.text_percent), default=TEXT_SIZES[-1])
+
+    @property
+    def smaller_text(self) -> int:
+        """One step smaller, down to the plain size."""
+        return max((size for size in TEXT_SIZES if size < self.text_percent), default=TEXT_SIZES[0])
+
     def set_text_percent(self, percent: int) -> None:
         """Remember a size of text."""
         self._stored.setValue("text", percent)
