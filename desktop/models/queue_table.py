@@ -27,6 +27,11 @@ class QueueTable(QAbstractTableModel):
         self._kept = 0
 
     @property
+    def codes(self) -> list[str]:
+        """The codes of all clients."""
+        return [row.client.code for row in self._all]
+
+    @property
     def folded(self) -> int:
         """How many clients with nothing new there are."""
         return sum(not row.reasons for row in self._all)

@@ -21,6 +21,7 @@ from desktop.wording.caseload import BUDGET_LINE, counts_line
 
 _SAMPLES = {CODE: "client 404", LAST: "Wed 30 Mar", NEXT: "Wed 30 Mar"}
 """What the columns have room for; the reason takes what is left."""
+_LONGEST_CODE = 24
 _SMALL = 0.9
 _LEAST_REASON = 36
 """Letters of the reason that are to be seen before the days are."""
@@ -109,6 +110,7 @@ class QueuePane(QWidget):
         """Take another queue; the client under the hand stays under it, folded away only when nothing is typed."""
         self._was_moved = self._was_moved or is_typing
         self._keeping_client(lambda: self.model.show_rows(rows, self._chosen if is_typing else 0))
+        self._fit_face()
         self.counts.setText(counts_line(counts_of([row for row in rows if row.client.id > 0])))
         folded = self.model.folded
         self.fold.setVisible(folded > 0)
@@ -143,7 +145,9 @@ class QueuePane(QWidget):
         bold.setBold(True)
         head = QFontMetrics(bold)
         for column, sample in _SAMPLES.items():
-            wanted = max(metrics.horizontalAdvance(sample), head.horizontalAdvance(HEADS[column]))
+            # A code is seen whole up to a length; of two long ones the beginnings alone could be alike.
+            words = max([sample, *self.model.codes], key=len)[:_LONGEST_CODE] if column == CODE else sample
+            wanted = max(metrics.horizontalAdvance(words), head.horizontalAdvance(HEADS[column]))
             self.view.setColumnWidth(column, wanted + metrics.averageCharWidth() * 2)
         self.view.verticalHeader().setDefaultSectionSize(round(metrics.height() * 1.6))
         small = QFont(self.font())

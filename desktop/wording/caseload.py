@@ -4,6 +4,7 @@ from __future__ import annotations
 
 from collections.abc import Mapping, Sequence
 from datetime import date
+from pathlib import Path
 
 from analysis.questions.did_it_move import CLAIMS
 from analysis.questions.plan_kept import WeekOfPlan, missed_running
@@ -78,6 +79,8 @@ def reason_sentence(reason: Reason, facts: Facts | None) -> str:
             return f"A new device since {_day(reason.days[-1])}: numbers before and after may not compare."
         case "unreadable":
             assert isinstance(reason.error, StorageError)
+            if reason.error.reason == "not a journal":
+                return f"{Path(str(reason.error.fields['path'])).name} is not a journal. It was not changed."
             return stranger_sentence(reason.error)
         case "missing":
             return NOT_FOUND
