@@ -89,6 +89,7 @@ class CaseloadWindow(QMainWindow):
         self.resize(1360, 820)
         self.apply_theme()
         self._follow()
+        self._show_client()
         self.queue.view.setFocus()
 
     def begin(self) -> None:
@@ -305,7 +306,8 @@ class CaseloadWindow(QMainWindow):
         """Show what is known of the client under the hand; the journal is read in a moment."""
         row = self.queue.current
         self._journal = None
-        title = client_title(row.client, self.desk.today) if row is not None else ""
+        nobody = NO_CLIENTS if self.desk.folder is not None else NO_FOLDER
+        title = client_title(row.client, self.desk.today) if row is not None else nobody
         covered = row is not None and (self.client_tells_first or row.client.next_session == self.desk.today)
         self.card.show_row(row, title, covered=covered)
         self.queue.cover(covered)
@@ -346,6 +348,8 @@ class CaseloadWindow(QMainWindow):
 
     def _say_looked_through(self, added: int) -> None:
         self.stop_button.hide()
+        if self.queue.current is None:
+            self._show_client()
         clients = sum(not client.ended for client in self.desk.caseload.clients.values())
         unread = len(self.desk.strange)
         told = looked_through_line(clients, added, unread, all_read=self.desk.all_read)
